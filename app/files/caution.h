@@ -4,9 +4,11 @@
 
 #include <QString>
 
-namespace rungwright {
+namespace rungwright
+{
 
-/// Two plain sentences: advertised "from" prices are regulated, local law and the operator's own counsel decide, prices rest on the operator's own data.
+/// Two plain sentences: advertised "from" prices are regulated, local law and the operator's own counsel decide, prices rest on the
+/// operator's own data.
 QString cautionText();
 
 } // namespace rungwright

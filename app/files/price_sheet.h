@@ -10,7 +10,8 @@
 
 #include <vector>
 
-namespace rungwright {
+namespace rungwright
+{
 
 /// One row of a price sheet.
 struct SheetRow {
@@ -26,12 +27,13 @@ struct SheetRow {
     bool operator==(const SheetRow&) const = default;
 };
 
-/// One row a unit, all units of the tier (closed ones too), in ladder order of the new prices (ties in unit-list order). `candidate` -1 = current.
+/// One row a unit, all units of the tier (closed ones too), in ladder order of the new prices (ties in unit-list order). `candidate` -1 =
+/// current.
 std::vector<SheetRow> sheetRows(const Scenario& scenario, const TierCase& tierCase, int candidate);
 
-/// RFC 4180, CRLF, header site,tier,unit,status,current_price,new_price,change,change_percent,currency,candidate. change_percent has two decimals.
-/// Text cells a spreadsheet would take for a formula (first character = + - @ TAB CR, also LF) get a leading apostrophe; so does a text
-/// that itself begins with an apostrophe followed by one of these, so that reading back is exact.
+/// RFC 4180, CRLF, header site,tier,unit,status,current_price,new_price,change,change_percent,currency,candidate. change_percent has two
+/// decimals. Text cells a spreadsheet would take for a formula (first character = + - @ TAB CR, also LF) get a leading apostrophe; so does
+/// a text that itself begins with an apostrophe followed by one of these, so that reading back is exact.
 QByteArray sheetToCsv(const std::vector<SheetRow>& rows, const Currency& currency);
 Outcome<std::vector<SheetRow>> sheetFromCsv(const QByteArray& csv, const QString& fileName);
 

@@ -11,7 +11,8 @@
 #include <string>
 #include <vector>
 
-namespace rungwright {
+namespace rungwright
+{
 
 /// A whole alternative ladder for a tier, kept under a name. `prices` holds one price per unit, by unit index. Texts are UTF-8.
 struct Candidate {

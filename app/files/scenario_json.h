@@ -8,7 +8,8 @@
 #include <QByteArray>
 #include <QString>
 
-namespace rungwright {
+namespace rungwright
+{
 
 inline constexpr int kScenarioVersion = 1;
 
@@ -16,8 +17,8 @@ inline constexpr int kScenarioVersion = 1;
 /// of equal scenarios are byte-identical, and differences read well. Ends with a newline.
 QByteArray scenarioToJson(const Scenario& scenario);
 
-/// Reads what scenarioToJson writes, of this or an older version. Messages start with `fileName`, and name line and column for malformed JSON, or the
-/// place ("tiers[2].units[5].price") for a wrong value, what was found and what is wanted. A newer version is refused.
+/// Reads what scenarioToJson writes, of this or an older version. Messages start with `fileName`, and name line and column for malformed
+/// JSON, or the place ("tiers[2].units[5].price") for a wrong value, what was found and what is wanted. A newer version is refused.
 Outcome<Scenario> scenarioFromJson(const QByteArray& json, const QString& fileName);
 
 Outcome<Scenario> loadScenario(const QString& path);

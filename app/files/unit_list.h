@@ -13,16 +13,17 @@
 #include <functional>
 #include <vector>
 
-namespace rungwright {
+namespace rungwright
+{
 
 /// Why a row (or a tier) was not taken.
 struct RefusedRow {
-    qint64 line = 0;   ///< Physical line of the file on which the record starts, from 1.
-    int column = 0;    ///< Field number in the record, from 1; 0 when the row as a whole is meant.
-    QString columnName;///< The header's name for it, or empty.
-    QString wrong;     ///< What is wrong.
-    QString found;     ///< What was found (long texts cut in the middle to 60 characters).
-    QString wanted;    ///< What is wanted: the remedy.
+    qint64 line = 0;    ///< Physical line of the file on which the record starts, from 1.
+    int column = 0;     ///< Field number in the record, from 1; 0 when the row as a whole is meant.
+    QString columnName; ///< The header's name for it, or empty.
+    QString wrong;      ///< What is wrong.
+    QString found;      ///< What was found (long texts cut in the middle to 60 characters).
+    QString wanted;     ///< What is wanted: the remedy.
 
     /// "file:line: column 'asking_price': not a price; found 'abc'; wanted a positive number ..."
     QString text(const QString& fileName) const;
@@ -35,13 +36,13 @@ struct UnitListOptions {
 
 struct UnitListResult {
     Currency currency;
-    std::vector<TierCase> tiers;      ///< In order of first appearance; units in file order. Empty when refused (unless withoutBadRows).
+    std::vector<TierCase> tiers; ///< In order of first appearance; units in file order. Empty when refused (unless withoutBadRows).
     qint64 rowsTaken = 0;
-    std::vector<RefusedRow> refused;  ///< The first kRefusedRowsKept.
+    std::vector<RefusedRow> refused; ///< The first kRefusedRowsKept.
     qint64 refusedCount = 0;
-    QStringList unknownColumns;       ///< Kept aside, reported once.
-    QString encoding;                 ///< "UTF-8", "UTF-8 with BOM", "UTF-16LE", "UTF-16BE".
-    QString fileTrouble;              ///< Not empty: the file as a whole could not be read (encoding, header, quotes, empty, cancelled).
+    QStringList unknownColumns; ///< Kept aside, reported once.
+    QString encoding;           ///< "UTF-8", "UTF-8 with BOM", "UTF-16LE", "UTF-16BE".
+    QString fileTrouble;        ///< Not empty: the file as a whole could not be read (encoding, header, quotes, empty, cancelled).
 
     bool clean() const { return fileTrouble.isEmpty() && refusedCount == 0; }
 };
@@ -52,7 +53,8 @@ inline constexpr std::size_t kRefusedRowsKept = 1000;
 using Progress = std::function<bool(double)>;
 
 /// Reads a unit list from memory. `fileName` is for messages only.
-UnitListResult readUnitList(const QByteArray& bytes, const QString& fileName, const UnitListOptions& options, const Progress& progress = {});
+UnitListResult readUnitList(const QByteArray& bytes, const QString& fileName, const UnitListOptions& options,
+                            const Progress& progress = {});
 UnitListResult loadUnitList(const QString& path, const UnitListOptions& options, const Progress& progress = {});
 
 } // namespace rungwright

@@ -1,0 +1,105 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+// The open scenario: the one place prices live in while the desk is open. Every edit goes through the undo stack and is
+// announced once, as one typed change; views do not know who made it.
+#pragma once
+
+#include "outcome.h"
+#include "scenario.h"
+
+#include <QObject>
+#include <QString>
+#include <QUndoStack>
+
+#include <cstdint>
+#include <span>
+#include <vector>
+
+namespace rungwright
+{
+
+/// What an edit touched.
+struct DocumentChange {
+    enum class Kind {
+        everything, ///< Another scenario.
+        prices,     ///< Prices of one candidate.
+        candidates, ///< A candidate came, went, was renamed, noted or chosen.
+        units,      ///< Locks of the tier's units.
+        model,      ///< The tier's availability model or its settings.
+        rules,      ///< The scenario's price rules.
+        notes,      ///< Notes of the scenario or of the tier.
+    };
+    Kind kind = Kind::everything;
+    int tier = -1;      ///< Index into scenario().tiers, or -1 when all are touched.
+    int candidate = -1; ///< Index of the candidate to look at next, or -1 (the current ladder, or no candidate in particular).
+};
+
+/// A unit's price before and after an edit.
+struct PriceChange {
+    std::uint32_t unit = 0;
+    Price before;
+    Price after;
+};
+
+/// The differences of two price lists of one tier, by unit index.
+std::vector<PriceChange> priceChanges(std::span<const Price> before, std::span<const Price> after);
+
+class Document : public QObject
+{
+    Q_OBJECT
+public:
+    explicit Document(QObject* parent = nullptr);
+
+    const Scenario& scenario() const { return m_scenario; }
+    bool empty() const { return m_scenario.tiers.empty(); }
+    const TierCase* tier(int index) const;
+
+    QUndoStack& undoStack() { return m_undo; }
+    /// Where the scenario is kept; empty before the first save.
+    const QString& path() const { return m_path; }
+    /// The file's name, the scenario's title, or "Untitled".
+    QString displayName() const;
+    bool modified() const { return m_unsavedStart || !m_undo.isClean(); }
+
+    /// Takes another scenario; forgets all undo steps. `saved` = it is what stands in `path`.
+    void begin(Scenario scenario, const QString& path, bool saved);
+    /// Writes whole or not at all; on trouble the document stays modified and the old file stands.
+    Outcome<bool> saveTo(const QString& path);
+
+    // Edits, one undo step each. Indices are asserted. A call that would change nothing makes no step.
+
+    /// Sets prices of a candidate; on the current ladder (candidate -1) it makes a candidate that holds them instead.
+    /// Returns the candidate that holds the prices.
+    int setPrices(int tier, int candidate, std::span<const PriceChange> changes, const QString& stepName);
+    /// `candidate.name` is made unique in the tier. Returns its index.
+    int addCandidate(int tier, Candidate candidate, const QString& stepName);
+    int copyCandidate(int tier, int candidate);
+    void discardCandidate(int tier, int candidate);
+    /// False when the name is empty, taken, or kCurrentName.
+    bool renameCandidate(int tier, int candidate, const QString& name);
+    void setCandidateNote(int tier, int candidate, const QString& note);
+    void chooseCandidate(int tier, std::optional<int> candidate);
+    void setLocked(int tier, std::span<const std::uint32_t> units, bool locked);
+    void setModel(int tier, const ModelSettings& model, const QString& stepName);
+    void setRules(const PriceRules& rules);
+    void setTierNote(int tier, const QString& note);
+    void setScenarioNote(const QString& note);
+
+    /// "Candidate 1", "Candidate 2", ...: the first such name not taken, or `wanted` with a number behind it.
+    std::string freeCandidateName(int tier, const QString& wanted = {}) const;
+
+signals:
+    void changed(const rungwright::DocumentChange& change);
+    /// Path, name or modified() changed.
+    void saveStateChanged();
+
+private:
+    friend class ScenarioStep;
+    void announce(const DocumentChange& change);
+
+    Scenario m_scenario;
+    QString m_path;
+    QUndoStack m_undo;
+    bool m_unsavedStart = false; ///< Begun from an import or a recovered copy: not in any file yet.
+};
+
+} // namespace rungwright

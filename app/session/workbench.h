@@ -1,0 +1,132 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+// The tier on the bench: its current and its worked-on ladder, measured, and the gesture in progress.
+#pragma once
+
+#include "document.h"
+#include "gap/measure.h"
+#include "reshape/by_hand.h"
+
+#include <QObject>
+
+#include <cstdint>
+#include <span>
+#include <vector>
+
+namespace rungwright
+{
+
+/// Views read prices and figures from here and keep none of their own. While a gesture is going on, worked() and workedPrices() show what
+/// it would give; the document is untouched until finishGesture(), which makes one undo step. Nothing is allocated between
+/// two moves of one gesture once the first has been made.
+class Workbench : public QObject
+{
+    Q_OBJECT
+public:
+    explicit Workbench(Document& document, QObject* parent = nullptr);
+
+    Document& document() { return m_document; }
+    const Document& document() const { return m_document; }
+    const Currency& currency() const { return m_document.scenario().currency; }
+
+    /// Index of the tier on the bench, -1 for none; its case, or nullptr.
+    int tier() const { return m_tier; }
+    const TierCase* tierCase() const { return m_document.tier(m_tier); }
+    /// The candidate worked on; -1 = the current ladder is on the bench.
+    int candidate() const { return m_candidate; }
+    /// "current" or the candidate's name.
+    QString candidateName() const;
+
+    void showTier(int tier, int candidate = -1);
+    void workOn(int candidate);
+
+    /// The current ladder and the one worked on, measured under the settings shown (equal when candidate() is -1 and no gesture goes on).
+    const Measurement& current() const { return m_current; }
+    const Measurement& worked() const { return m_worked; }
+    std::span<const Price> currentPrices() const { return m_currentPrices; }
+    std::span<const Price> workedPrices() const { return m_workedPrices; }
+    /// Model settings in force, a marker being dragged included.
+    const ModelSettings& settings() const { return m_settings; }
+
+    /// All units of the tier, taken and closed too, in ladder order of the worked prices: columns()[place] = unit index. Does not change
+    /// during a gesture: a rung keeps its column while it is dragged past its neighbours.
+    std::span<const std::uint32_t> columns() const { return m_columns; }
+
+    // Selection, as unit indices in ascending order.
+    std::span<const std::uint32_t> selection() const { return m_selection; }
+    bool isSelected(std::uint32_t unit) const;
+    void select(std::vector<std::uint32_t> units);
+
+    bool holdsTotal() const { return m_holdTotal; }
+    void setHoldTotal(bool on);
+
+    // Gestures.
+    enum class Gesture { none, move, bend, left };
+    Gesture gesture() const { return m_gesture; }
+    /// Starts to drag `units` (ascending unit indices; locked ones do not follow). False when nothing can move.
+    bool beginMove(std::vector<std::uint32_t> units);
+    void moveBy(Price by);
+    /// Starts to bend the units on offer.
+    bool beginBend();
+    void bendTo(double exponent);
+    double bendExponent() const { return m_bendExponent; }
+    /// Starts to drag the number left. False for models without one.
+    bool beginLeft();
+    void leftTo(int left);
+    void finishGesture();
+    void giveUpGesture();
+    /// The units the gesture moves (not those that only give way to hold the total), and their prices at its start, by unit index.
+    std::span<const std::uint32_t> moved() const { return m_moved; }
+    std::span<const Price> startPrices() const { return m_startPrices; }
+    /// What stopped the gesture short, if anything; what could not be spread when the total is held.
+    Bound bound() const { return m_reshaped.bound; }
+    Price leftOver() const { return m_reshaped.leftOver; }
+
+    // Whole gestures in one call.
+    /// Selected units go `steps` price points up or down; repeated nudges of the same selection are one undo step.
+    void nudge(int steps);
+    /// One unit to a typed price (snapped, held inside the rules).
+    void setPrice(std::uint32_t unit, Price wanted);
+    void toggleLock();
+
+signals:
+    /// Another tier, candidate, rule, lock or committed price: everything may have moved.
+    void reset();
+    /// The gesture moved: worked(), workedPrices() and, for Gesture::left, settings() changed; columns() and current() did not (except
+    /// current() for Gesture::left).
+    void moving();
+    void gestureChanged();
+    void selectionChanged();
+    /// A sentence for the status bar.
+    void told(const QString& sentence);
+
+private:
+    void onDocumentChanged(const DocumentChange& change);
+    void remeasure();
+    void remeasureWorked();
+    void afterReshape();
+    void commitPrices(const QString& name);
+    QString moveName() const;
+
+    Document& m_document;
+    int m_tier = -1;
+    int m_candidate = -1;
+    ModelSettings m_settings;
+    Measurer m_measureCurrent;
+    Measurer m_measureWorked;
+    Measurement m_current;
+    Measurement m_worked;
+    std::vector<Price> m_currentPrices;
+    std::vector<Price> m_workedPrices;
+    std::vector<Price> m_startPrices;
+    std::vector<std::uint32_t> m_columns;
+    std::vector<std::uint32_t> m_selection;
+    std::vector<std::uint32_t> m_moved;
+    std::vector<std::uint32_t> m_onOffer;
+    Reshaped m_reshaped;
+    Gesture m_gesture = Gesture::none;
+    double m_bendExponent = 1.0;
+    bool m_holdTotal = false;
+    bool m_committing = false;
+};
+
+} // namespace rungwright
