@@ -70,6 +70,8 @@ public:
     /// Sets prices of a candidate; on the current ladder (candidate -1) it makes a candidate that holds them instead.
     /// Returns the candidate that holds the prices.
     int setPrices(int tier, int candidate, std::span<const PriceChange> changes, const QString& stepName);
+    /// The same; `nudge` lets it join the step before it when that nudged the same units of the same candidate.
+    int setPrices(int tier, int candidate, std::span<const PriceChange> changes, const QString& stepName, bool nudge);
     /// `candidate.name` is made unique in the tier. Returns its index.
     int addCandidate(int tier, Candidate candidate, const QString& stepName);
     int copyCandidate(int tier, int candidate);

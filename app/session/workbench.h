@@ -40,8 +40,8 @@ public:
     void workOn(int candidate);
 
     /// The current ladder and the one worked on, measured under the settings shown (equal when candidate() is -1 and no gesture goes on).
-    const Measurement& current() const { return m_current; }
-    const Measurement& worked() const { return m_worked; }
+    const Measurement& current() const { return *m_current; }
+    const Measurement& worked() const { return *m_worked; }
     std::span<const Price> currentPrices() const { return m_currentPrices; }
     std::span<const Price> workedPrices() const { return m_workedPrices; }
     /// Model settings in force, a marker being dragged included.
@@ -56,6 +56,7 @@ public:
     bool isSelected(std::uint32_t unit) const;
     void select(std::vector<std::uint32_t> units);
 
+    /// Hold the asking total: of the units on offer, as the Figures show it.
     bool holdsTotal() const { return m_holdTotal; }
     void setHoldTotal(bool on);
 
@@ -65,7 +66,7 @@ public:
     /// Starts to drag `units` (ascending unit indices; locked ones do not follow). False when nothing can move.
     bool beginMove(std::vector<std::uint32_t> units);
     void moveBy(Price by);
-    /// Starts to bend the units on offer.
+    /// Starts to bend the selected units, when three or more are selected, or else all rentable ones.
     bool beginBend();
     void bendTo(double exponent);
     double bendExponent() const { return m_bendExponent; }
@@ -103,9 +104,12 @@ private:
     void onDocumentChanged(const DocumentChange& change);
     void remeasure();
     void remeasureWorked();
-    void afterReshape();
-    void commitPrices(const QString& name);
-    QString moveName() const;
+    bool startGesture(Gesture gesture, std::vector<std::uint32_t> units);
+    void reshaped();
+    void holdTotalIfAsked();
+    void commit(const QString& name, bool nudge);
+    QString gestureName() const;
+    QString unitName(std::uint32_t unit) const;
 
     Document& m_document;
     int m_tier = -1;
@@ -113,8 +117,8 @@ private:
     ModelSettings m_settings;
     Measurer m_measureCurrent;
     Measurer m_measureWorked;
-    Measurement m_current;
-    Measurement m_worked;
+    const Measurement* m_current; ///< The measurers' results; an empty measurement while no tier is shown.
+    const Measurement* m_worked;
     std::vector<Price> m_currentPrices;
     std::vector<Price> m_workedPrices;
     std::vector<Price> m_startPrices;
@@ -126,7 +130,6 @@ private:
     Gesture m_gesture = Gesture::none;
     double m_bendExponent = 1.0;
     bool m_holdTotal = false;
-    bool m_committing = false;
 };
 
 } // namespace rungwright

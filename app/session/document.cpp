@@ -1,0 +1,249 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "document.h"
+
+#include "scenario_json.h"
+#include "steps.h"
+
+#include <QFileInfo>
+
+#include <algorithm>
+#include <cassert>
+
+namespace rungwright
+{
+
+namespace
+{
+
+QString fromUtf8(const std::string& text) { return QString::fromUtf8(text.data(), static_cast<qsizetype>(text.size())); }
+
+} // namespace
+
+std::vector<PriceChange> priceChanges(std::span<const Price> before, std::span<const Price> after)
+{
+    assert(before.size() == after.size());
+    std::vector<PriceChange> changes;
+    for (std::size_t i = 0; i < before.size(); ++i) {
+        if (before[i] != after[i])
+            changes.push_back({static_cast<std::uint32_t>(i), before[i], after[i]});
+    }
+    return changes;
+}
+
+Document::Document(QObject* parent) : QObject(parent) { connect(&m_undo, &QUndoStack::cleanChanged, this, &Document::saveStateChanged); }
+
+const TierCase* Document::tier(int index) const
+{
+    if (index < 0 || index >= static_cast<int>(m_scenario.tiers.size()))
+        return nullptr;
+    return &m_scenario.tiers[static_cast<std::size_t>(index)];
+}
+
+QString Document::displayName() const
+{
+    if (!m_path.isEmpty())
+        return QFileInfo(m_path).fileName();
+    return m_scenario.title.empty() ? tr("Untitled") : fromUtf8(m_scenario.title);
+}
+
+void Document::begin(Scenario scenario, const QString& path, bool saved)
+{
+    m_scenario = std::move(scenario);
+    m_path = path;
+    m_unsavedStart = !saved;
+    m_undo.clear();
+    announce({DocumentChange::Kind::everything, -1, -1});
+    emit saveStateChanged();
+}
+
+Outcome<bool> Document::saveTo(const QString& path)
+{
+    auto saved = saveScenario(m_scenario, path);
+    if (saved.ok()) {
+        m_path = path;
+        m_unsavedStart = false;
+        m_undo.setClean();
+        emit saveStateChanged();
+    }
+    return saved;
+}
+
+void Document::announce(const DocumentChange& change) { emit changed(change); }
+
+int Document::setPrices(int tierIndex, int candidate, std::span<const PriceChange> changes, const QString& stepName)
+{
+    return setPrices(tierIndex, candidate, changes, stepName, false);
+}
+
+int Document::setPrices(int tierIndex, int candidate, std::span<const PriceChange> changes, const QString& stepName, bool nudge)
+{
+    const TierCase* tc = tier(tierIndex);
+    assert(tc && candidate >= -1 && candidate < static_cast<int>(tc->candidates.size()));
+    if (changes.empty())
+        return candidate;
+    if (candidate >= 0) {
+        m_undo.push(new EditPrices(*this, stepName, tierIndex, candidate, {changes.begin(), changes.end()}, nudge));
+        return candidate;
+    }
+    Candidate made;
+    made.name = freeCandidateName(tierIndex);
+    made.prices = askingPrices(tc->tier.units);
+    for (const PriceChange& change : changes)
+        made.prices[change.unit] = change.after;
+    return addCandidate(tierIndex, std::move(made), stepName);
+}
+
+int Document::addCandidate(int tierIndex, Candidate candidate, const QString& stepName)
+{
+    const TierCase* tc = tier(tierIndex);
+    assert(tc && candidate.prices.size() == tc->tier.units.size());
+    const int index = static_cast<int>(tc->candidates.size());
+    candidate.name = freeCandidateName(tierIndex, fromUtf8(candidate.name));
+    m_undo.push(new AddCandidate(*this, stepName, tierIndex, std::move(candidate)));
+    return index;
+}
+
+int Document::copyCandidate(int tierIndex, int candidate)
+{
+    const TierCase* tc = tier(tierIndex);
+    assert(tc);
+    Candidate copy;
+    if (candidate >= 0)
+        copy = tc->candidates[static_cast<std::size_t>(candidate)];
+    else
+        copy.prices = askingPrices(tc->tier.units);
+    const QString from = candidate >= 0 ? fromUtf8(copy.name) : tr("the current ladder");
+    return addCandidate(tierIndex, std::move(copy), tr("Copy %1").arg(from));
+}
+
+void Document::discardCandidate(int tierIndex, int candidate)
+{
+    const TierCase* tc = tier(tierIndex);
+    assert(tc && candidate >= 0 && candidate < static_cast<int>(tc->candidates.size()));
+    const QString name = fromUtf8(tc->candidates[static_cast<std::size_t>(candidate)].name);
+    m_undo.push(new DiscardCandidate(*this, tr("Discard %1").arg(name), tierIndex, candidate));
+}
+
+bool Document::renameCandidate(int tierIndex, int candidate, const QString& name)
+{
+    const TierCase* tc = tier(tierIndex);
+    assert(tc && candidate >= 0 && candidate < static_cast<int>(tc->candidates.size()));
+    const std::string wanted = name.trimmed().toStdString();
+    const auto index = static_cast<std::size_t>(candidate);
+    if (wanted == tc->candidates[index].name)
+        return true;
+    const auto taken = [&](const Candidate& other) { return other.name == wanted; };
+    if (wanted.empty() || wanted == kCurrentName || std::any_of(tc->candidates.begin(), tc->candidates.end(), taken))
+        return false;
+    const auto tierAt = static_cast<std::size_t>(tierIndex);
+    m_undo.push(
+        new ChangeValue<std::string>(*this, tr("Rename %1 to %2").arg(fromUtf8(tc->candidates[index].name), name.trimmed()),
+                                     [tierAt, index](Scenario& s) -> std::string& { return s.tiers[tierAt].candidates[index].name; },
+                                     wanted, {DocumentChange::Kind::candidates, tierIndex, candidate}));
+    return true;
+}
+
+void Document::setCandidateNote(int tierIndex, int candidate, const QString& note)
+{
+    const TierCase* tc = tier(tierIndex);
+    assert(tc && candidate >= 0 && candidate < static_cast<int>(tc->candidates.size()));
+    const auto index = static_cast<std::size_t>(candidate);
+    const std::string wanted = note.toStdString();
+    if (wanted == tc->candidates[index].note)
+        return;
+    const auto tierAt = static_cast<std::size_t>(tierIndex);
+    m_undo.push(
+        new ChangeValue<std::string>(*this, tr("Note on %1").arg(fromUtf8(tc->candidates[index].name)),
+                                     [tierAt, index](Scenario& s) -> std::string& { return s.tiers[tierAt].candidates[index].note; },
+                                     wanted, {DocumentChange::Kind::candidates, tierIndex, candidate}));
+}
+
+void Document::chooseCandidate(int tierIndex, std::optional<int> candidate)
+{
+    const TierCase* tc = tier(tierIndex);
+    assert(tc);
+    if (tc->chosen == candidate)
+        return;
+    const QString name =
+        candidate ? tr("Choose %1").arg(fromUtf8(tc->candidates[static_cast<std::size_t>(*candidate)].name)) : tr("Choose none");
+    const auto tierAt = static_cast<std::size_t>(tierIndex);
+    m_undo.push(new ChangeValue<std::optional<int>>(*this, name,
+                                                    [tierAt](Scenario& s) -> std::optional<int>& { return s.tiers[tierAt].chosen; },
+                                                    candidate, {DocumentChange::Kind::candidates, tierIndex, candidate.value_or(-1)}));
+}
+
+void Document::setLocked(int tierIndex, std::span<const std::uint32_t> units, bool locked)
+{
+    const TierCase* tc = tier(tierIndex);
+    assert(tc);
+    std::vector<std::uint32_t> toSet;
+    for (const std::uint32_t unit : units) {
+        if (tc->tier.units[unit].locked != locked)
+            toSet.push_back(unit);
+    }
+    if (toSet.empty())
+        return;
+    const QString what = toSet.size() == 1 ? fromUtf8(tc->tier.units[toSet.front()].name) : tr("%1 units").arg(toSet.size());
+    m_undo.push(new SetLocks(*this, locked ? tr("Lock %1").arg(what) : tr("Unlock %1").arg(what), tierIndex, std::move(toSet), locked));
+}
+
+void Document::setModel(int tierIndex, const ModelSettings& model, const QString& stepName)
+{
+    const TierCase* tc = tier(tierIndex);
+    assert(tc);
+    if (tc->model == model)
+        return;
+    const auto tierAt = static_cast<std::size_t>(tierIndex);
+    m_undo.push(new ChangeValue<ModelSettings>(*this, stepName, [tierAt](Scenario& s) -> ModelSettings& { return s.tiers[tierAt].model; },
+                                               model, {DocumentChange::Kind::model, tierIndex, -1}));
+}
+
+void Document::setRules(const PriceRules& rules)
+{
+    if (m_scenario.rules == rules)
+        return;
+    m_undo.push(new ChangeValue<PriceRules>(*this, tr("Change the price rules"), [](Scenario& s) -> PriceRules& { return s.rules; }, rules,
+                                            {DocumentChange::Kind::rules, -1, -1}));
+}
+
+void Document::setTierNote(int tierIndex, const QString& note)
+{
+    const TierCase* tc = tier(tierIndex);
+    assert(tc);
+    const std::string wanted = note.toStdString();
+    if (tc->note == wanted)
+        return;
+    const auto tierAt = static_cast<std::size_t>(tierIndex);
+    m_undo.push(new ChangeValue<std::string>(*this, tr("Note on %1").arg(fromUtf8(tc->tier.name)),
+                                             [tierAt](Scenario& s) -> std::string& { return s.tiers[tierAt].note; }, wanted,
+                                             {DocumentChange::Kind::notes, tierIndex, -1}));
+}
+
+void Document::setScenarioNote(const QString& note)
+{
+    const std::string wanted = note.toStdString();
+    if (m_scenario.note == wanted)
+        return;
+    m_undo.push(new ChangeValue<std::string>(*this, tr("Note on the scenario"), [](Scenario& s) -> std::string& { return s.note; }, wanted,
+                                             {DocumentChange::Kind::notes, -1, -1}));
+}
+
+std::string Document::freeCandidateName(int tierIndex, const QString& wanted) const
+{
+    const TierCase* tc = tier(tierIndex);
+    assert(tc);
+    const auto taken = [&](const std::string& name) {
+        const auto same = [&](const Candidate& other) { return other.name == name; };
+        return name == kCurrentName || std::any_of(tc->candidates.begin(), tc->candidates.end(), same);
+    };
+    if (!wanted.isEmpty() && !taken(wanted.toStdString()))
+        return wanted.toStdString();
+    const QString stem = wanted.isEmpty() ? tr("Candidate") : wanted;
+    for (int n = wanted.isEmpty() ? 1 : 2;; ++n) {
+        std::string name = (stem + QLatin1Char(' ') + QString::number(n)).toStdString();
+        if (!taken(name))
+            return name;
+    }
+}
+
+} // namespace rungwright

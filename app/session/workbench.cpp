@@ -1,0 +1,333 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "workbench.h"
+
+#include "wording.h"
+
+#include <algorithm>
+#include <cassert>
+
+namespace rungwright
+{
+
+namespace
+{
+
+const Measurement kNothing{};
+
+} // namespace
+
+Workbench::Workbench(Document& document, QObject* parent) : QObject(parent), m_document(document), m_current(&kNothing), m_worked(&kNothing)
+{
+    connect(&document, &Document::changed, this, &Workbench::onDocumentChanged);
+}
+
+QString Workbench::candidateName() const
+{
+    const TierCase* tc = tierCase();
+    if (!tc || m_candidate < 0)
+        return tr("current");
+    return QString::fromStdString(tc->candidates[static_cast<std::size_t>(m_candidate)].name);
+}
+
+void Workbench::showTier(int tier, int candidate)
+{
+    giveUpGesture();
+    const TierCase* tc = m_document.tier(tier);
+    if (m_tier != tier)
+        m_selection.clear();
+    m_tier = tc ? tier : -1;
+    m_candidate = tc ? std::clamp(candidate, -1, static_cast<int>(tc->candidates.size()) - 1) : -1;
+    m_settings = tc ? tc->model : ModelSettings{};
+    remeasure();
+    emit reset();
+    emit selectionChanged();
+}
+
+void Workbench::workOn(int candidate)
+{
+    if (candidate != m_candidate)
+        showTier(m_tier, candidate);
+}
+
+bool Workbench::isSelected(std::uint32_t unit) const { return std::binary_search(m_selection.begin(), m_selection.end(), unit); }
+
+void Workbench::select(std::vector<std::uint32_t> units)
+{
+    std::sort(units.begin(), units.end());
+    units.erase(std::unique(units.begin(), units.end()), units.end());
+    if (units == m_selection)
+        return;
+    m_selection = std::move(units);
+    emit selectionChanged();
+}
+
+void Workbench::setHoldTotal(bool on)
+{
+    if (m_holdTotal == on)
+        return;
+    m_holdTotal = on;
+    if (m_gesture == Gesture::none)
+        emit reset();
+}
+
+// Measuring ----------------------------------------------------------------------------------------------------------
+
+void Workbench::remeasure()
+{
+    const TierCase* tc = tierCase();
+    m_onOffer.clear();
+    if (!tc) {
+        m_currentPrices.clear();
+        m_workedPrices.clear();
+        m_columns.clear();
+        m_current = m_worked = &kNothing;
+        return;
+    }
+    m_currentPrices = askingPrices(tc->tier.units);
+    m_workedPrices = pricesOf(*tc, m_candidate);
+    for (std::uint32_t i = 0; i < tc->tier.units.size(); ++i) {
+        if (tc->tier.units[i].onOffer())
+            m_onOffer.push_back(i);
+    }
+    m_columns.clear();
+    for (const Rung& rung : sortedLadder(tc->tier.units, m_workedPrices, Among::all))
+        m_columns.push_back(rung.unit);
+    m_current = &m_measureCurrent.measure(tc->tier, m_currentPrices, m_settings);
+    remeasureWorked();
+}
+
+void Workbench::remeasureWorked() { m_worked = &m_measureWorked.measure(tierCase()->tier, m_workedPrices, m_settings); }
+
+void Workbench::onDocumentChanged(const DocumentChange& change)
+{
+    using Kind = DocumentChange::Kind;
+    if (change.kind == Kind::everything) {
+        m_gesture = Gesture::none;
+        m_selection.clear();
+        m_tier = -1;
+        showTier(m_document.empty() ? -1 : 0);
+        return;
+    }
+    if (change.kind == Kind::notes)
+        return;
+    // An undo may reach back to another tier or candidate: show where it happened.
+    const int tier = change.tier < 0 ? m_tier : change.tier;
+    const bool namesCandidate = change.kind == Kind::prices || change.kind == Kind::candidates;
+    showTier(tier, namesCandidate || tier != m_tier ? change.candidate : m_candidate);
+}
+
+// Gestures -----------------------------------------------------------------------------------------------------------
+
+bool Workbench::startGesture(Gesture gesture, std::vector<std::uint32_t> units)
+{
+    giveUpGesture();
+    m_moved = std::move(units);
+    m_startPrices.assign(m_workedPrices.begin(), m_workedPrices.end());
+    m_reshaped = Reshaped{m_startPrices, Bound::none, Price{}};
+    m_gesture = gesture;
+    emit gestureChanged();
+    return true;
+}
+
+bool Workbench::beginMove(std::vector<std::uint32_t> units)
+{
+    const TierCase* tc = tierCase();
+    if (!tc || units.empty())
+        return false;
+    const auto locked = [&](std::uint32_t unit) { return tc->tier.units[unit].locked; };
+    const bool alone = units.size() == 1;
+    std::erase_if(units, locked);
+    if (units.empty()) {
+        emit told(alone ? tr("The unit is locked. Press L to unlock it.") : tr("All of these units are locked."));
+        return false;
+    }
+    std::sort(units.begin(), units.end());
+    return startGesture(Gesture::move, std::move(units));
+}
+
+void Workbench::moveBy(Price by)
+{
+    if (m_gesture != Gesture::move)
+        return;
+    moveUnits(tierCase()->tier.units, m_startPrices, m_moved, by, m_document.scenario().rules, m_reshaped);
+    holdTotalIfAsked();
+    reshaped();
+}
+
+bool Workbench::beginBend()
+{
+    const TierCase* tc = tierCase();
+    if (!tc)
+        return false;
+    std::vector<std::uint32_t> units;
+    if (m_selection.size() >= 3) {
+        units = m_selection;
+    } else {
+        for (std::uint32_t i = 0; i < tc->tier.units.size(); ++i) {
+            if (tc->tier.units[i].rentable())
+                units.push_back(i);
+        }
+    }
+    if (units.size() < 3) {
+        emit told(tr("A bend needs at least three units: its ends stay where they are."));
+        return false;
+    }
+    m_bendExponent = 1.0;
+    return startGesture(Gesture::bend, std::move(units));
+}
+
+void Workbench::bendTo(double exponent)
+{
+    if (m_gesture != Gesture::bend)
+        return;
+    // Beyond this every rung but the ends lies on one of them: nothing more to see.
+    m_bendExponent = std::clamp(exponent, 0.05, 20.0);
+    bendUnits(tierCase()->tier.units, m_startPrices, m_moved, m_bendExponent, m_document.scenario().rules, m_reshaped);
+    holdTotalIfAsked();
+    reshaped();
+}
+
+bool Workbench::beginLeft()
+{
+    if (!tierCase() || !takesLeft(m_settings.kind) || m_worked->thinning.empty())
+        return false;
+    return startGesture(Gesture::left, {});
+}
+
+void Workbench::leftTo(int left)
+{
+    if (m_gesture != Gesture::left)
+        return;
+    left = std::clamp(left, 1, std::max(1, static_cast<int>(m_worked->rentable)));
+    if (m_settings.left == left)
+        return;
+    m_settings.left = left;
+    m_current = &m_measureCurrent.measure(tierCase()->tier, m_currentPrices, m_settings);
+    remeasureWorked();
+    emit moving();
+}
+
+void Workbench::holdTotalIfAsked()
+{
+    if (m_holdTotal)
+        holdTotal(tierCase()->tier.units, m_startPrices, m_onOffer, m_moved, m_document.scenario().rules, m_reshaped);
+    else
+        m_reshaped.leftOver = Price{};
+}
+
+void Workbench::reshaped()
+{
+    if (m_reshaped.prices == m_workedPrices)
+        return;
+    m_workedPrices.assign(m_reshaped.prices.begin(), m_reshaped.prices.end());
+    remeasureWorked();
+    emit moving();
+}
+
+void Workbench::finishGesture()
+{
+    const Gesture done = m_gesture;
+    if (done == Gesture::none)
+        return;
+    if (done == Gesture::left) {
+        m_gesture = Gesture::none;
+        emit gestureChanged();
+        if (m_settings.left)
+            m_document.setModel(m_tier, m_settings, *m_settings.left == 1 ? tr("1 unit left") : tr("%1 units left").arg(*m_settings.left));
+        return;
+    }
+    const QString name = gestureName();
+    m_gesture = Gesture::none;
+    emit gestureChanged();
+    if (m_reshaped.leftOver != Price{}) {
+        emit told(tr("There is no room left to hold the asking total: it changes by %1.")
+                      .arg(signedMoneyText(static_cast<double>(m_reshaped.leftOver.minor), currency())));
+    }
+    commit(name, false);
+}
+
+void Workbench::giveUpGesture()
+{
+    if (m_gesture == Gesture::none)
+        return;
+    m_gesture = Gesture::none;
+    m_settings = tierCase()->model;
+    remeasure();
+    emit gestureChanged();
+    emit reset();
+}
+
+void Workbench::commit(const QString& name, bool nudge)
+{
+    const std::vector<PriceChange> changes = priceChanges(m_startPrices, m_reshaped.prices);
+    if (changes.empty()) {
+        remeasure();
+        emit reset();
+        return;
+    }
+    m_document.setPrices(m_tier, m_candidate, changes, name, nudge);
+    emit told(name);
+}
+
+QString Workbench::unitName(std::uint32_t unit) const { return QString::fromStdString(tierCase()->tier.units[unit].name); }
+
+QString Workbench::gestureName() const
+{
+    if (m_gesture == Gesture::bend)
+        return tr("Bend %1 by %2").arg(candidateName(), numberText(m_bendExponent));
+    if (m_moved.size() == 1) {
+        const std::uint32_t unit = m_moved.front();
+        return tr("%1: %2 to %3")
+            .arg(unitName(unit), moneyText(m_startPrices[unit], currency()), moneyText(m_reshaped.prices[unit], currency()));
+    }
+    Price greatest{};
+    for (const std::uint32_t unit : m_moved) {
+        const Price by = m_reshaped.prices[unit] - m_startPrices[unit];
+        if (std::max(by, -by) > std::max(greatest, -greatest))
+            greatest = by;
+    }
+    return tr("%1 units: by %2")
+        .arg(static_cast<int>(m_moved.size()))
+        .arg(signedMoneyText(static_cast<double>(greatest.minor), currency()));
+}
+
+void Workbench::nudge(int steps)
+{
+    if (m_gesture != Gesture::none || !beginMove(m_selection))
+        return;
+    nudgeUnits(tierCase()->tier.units, m_startPrices, m_moved, steps, m_document.scenario().rules, m_reshaped);
+    holdTotalIfAsked();
+    if (m_reshaped.bound != Bound::none && m_reshaped.prices == m_startPrices) {
+        const QString reason = QString::fromUtf8(boundReason(m_reshaped.bound).data());
+        giveUpGesture();
+        emit told(tr("No further: %1.").arg(reason));
+        return;
+    }
+    const QString name = gestureName();
+    m_gesture = Gesture::none;
+    emit gestureChanged();
+    commit(name, true);
+}
+
+void Workbench::setPrice(std::uint32_t unit, Price wanted)
+{
+    if (m_gesture != Gesture::none || !beginMove({unit}))
+        return;
+    moveBy(wanted - m_startPrices[unit]);
+    if (m_reshaped.bound != Bound::none)
+        emit told(tr("Held at %1: %2.")
+                      .arg(moneyText(m_reshaped.prices[unit], currency()), QString::fromUtf8(boundReason(m_reshaped.bound).data())));
+    finishGesture();
+}
+
+void Workbench::toggleLock()
+{
+    const TierCase* tc = tierCase();
+    if (!tc || m_selection.empty() || m_gesture != Gesture::none)
+        return;
+    const auto locked = [&](std::uint32_t unit) { return tc->tier.units[unit].locked; };
+    const bool lock = !std::all_of(m_selection.begin(), m_selection.end(), locked);
+    m_document.setLocked(m_tier, m_selection, lock);
+}
+
+} // namespace rungwright
