@@ -7,6 +7,7 @@
 
 #include <optional>
 #include <span>
+#include <vector>
 
 namespace rungwright
 {
@@ -26,11 +27,20 @@ struct LadderFigures {
     std::size_t inversions = 0; ///< See countInversions().
 };
 
+/// Scratch storage, kept by a caller that measures again and again.
+struct FiguresWorkspace {
+    std::vector<double> values;
+    std::vector<int> grades, merged;
+    MedcoupleWorkspace medcouple;
+};
+
 /// `sorted` must be in order of price (asserted in debug builds). `units` gives the grades.
 LadderFigures ladderFigures(std::span<const Rung> sorted, std::span<const Unit> units, Price advertisedFloor);
+LadderFigures ladderFigures(std::span<const Rung> sorted, std::span<const Unit> units, Price advertisedFloor, FiguresWorkspace& work);
 
 /// Inversions of grade: the number of pairs in which the unit of strictly higher grade is asked for strictly less.
 /// Units without a grade take part in no pair. O(m log m).
 std::size_t countInversions(std::span<const Rung> sorted, std::span<const Unit> units);
+std::size_t countInversions(std::span<const Rung> sorted, std::span<const Unit> units, FiguresWorkspace& work);
 
 } // namespace rungwright

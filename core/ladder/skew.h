@@ -2,8 +2,10 @@
 // Four coefficients of skewness: which way a ladder leans.
 #pragma once
 
+#include <cstdint>
 #include <optional>
 #include <span>
+#include <vector>
 
 namespace rungwright
 {
@@ -26,12 +28,26 @@ struct SkewFigures {
     bool signsDisagree() const;
 };
 
-/// `sorted` ascending, in any unit. Shift- and (positive) scale-invariant.
+/// Scratch storage of medcouple(), kept by a caller that measures again and again.
+struct MedcoupleWorkspace {
+    struct Weighted {
+        double value;
+        double weight;
+    };
+    std::vector<std::uint32_t> first, last, above, notBelow; ///< By row of the kernel matrix.
+    std::vector<Weighted> rowMedians;
+    std::vector<double> rest;
+};
+
+/// `sorted` ascending, in any unit. Shift- and (positive) scale-invariant. A third moment (or l3) that is no larger than its own
+/// rounding error is given as 0, so that an even ladder leans nowhere.
 std::optional<double> momentSkewness(std::span<const double> sorted);
 std::optional<double> adjustedSkewness(std::span<const double> sorted);
 /// O(n log n) time by selection in the implicitly sorted kernel matrix (Johnson & Mizoguchi, SIAM J. Comput. 7 (1978) 147-153).
 std::optional<double> medcouple(std::span<const double> sorted);
+std::optional<double> medcouple(std::span<const double> sorted, MedcoupleWorkspace& work);
 std::optional<double> lSkewness(std::span<const double> sorted);
 SkewFigures skewFigures(std::span<const double> sorted);
+SkewFigures skewFigures(std::span<const double> sorted, MedcoupleWorkspace& work);
 
 } // namespace rungwright
