@@ -1,0 +1,122 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "reshape/rules.h"
+
+#include <algorithm>
+#include <cmath>
+#include <cstdlib>
+
+namespace rungwright
+{
+
+namespace
+{
+
+/// How far a rule lets a price go, and which rule it is.
+struct Limit {
+    std::int64_t minor;
+    Bound bound;
+};
+
+/// The greatest change in whole minor units that `percent` of `price` allows.
+std::int64_t wholePercent(Price price, double percent)
+{
+    const double change = static_cast<double>(price.minor) * percent / 100.0;
+    // 0.7 % of 100.00 is 69.99999999999999 in floating point; a hair is added so that a whole amount is not lost to that.
+    const double hair = 1e-9 + 1e-14 * change;
+    return static_cast<std::int64_t>(std::floor(std::min(change + hair, static_cast<double>(kGreatestPrice.minor))));
+}
+
+/// The stricter of two limits in the direction `up`; the first when they are equal.
+Limit stricter(Limit first, Limit second, bool up)
+{
+    const bool secondWins = up ? second.minor < first.minor : second.minor > first.minor;
+    return secondWins ? second : first;
+}
+
+Limit limitOf(Price today, const PriceRules& rules, bool up)
+{
+    const std::int64_t sign = up ? 1 : -1;
+    Limit limit = up ? Limit{std::min(rules.points.greatest.value_or(kGreatestPrice), kGreatestPrice).minor, Bound::greatestPoint}
+                     : Limit{std::max(rules.points.least.value_or(Price{1}), Price{1}).minor, Bound::leastPoint};
+    if (rules.greatestChangePercent)
+        limit = stricter({today.minor + sign * wholePercent(today, *rules.greatestChangePercent), Bound::changePercent}, limit, up);
+    if (rules.greatestChange)
+        limit = stricter({today.minor + sign * rules.greatestChange->minor, Bound::changeMoney}, limit, up);
+    if (up && rules.ceiling)
+        limit = stricter({rules.ceiling->minor, Bound::ceiling}, limit, up);
+    return limit;
+}
+
+std::int64_t distance(Price a, Price b) { return std::abs(a.minor - b.minor); }
+
+/// The nearer of two prices to `wanted`, the cheaper of two equally near ones.
+Price nearer(Price wanted, Price a, Price b)
+{
+    const std::int64_t toA = distance(wanted, a);
+    const std::int64_t toB = distance(wanted, b);
+    return toA == toB ? std::min(a, b) : toA < toB ? a : b;
+}
+
+} // namespace
+
+std::string_view boundReason(Bound bound)
+{
+    switch (bound) {
+    case Bound::none:
+        return "nothing is in the way";
+    case Bound::lock:
+        return "the unit is locked";
+    case Bound::changePercent:
+        return "the greatest change in percent is reached";
+    case Bound::changeMoney:
+        return "the greatest change in money is reached";
+    case Bound::ceiling:
+        return "the ceiling is reached";
+    case Bound::leastPoint:
+        return "the least price point is reached";
+    case Bound::greatestPoint:
+        return "the greatest price point is reached";
+    case Bound::noPricePoint:
+        return "the rules allow no price point";
+    }
+    return "";
+}
+
+Room roomOf(const Unit& unit, const PriceRules& rules)
+{
+    const Price today = unit.asking;
+    if (unit.locked)
+        return {today, today, Bound::lock, Bound::lock};
+    if (!rules.points.nearest(today))
+        return {today, today, Bound::noPricePoint, Bound::noPricePoint};
+
+    const Limit up = limitOf(today, rules, true);
+    const Limit down = limitOf(today, rules, false);
+    Room room{today, today, down.bound, up.bound};
+    if (const auto point = rules.points.atOrBelow(Price{up.minor}))
+        room.hi = std::max(today, *point);
+    if (const auto point = rules.points.atOrAbove(Price{down.minor}))
+        room.lo = std::min(today, *point);
+    return room;
+}
+
+Snapped snapped(const Unit& unit, Price from, Price wanted, const PriceRules& rules)
+{
+    if (unit.locked)
+        return {from, wanted == from ? Bound::none : Bound::lock};
+
+    const Room room = roomOf(unit, rules);
+    const Price inside = std::clamp(wanted, room.lo, room.hi);
+    Price price = unit.asking;
+    if (const auto below = rules.points.atOrBelow(inside); below && *below >= room.lo)
+        price = nearer(wanted, price, *below);
+    if (const auto above = rules.points.atOrAbove(inside); above && *above <= room.hi)
+        price = nearer(wanted, price, *above);
+
+    // What the spacing alone would have given tells whether a rule was in the way.
+    const Price freely = nearer(wanted, unit.asking, rules.points.nearestWithoutLimits(wanted));
+    const Bound bound = freely > room.hi ? room.above : freely < room.lo ? room.below : Bound::none;
+    return {price, bound};
+}
+
+} // namespace rungwright
