@@ -1,0 +1,171 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "scenario_json.h"
+
+#include "whole_file.h"
+
+#include <charconv>
+
+namespace rungwright
+{
+
+namespace
+{
+
+// As JSON (RFC 8259, section 7) asks and no more: names in any script stay readable.
+std::string quoted(std::string_view text)
+{
+    constexpr std::string_view hex = "0123456789abcdef";
+    std::string out = "\"";
+    for (const char c : text) {
+        const auto byte = static_cast<unsigned char>(c);
+        if (c == '"' || c == '\\')
+            (out += '\\') += c;
+        else if (c == '\n')
+            out += "\\n";
+        else if (c == '\r')
+            out += "\\r";
+        else if (c == '\t')
+            out += "\\t";
+        else if (byte < 0x20 || byte == 0x7F)
+            ((out += "\\u00") += hex[byte >> 4]) += hex[byte & 0xF];
+        else
+            out += c;
+    }
+    return out += '"';
+}
+
+// The shortest decimal that reads back as the same double.
+std::string number(double value)
+{
+    char text[32];
+    const auto end = std::to_chars(text, text + sizeof text, value).ptr;
+    return std::string(text, end);
+}
+
+class Writer
+{
+public:
+    explicit Writer(const Currency& currency) : m_currency(currency) {}
+
+    std::string price(Price value) const { return '"' + plainText(value, m_currency) + '"'; }
+
+    void rules(const PriceRules& rules)
+    {
+        m_out += "  \"rules\": {\n    \"step\": " + price(rules.points.step);
+        if (!rules.points.endings.empty()) {
+            std::string endings;
+            for (const Price ending : rules.points.endings)
+                endings += (endings.empty() ? "" : ", ") + price(ending);
+            m_out += ",\n    \"endings\": [" + endings + "]";
+        }
+        const auto line = [this](std::string_view key, const std::string& value) { ((m_out += ",\n    \"") += key) += "\": " + value; };
+        if (rules.points.least)
+            line("least", price(*rules.points.least));
+        if (rules.points.greatest)
+            line("greatest", price(*rules.points.greatest));
+        if (rules.greatestChangePercent)
+            line("greatest_change_percent", number(*rules.greatestChangePercent));
+        if (rules.greatestChange)
+            line("greatest_change", price(*rules.greatestChange));
+        if (rules.ceiling)
+            line("ceiling", price(*rules.ceiling));
+        m_out += "\n  },\n";
+    }
+
+    void tier(const TierCase& tierCase)
+    {
+        const Tier& tier = tierCase.tier;
+        m_out += "    {\n";
+        m_out += "      \"site\": " + quoted(tier.site) + ",\n";
+        m_out += "      \"tier\": " + quoted(tier.name) + ",\n";
+        m_out += "      \"advertised_floor\": " + price(tier.advertisedFloor) + ",\n";
+        if (!tierCase.note.empty())
+            m_out += "      \"note\": " + quoted(tierCase.note) + ",\n";
+        model(tierCase.model);
+        m_out += "      \"units\": [";
+        list(tier.units.size(), "        ", "      ", [&](std::size_t i) { unit(tier.units[i]); });
+        m_out += ",\n      \"candidates\": [";
+        list(tierCase.candidates.size(), "        ", "      ", [&](std::size_t i) { candidate(tierCase.candidates[i], tier.units); });
+        if (tierCase.chosen)
+            m_out += ",\n      \"chosen\": " + quoted(tierCase.candidates[static_cast<std::size_t>(*tierCase.chosen)].name);
+        m_out += "\n    }";
+    }
+
+    template <class Each>
+    void list(std::size_t count, const char* inner, const char* outer, Each each)
+    {
+        for (std::size_t i = 0; i < count; ++i) {
+            (m_out += i == 0 ? "\n" : ",\n") += inner;
+            each(i);
+        }
+        if (count > 0)
+            (m_out += "\n") += outer;
+        m_out += "]";
+    }
+
+    std::string m_out;
+
+private:
+    void model(const ModelSettings& model)
+    {
+        m_out += "      \"model\": {\"kind\": \"";
+        m_out += modelWord(model.kind);
+        m_out += "\"";
+        if (model.left)
+            m_out += ", \"left\": " + std::to_string(*model.left);
+        if (model.load)
+            m_out += ", \"load\": " + number(*model.load);
+        m_out += "},\n";
+    }
+
+    void unit(const Unit& unit)
+    {
+        m_out += "{\"unit\": " + quoted(unit.name) + ", \"price\": " + price(unit.asking) + ", \"status\": \"";
+        m_out += statusWord(unit.status);
+        m_out += "\"";
+        if (unit.locked)
+            m_out += ", \"locked\": true";
+        if (unit.grade)
+            m_out += ", \"grade\": " + std::to_string(*unit.grade);
+        if (unit.areaM2)
+            m_out += ", \"area\": " + number(*unit.areaM2);
+        if (unit.vacancyChance)
+            m_out += ", \"vacancy_chance\": " + number(*unit.vacancyChance);
+        m_out += "}";
+    }
+
+    void candidate(const Candidate& candidate, const std::vector<Unit>& units)
+    {
+        m_out += "{\n          \"name\": " + quoted(candidate.name) + ",\n";
+        if (!candidate.note.empty())
+            m_out += "          \"note\": " + quoted(candidate.note) + ",\n";
+        m_out += "          \"prices\": [";
+        list(candidate.prices.size(), "            ", "          ",
+             [&](std::size_t i) { m_out += "{\"unit\": " + quoted(units[i].name) + ", \"price\": " + price(candidate.prices[i]) + "}"; });
+        m_out += "\n        }";
+    }
+
+    const Currency& m_currency;
+};
+
+} // namespace
+
+QByteArray scenarioToJson(const Scenario& scenario)
+{
+    Writer writer(scenario.currency);
+    std::string& out = writer.m_out;
+    out += "{\n  \"format\": \"rungwright-scenario\",\n";
+    out += "  \"version\": " + std::to_string(kScenarioVersion) + ",\n";
+    out += "  \"title\": " + quoted(scenario.title) + ",\n";
+    out += "  \"currency\": " + quoted(scenario.currency.code) + ",\n";
+    out += "  \"note\": " + quoted(scenario.note) + ",\n";
+    writer.rules(scenario.rules);
+    out += "  \"tiers\": [";
+    writer.list(scenario.tiers.size(), "", "  ", [&](std::size_t i) { writer.tier(scenario.tiers[i]); });
+    out += "\n}\n";
+    return QByteArray::fromStdString(out);
+}
+
+Outcome<bool> saveScenario(const Scenario& scenario, const QString& path) { return writeWhole(path, scenarioToJson(scenario)); }
+
+} // namespace rungwright

@@ -1,0 +1,45 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "whole_file.h"
+
+#include "words.h"
+
+#include <QFile>
+#include <QFileInfo>
+#include <QSaveFile>
+
+namespace rungwright
+{
+
+Outcome<QByteArray> readWhole(const QString& path, qint64 most)
+{
+    if (QFileInfo(path).isDir())
+        return Trouble{Words::tr("%1: is a folder, not a file").arg(path).toStdString()};
+    QFile file(path);
+    if (!file.open(QIODevice::ReadOnly))
+        return Trouble{Words::tr("%1: cannot be opened: %2").arg(path, file.errorString()).toStdString()};
+    // One byte more than allowed shows that a file is too long, pipes and growing files included.
+    QByteArray bytes = file.read(most + 1);
+    if (file.error() != QFileDevice::NoError)
+        return Trouble{Words::tr("%1: cannot be read: %2").arg(path, file.errorString()).toStdString()};
+    if (bytes.size() > most)
+        return Trouble{
+            Words::tr("%1: is larger than %2 MB, which no such file should be").arg(path, QString::number(most >> 20)).toStdString()};
+    return bytes;
+}
+
+Outcome<bool> writeWhole(const QString& path, const QByteArray& bytes)
+{
+    const bool existed = QFileInfo::exists(path);
+    QSaveFile file(path);
+    bool done = file.open(QIODevice::WriteOnly) && file.write(bytes) == bytes.size();
+    done = done && file.commit();
+    if (done)
+        return true;
+    const QString reason = file.errorString();
+    file.cancelWriting();
+    return Trouble{(existed ? Words::tr("%1: cannot be written: %2. The file that was there is unchanged").arg(path, reason)
+                            : Words::tr("%1: cannot be written: %2. Nothing was left behind").arg(path, reason))
+                       .toStdString()};
+}
+
+} // namespace rungwright

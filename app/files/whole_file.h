@@ -1,0 +1,20 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+// Whole files in, and whole files out or none at all.
+#pragma once
+
+#include "outcome.h"
+
+#include <QByteArray>
+#include <QString>
+
+namespace rungwright
+{
+
+/// Everything in the file; refused beyond `most` bytes. The message starts with the path and gives the system's reason.
+Outcome<QByteArray> readWhole(const QString& path, qint64 most);
+
+/// Replaces the file in one step (QSaveFile: written beside it, synced, renamed). On any error the old file stands, and the message says
+/// so and gives the system's reason.
+Outcome<bool> writeWhole(const QString& path, const QByteArray& bytes);
+
+} // namespace rungwright
