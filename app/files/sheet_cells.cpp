@@ -53,10 +53,12 @@ std::string changePercent(Price before, Price now)
     const std::int64_t change = (now - before).minor;
     const std::int64_t size = change < 0 ? -change : change;
     const std::int64_t hundredths = (size * 10'000 + before.minor / 2 + before.minor % 2) / before.minor;
-    std::string digits = std::to_string(hundredths);
-    digits.insert(0, digits.size() < 3 ? 3 - digits.size() : 0, '0');
-    digits.insert(digits.size() - 2, ".");
-    return change < 0 && hundredths != 0 ? "-" + digits : digits;
+    std::string out = change < 0 && hundredths != 0 ? "-" : "";
+    out += std::to_string(hundredths / 100);
+    out += '.';
+    out += static_cast<char>('0' + hundredths / 10 % 10);
+    out += static_cast<char>('0' + hundredths % 10);
+    return out;
 }
 
 } // namespace rungwright
