@@ -29,13 +29,14 @@ struct FittedRange {
     double survival(double x) const;
 };
 
+/// By the population mean and variance of the prices on offer: they are the whole population.
 /// Nothing when the fit is not feasible: fewer than two units, highest <= floor, a price below the floor, no variance, or variance >= mean
 /// (1 - mean) on the unit scale.
 std::optional<FittedRange> fitRange(std::span<const Rung> sorted, Price advertisedFloor);
 
 /// Expected cheapest in minor units, for N draws.
 double expectedCheapest(const FittedRange& fit, double n);
-/// Quantile of the cheapest of N draws: the price x with P(cheapest <= x) = p.
+/// Quantile of the cheapest of N draws: the price x with P(cheapest <= x) = p, 0 <= p <= 1.
 double cheapestQuantile(const FittedRange& fit, double n, double p);
 /// Expected cheapest for N = 1..count at once, from one set of tanh-sinh nodes. Agrees with expectedCheapest to 1e-9 relative.
 void expectedCheapestForAll(const FittedRange& fit, int count, std::vector<double>& out);

@@ -36,6 +36,22 @@ struct CheapestOdds {
     bool defined() const { return !perRung.empty(); }
 };
 
+/// What a model works with once everything that was not set is inferred from the tier; `note` says why it cannot be.
+struct Settled {
+    std::optional<int> left;    ///< perceived, fitted, remainder; >= 1.
+    std::optional<double> load; ///< turnover; > 0.
+    double share = 0;           ///< unit: the tier's share on offer, for units without a chance of their own.
+    std::optional<OddsNote> note;
+};
+
+/// `ladder` as for cheapestOdds.
+///  perceived, fitted  need a unit on offer.
+///  remainder          needs a rentable unit, and one on offer unless `left` is set.
+///  unit               needs a rentable unit with a chance above 0.
+///  turnover           needs a rentable unit and, unless `load` is set, at least one taken and one on offer.
+///  onHand             needs a unit on offer.
+Settled settled(std::span<const Rung> ladder, std::span<const Unit> units, const ModelSettings& settings);
+
 /// Odds of `ladder`, the sorted units that modelUnits(settings.kind) names, in a tier of `units`. Reuses `out`'s storage.
 ///
 ///  perceived  w_i = ((m-i+1)/m)^N - ((m-i)/m)^N: independent draws from the ladder's empirical distribution.
@@ -48,7 +64,8 @@ struct CheapestOdds {
 ///             cheapest of the fitted form comes from fitted.h.
 void cheapestOdds(std::span<const Rung> ladder, std::span<const Unit> units, const ModelSettings& settings, CheapestOdds& out);
 
-/// Each unit's own chance to be the cheapest found: a block of tied prices shares its odds evenly.
+/// By place on the ladder, each unit's own chance to be the cheapest found: a block of tied prices shares its odds evenly. Empty when
+/// the odds are undefined.
 std::vector<double> sharedAmongTies(std::span<const Rung> ladder, const CheapestOdds& odds);
 
 } // namespace rungwright
