@@ -6,7 +6,8 @@
 
 class QApplication;
 
-namespace rungwright {
+namespace rungwright
+{
 
 /// Opens the window on `file` (a scenario or a unit list; empty: the start page) and runs until it is closed. Returns the exit status.
 int runDesk(QApplication& application, const QString& file);

@@ -7,7 +7,8 @@
 #include <QMessageBox>
 #include <QPushButton>
 
-namespace rungwright {
+namespace rungwright
+{
 
 QString Questions::openPath(QWidget* parent, const QString& title, const QString& filter)
 {
@@ -19,8 +20,8 @@ QString Questions::openPath(QWidget* parent, const QString& title, const QString
 
 QString Questions::savePath(QWidget* parent, const QString& title, const QString& suggestion, const QString& filter)
 {
-    const QString start = m_folder.isEmpty() || suggestion.contains(QLatin1Char('/')) ? suggestion
-                                                                                      : m_folder + QLatin1Char('/') + suggestion;
+    const QString start =
+        m_folder.isEmpty() || suggestion.contains(QLatin1Char('/')) ? suggestion : m_folder + QLatin1Char('/') + suggestion;
     const QString path = QFileDialog::getSaveFileName(parent, title, start, filter);
     if (!path.isEmpty())
         m_folder = QFileInfo(path).absolutePath();

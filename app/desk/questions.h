@@ -7,7 +7,8 @@
 
 class QWidget;
 
-namespace rungwright {
+namespace rungwright
+{
 
 class Questions
 {

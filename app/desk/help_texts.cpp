@@ -1,0 +1,34 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "help_texts.h"
+
+#include "caution.h"
+
+#include <QCoreApplication>
+
+namespace rungwright
+{
+
+QString keysText()
+{
+    return QCoreApplication::translate(
+        "Help", "On the ladder:\n"
+                "Drag a rung: its price. Drag a selected rung: all selected ones together.\n"
+                "Drag from an empty place: select what lies in the box. Ctrl+click: add or take one. Ctrl+A: all on offer.\n"
+                "Double click or Enter: type a price.\n"
+                "Up, Down: one price point. Page Up, Page Down: five.\n"
+                "Left, Right: the next rung. L: lock or unlock. Esc: give up a drag.\n"
+                "Drag the handle in the middle: bend the ladder between its ends.\n\n"
+                "Below it: drag the marker to set the number of units left.\n\n"
+                "Alt+Down, Alt+Up: the next tier of the worklist. Ctrl+F: filter it. Ctrl+1, Ctrl+2: bench, side by side.\n"
+                "Every plot and table: right click to copy or save.");
+}
+
+QString aboutText()
+{
+    return QCoreApplication::translate("Help", "Bench for shaping the price ladders of individually rented units.") +
+           QStringLiteral("\n\n") + cautionText() + QStringLiteral("\n\n") +
+           QCoreApplication::translate("Help", "Free software under the GNU General Public License, version 3 or later. "
+                                               "Built on Qt, QCustomPlot, Eigen, Boost.Math and libcsv. Sample data is invented.");
+}
+
+} // namespace rungwright

@@ -1,0 +1,301 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "main_window.h"
+
+#include "bench_page.h"
+#include "bench_picture.h"
+#include "candidates_panel.h"
+#include "caution.h"
+#include "desk_actions.h"
+#include "figures_panel.h"
+#include "help_texts.h"
+#include "questions.h"
+#include "rules_dialog.h"
+#include "sheet_dialog.h"
+#include "side_by_side_page.h"
+#include "start_page.h"
+#include "wording.h"
+#include "worklist_panel.h"
+
+#include <QCloseEvent>
+#include <QDockWidget>
+#include <QMimeData>
+#include <QScreen>
+#include <QStackedWidget>
+#include <QStatusBar>
+#include <QTabWidget>
+
+namespace rungwright
+{
+
+namespace
+{
+
+const auto kGeometry = QStringLiteral("window/geometry");
+const auto kLayout = QStringLiteral("window/layout");
+const auto kColumns = QStringLiteral("window/worklistColumns");
+constexpr int kLayoutVersion = 1;
+/// Below this width the docks leave the bench too little room unless the worklist shows fewer columns.
+constexpr int kNarrow = 1360;
+
+} // namespace
+
+MainWindow::MainWindow(Questions& questions, QSettings& settings, const QString& stateFolder, AppearanceKeeper* appearance) :
+    m_questions(questions), m_settings(settings), m_bench(m_document)
+{
+    setObjectName(QStringLiteral("mainWindow"));
+    setAcceptDrops(true);
+    m_files = new FileFlow(m_document, questions, settings, stateFolder, this);
+    buildPages();
+    buildDocks();
+    buildStatus();
+    m_actions = new DeskActions(*this, appearance);
+
+    connect(m_files, &FileFlow::opened, this, &MainWindow::onOpened);
+    connect(m_files, &FileFlow::told, this, &MainWindow::tell);
+    connect(m_files, &FileFlow::recentChanged, this, [this] { m_start->setRecent(m_files->recent().list()); });
+    connect(&m_bench, &Workbench::told, this, &MainWindow::tell);
+    connect(&m_bench, &Workbench::reset, this, &MainWindow::showModelInUse);
+    connect(&m_document, &Document::saveStateChanged, this, &MainWindow::showSaveState);
+    connect(&m_document.undoStack(), &QUndoStack::indexChanged, this, [this] {
+        const QString redo = m_document.undoStack().redoText();
+        if (!redo.isEmpty())
+            tell(tr("Undone: %1").arg(redo));
+    });
+    m_start->setRecent(m_files->recent().list());
+    restoreLayout();
+    showSaveState();
+    showModelInUse();
+}
+
+MainWindow::~MainWindow() = default;
+
+void MainWindow::buildPages()
+{
+    m_start = new StartPage;
+    m_start->setObjectName(QStringLiteral("startPage"));
+    m_pages = new QTabWidget;
+    m_pages->setObjectName(QStringLiteral("pages"));
+    m_pages->setDocumentMode(true);
+    m_benchPage = new BenchPage(m_bench, m_questions);
+    m_benchPage->setObjectName(QStringLiteral("benchPage"));
+    m_sideBySide = new SideBySidePage(m_bench, m_questions);
+    m_sideBySide->setObjectName(QStringLiteral("sideBySidePage"));
+    m_pages->addTab(m_benchPage, tr("Bench"));
+    m_pages->addTab(m_sideBySide, tr("Side by side"));
+    m_stack = new QStackedWidget;
+    m_stack->addWidget(m_start);
+    m_stack->addWidget(m_pages);
+    setCentralWidget(m_stack);
+
+    connect(m_start, &StartPage::importWanted, m_files, &FileFlow::askImport);
+    connect(m_start, &StartPage::openWanted, m_files, &FileFlow::askOpen);
+    connect(m_start, &StartPage::sampleWanted, this, [this] { m_files->openSample(DeskActions::firstSample()); });
+    connect(m_start, &StartPage::recentWanted, m_files, &FileFlow::open);
+    connect(&m_benchPage->candidates(), &CandidatesPanel::sheetWanted, this, &MainWindow::showSheet);
+    connect(m_sideBySide, &SideBySidePage::chosen, this, &MainWindow::showSheet);
+}
+
+void MainWindow::buildDocks()
+{
+    m_worklist = new WorklistPanel(m_bench);
+    m_worklistDock = new QDockWidget(tr("Worklist"), this);
+    m_worklistDock->setObjectName(QStringLiteral("worklistDock"));
+    m_worklistDock->setWidget(m_worklist);
+    addDockWidget(Qt::LeftDockWidgetArea, m_worklistDock);
+    m_figures = new FiguresPanel(m_bench);
+    m_figuresDock = new QDockWidget(tr("Figures"), this);
+    m_figuresDock->setObjectName(QStringLiteral("figuresDock"));
+    m_figuresDock->setWidget(m_figures);
+    addDockWidget(Qt::RightDockWidgetArea, m_figuresDock);
+}
+
+void MainWindow::buildStatus()
+{
+    m_lastAction = new QLabel;
+    m_lastAction->setObjectName(QStringLiteral("lastAction"));
+    m_lastAction->setAccessibleName(tr("Last action"));
+    m_lastAction->setTextFormat(Qt::PlainText);
+    m_saveState = new QLabel;
+    m_saveState->setObjectName(QStringLiteral("saveState"));
+    m_saveState->setAccessibleName(tr("Saved or not"));
+    m_modelInUse = new QLabel;
+    m_modelInUse->setObjectName(QStringLiteral("modelInUse"));
+    m_modelInUse->setAccessibleName(tr("Availability model in use"));
+    statusBar()->addWidget(m_lastAction, 1);
+    statusBar()->addPermanentWidget(m_modelInUse);
+    statusBar()->addPermanentWidget(m_saveState);
+}
+
+void MainWindow::onOpened()
+{
+    m_stack->setCurrentWidget(m_pages);
+    m_pages->setCurrentWidget(m_benchPage);
+    m_worklistDock->show();
+    m_figuresDock->show();
+    const int worst = m_worklist->model().worstTier();
+    if (worst >= 0)
+        m_bench.showTier(worst, m_document.tier(worst)->chosen.value_or(-1));
+    tell(tr("%1 opened.").arg(m_document.displayName()));
+    showSaveState();
+}
+
+void MainWindow::tell(const QString& sentence)
+{
+    m_lastAction->setText(sentence);
+    m_lastAction->setToolTip(sentence);
+}
+
+void MainWindow::showSaveState()
+{
+    const bool empty = m_document.empty();
+    setWindowModified(!empty && m_document.modified());
+    setWindowTitle(empty ? tr("Rungwright") : tr("%1[*] – Rungwright").arg(m_document.displayName()));
+    if (empty)
+        m_saveState->clear();
+    else if (m_document.modified())
+        m_saveState->setText(tr("not saved"));
+    else
+        m_saveState->setText(m_document.path().isEmpty() ? tr("sample, unchanged") : tr("saved"));
+}
+
+void MainWindow::showModelInUse()
+{
+    if (!m_bench.tierCase()) {
+        m_modelInUse->clear();
+        return;
+    }
+    const ModelSettings& s = m_bench.settings();
+    QString said = modelName(s.kind);
+    const auto left = m_bench.worked().odds.left;
+    if (takesLeft(s.kind) && left)
+        said = tr("%1, %2 left").arg(said).arg(*left);
+    m_modelInUse->setText(said);
+}
+
+// What the actions call ----------------------------------------------------------------------------------------------
+
+void MainWindow::showSheet(int candidate)
+{
+    if (!m_bench.tierCase())
+        return;
+    if (candidate >= 0)
+        m_document.chooseCandidate(m_bench.tier(), candidate);
+    auto* dialog = new SheetDialog(m_document, m_bench.tier(), candidate, m_questions, this);
+    dialog->setAttribute(Qt::WA_DeleteOnClose);
+    dialog->open();
+}
+
+void MainWindow::showRules()
+{
+    if (m_document.empty())
+        return;
+    auto* dialog = new RulesDialog(m_document.scenario().rules, m_document.scenario().currency, this);
+    dialog->setAttribute(Qt::WA_DeleteOnClose);
+    connect(dialog, &QDialog::accepted, this, [this, dialog] { m_document.setRules(dialog->rules()); });
+    dialog->open();
+}
+
+void MainWindow::savePicture()
+{
+    if (!m_bench.tierCase())
+        return;
+    const QString path = m_questions.savePath(this, tr("Save a picture of the bench"), m_bench.candidateName() + QStringLiteral(".png"),
+                                              tr("Pictures (*.png *.svg *.pdf)"));
+    if (path.isEmpty())
+        return;
+    const auto saved = renderBench(m_document, m_bench.tier(), m_bench.candidate(), path);
+    if (saved.ok())
+        tell(tr("Picture saved as %1. %2").arg(QFileInfo(path).fileName(), cautionText()));
+    else
+        m_questions.tell(this, tr("The picture could not be saved."), QString::fromStdString(saved.trouble()));
+}
+
+void MainWindow::editTierNote()
+{
+    const TierCase* tc = m_bench.tierCase();
+    if (!tc)
+        return;
+    const QString note = m_questions.longText(this, tr("Note on %1").arg(QString::fromStdString(tc->tier.name)), tr("Note:"),
+                                              QString::fromStdString(tc->note));
+    if (!note.isNull())
+        m_document.setTierNote(m_bench.tier(), note);
+}
+
+void MainWindow::editScenarioNote()
+{
+    if (m_document.empty())
+        return;
+    const QString note =
+        m_questions.longText(this, tr("Note on the scenario"), tr("Note:"), QString::fromStdString(m_document.scenario().note));
+    if (!note.isNull())
+        m_document.setScenarioNote(note);
+}
+
+void MainWindow::showKeys() { m_questions.tell(this, tr("Keys and gestures"), keysText()); }
+
+void MainWindow::showAbout() { m_questions.tell(this, tr("Rungwright %1").arg(QCoreApplication::applicationVersion()), aboutText()); }
+
+void MainWindow::showBench() { m_pages->setCurrentWidget(m_benchPage); }
+
+void MainWindow::showSideBySide() { m_pages->setCurrentWidget(m_sideBySide); }
+
+// Window -------------------------------------------------------------------------------------------------------------
+
+void MainWindow::resetLayout()
+{
+    addDockWidget(Qt::LeftDockWidgetArea, m_worklistDock);
+    addDockWidget(Qt::RightDockWidgetArea, m_figuresDock);
+    m_worklistDock->setVisible(!m_document.empty());
+    m_figuresDock->setVisible(!m_document.empty());
+    const bool narrow = width() < kNarrow;
+    if (narrow)
+        m_worklist->useNarrowColumns();
+    resizeDocks({m_worklistDock, m_figuresDock}, narrow ? QList<int>{330, 270} : QList<int>{410, 290}, Qt::Horizontal);
+}
+
+void MainWindow::restoreLayout()
+{
+    if (restoreGeometry(m_settings.value(kGeometry).toByteArray())) {
+        restoreState(m_settings.value(kLayout).toByteArray(), kLayoutVersion);
+        m_worklist->restoreColumns(m_settings.value(kColumns).toByteArray());
+    } else {
+        const QSize screen = this->screen()->availableSize();
+        resize(QSize(1440, 900).boundedTo(screen));
+        resetLayout();
+    }
+    // Nothing is open yet: the start page has the window to itself.
+    m_worklistDock->hide();
+    m_figuresDock->hide();
+}
+
+void MainWindow::closeEvent(QCloseEvent* event)
+{
+    m_bench.giveUpGesture();
+    if (!m_files->mayLeave()) {
+        event->ignore();
+        return;
+    }
+    m_files->leave();
+    m_settings.setValue(kGeometry, saveGeometry());
+    m_settings.setValue(kLayout, saveState(kLayoutVersion));
+    m_settings.setValue(kColumns, m_worklist->saveColumns());
+    event->accept();
+}
+
+void MainWindow::dragEnterEvent(QDragEnterEvent* event)
+{
+    const QList<QUrl> urls = event->mimeData()->urls();
+    if (urls.size() == 1 && urls.first().isLocalFile())
+        event->acceptProposedAction();
+}
+
+void MainWindow::dropEvent(QDropEvent* event)
+{
+    event->acceptProposedAction();
+    const QString path = event->mimeData()->urls().first().toLocalFile();
+    // The sender waits until this returns; questions come after.
+    QMetaObject::invokeMethod(
+        this, [this, path] { openFile(path); }, Qt::QueuedConnection);
+}
+
+} // namespace rungwright

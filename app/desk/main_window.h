@@ -1,0 +1,92 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+// The window: worklist, pages, figures, and the flow between them. What each part does is its own class's business.
+#pragma once
+
+#include "file_flow.h"
+#include "workbench.h"
+
+#include <QLabel>
+#include <QMainWindow>
+#include <QSettings>
+
+class QDockWidget;
+class QStackedWidget;
+class QTabWidget;
+
+namespace rungwright
+{
+
+class AppearanceKeeper;
+class BenchPage;
+class DeskActions;
+class FiguresPanel;
+class Questions;
+class SideBySidePage;
+class StartPage;
+class WorklistPanel;
+
+class MainWindow : public QMainWindow
+{
+    Q_OBJECT
+public:
+    /// `stateFolder` is where unsaved work without a file is kept. All three outlive the window.
+    MainWindow(Questions& questions, QSettings& settings, const QString& stateFolder, AppearanceKeeper* appearance = nullptr);
+    ~MainWindow() override;
+
+    Document& document() { return m_document; }
+    Workbench& bench() { return m_bench; }
+    FileFlow& files() { return *m_files; }
+    void openFile(const QString& path) { m_files->open(path); }
+
+    // What the actions call.
+    void showSheet(int candidate);
+    void showRules();
+    void savePicture();
+    void editTierNote();
+    void editScenarioNote();
+    void showKeys();
+    void showAbout();
+    void resetLayout();
+    void showBench();
+    void showSideBySide();
+    WorklistPanel& worklist() { return *m_worklist; }
+    BenchPage& benchPage() { return *m_benchPage; }
+    QDockWidget& worklistDock() { return *m_worklistDock; }
+    QDockWidget& figuresDock() { return *m_figuresDock; }
+
+protected:
+    void closeEvent(QCloseEvent* event) override;
+    void dragEnterEvent(QDragEnterEvent* event) override;
+    void dropEvent(QDropEvent* event) override;
+
+private:
+    void buildDocks();
+    void buildPages();
+    void buildStatus();
+    void onOpened();
+    void showSaveState();
+    void showModelInUse();
+    void tell(const QString& sentence);
+    void restoreLayout();
+
+    Questions& m_questions;
+    QSettings& m_settings;
+    Document m_document;
+    Workbench m_bench;
+    FileFlow* m_files = nullptr;
+    QStackedWidget* m_stack = nullptr;
+    QTabWidget* m_pages = nullptr;
+    StartPage* m_start = nullptr;
+    BenchPage* m_benchPage = nullptr;
+    SideBySidePage* m_sideBySide = nullptr;
+    WorklistPanel* m_worklist = nullptr;
+    FiguresPanel* m_figures = nullptr;
+    QDockWidget* m_worklistDock = nullptr;
+    QDockWidget* m_figuresDock = nullptr;
+    DeskActions* m_actions = nullptr;
+    QLabel* m_lastAction = nullptr;
+    QLabel* m_saveState = nullptr;
+    QLabel* m_modelInUse = nullptr;
+};
+
+} // namespace rungwright
