@@ -29,7 +29,11 @@ Outcome<QByteArray> readWhole(const QString& path, qint64 most)
 
 Outcome<bool> writeWhole(const QString& path, const QByteArray& bytes)
 {
-    const bool existed = QFileInfo::exists(path);
+    const QFileInfo there(path);
+    const bool existed = there.exists();
+    // Replacing a device, a pipe or a terminal would take it away from everyone else.
+    if (existed && !there.isFile() && !there.isDir())
+        return Trouble{Words::tr("%1: cannot be written: it is not a regular file").arg(path).toStdString()};
     QSaveFile file(path);
     bool done = file.open(QIODevice::WriteOnly) && file.write(bytes) == bytes.size();
     done = done && file.commit();

@@ -14,7 +14,7 @@ namespace rungwright
 Outcome<QByteArray> readWhole(const QString& path, qint64 most);
 
 /// Replaces the file in one step (QSaveFile: written beside it, synced, renamed). On any error the old file stands, and the message says
-/// so and gives the system's reason.
+/// so and gives the system's reason. What is there and is no regular file is never replaced.
 Outcome<bool> writeWhole(const QString& path, const QByteArray& bytes);
 
 } // namespace rungwright
