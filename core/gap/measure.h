@@ -21,12 +21,13 @@ struct Measurement {
     ModelKind model = ModelKind::perceived;
     std::vector<Rung> ladder; ///< The sorted units the model works on.
     CheapestOdds odds;
-    std::optional<FittedRange> fit; ///< Only for ModelKind::fitted, when feasible.
+    /// Only for ModelKind::fitted, when feasible. When it is not, the odds are undefined and their note says so.
+    std::optional<FittedRange> fit;
     GapFigures gap;
-    std::vector<CurtainStep> curtain;
-    std::vector<double> thinning; ///< Gap for k = 1..size() left, minor units; NaN where undefined.
-    std::size_t belowFloor = 0;   ///< Units on offer asked below the advertised floor.
-    std::size_t atFloor = 0;      ///< Units on offer asked at or below the advertised floor.
+    std::vector<CurtainStep> curtain; ///< Steps; for ModelKind::fitted a polyline.
+    std::vector<double> thinning;     ///< Gap for k = 1..size() left, minor units; NaN where undefined.
+    std::size_t belowFloor = 0;       ///< Units on offer asked below the advertised floor.
+    std::size_t atFloor = 0;          ///< Units on offer asked at or below the advertised floor.
 };
 
 enum class MeasureParts : unsigned char { figuresOnly, withCurves };
@@ -42,7 +43,7 @@ public:
 private:
     Measurement m_result;
     std::vector<Rung> m_onOffer;
-    std::vector<double> m_values;
+    FiguresWorkspace m_figures;
     ThinningWorkspace m_thinning;
 };
 
