@@ -2,6 +2,9 @@
 // Money as the tool holds it: whole minor units, never a floating-point amount.
 #pragma once
 
+// First, or Qt 6.4's moc stumbles over <concepts> in every desk header that begins with one of ours.
+#include <version>
+
 #include <compare>
 #include <cstdint>
 
