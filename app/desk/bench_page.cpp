@@ -26,7 +26,7 @@ BenchPage::BenchPage(Workbench& bench, Questions& questions, QWidget* parent) :
     QWidget(parent), m_bench(bench), m_questions(questions), m_ui(std::make_unique<Ui::BenchPage>())
 {
     m_ui->setupUi(this);
-    m_ui->benchPlots->attach(bench);
+    m_ui->benchPlots->setWorkbench(&bench);
     m_ui->candidatesPanel->attach(bench, questions);
     m_ui->benchSplitter->setStretchFactor(0, 1);
     m_ui->benchSplitter->setStretchFactor(1, 0);
@@ -43,7 +43,7 @@ BenchPage::BenchPage(Workbench& bench, Questions& questions, QWidget* parent) :
     connect(m_ui->leftBox, &QSpinBox::valueChanged, this, &BenchPage::applyModel);
     connect(m_ui->loadBox, &QDoubleSpinBox::valueChanged, this, &BenchPage::applyModel);
     connect(m_ui->holdTotalBox, &QCheckBox::toggled, &bench, &Workbench::setHoldTotal);
-    connect(&m_ui->benchPlots->ladder(), &LadderPlot::priceEditRequested, this, &BenchPage::askPrice);
+    connect(m_ui->benchPlots->ladder(), &LadderPlot::priceEditRequested, this, &BenchPage::askPrice);
     connect(&bench, &Workbench::reset, this, [this] {
         showTitle();
         showModel();

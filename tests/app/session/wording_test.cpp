@@ -1,9 +1,9 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // Figures in words: money of any number of decimals, other locales, and a fitting sentence for every special case.
-#include <QTest> // first: moc 6.4 cannot parse <concepts> before it has seen a Qt header
-
 #include "invented_tier.h"
 #include "wording.h"
+
+#include <QTest>
 
 using namespace rungwright;
 
