@@ -15,17 +15,18 @@ using namespace std::string_view_literals;
 // Active codes with a minor unit, and XXX. ISO 4217 list one as of 2026-02-01; where a code has other than two decimals it
 // stands in one of the short lists below as well.
 constexpr std::array kCodes{
-    "AED"sv, "AFN"sv, "ALL"sv, "AMD"sv, "AOA"sv, "ARS"sv, "AUD"sv, "AWG"sv, "AZN"sv, "BAM"sv, "BBD"sv, "BDT"sv, "BHD"sv, "BIF"sv, "BMD"sv,
-    "BND"sv, "BOB"sv, "BOV"sv, "BRL"sv, "BSD"sv, "BTN"sv, "BWP"sv, "BYN"sv, "BZD"sv, "CAD"sv, "CDF"sv, "CHE"sv, "CHF"sv, "CHW"sv, "CLF"sv,
-    "CLP"sv, "CNY"sv, "COP"sv, "COU"sv, "CRC"sv, "CUP"sv, "CVE"sv, "CZK"sv, "DJF"sv, "DKK"sv, "DOP"sv, "DZD"sv, "EGP"sv, "ERN"sv, "ETB"sv,
-    "EUR"sv, "FJD"sv, "FKP"sv, "GBP"sv, "GEL"sv, "GHS"sv, "GIP"sv, "GMD"sv, "GNF"sv, "GTQ"sv, "GYD"sv, "HKD"sv, "HNL"sv, "HTG"sv, "HUF"sv,
-    "IDR"sv, "ILS"sv, "INR"sv, "IQD"sv, "IRR"sv, "ISK"sv, "JMD"sv, "JOD"sv, "JPY"sv, "KES"sv, "KGS"sv, "KHR"sv, "KMF"sv, "KPW"sv, "KRW"sv,
-    "KWD"sv, "KYD"sv, "KZT"sv, "LAK"sv, "LBP"sv, "LKR"sv, "LRD"sv, "LSL"sv, "LYD"sv, "MAD"sv, "MDL"sv, "MGA"sv, "MKD"sv, "MMK"sv, "MNT"sv,
-    "MOP"sv, "MRU"sv, "MUR"sv, "MVR"sv, "MWK"sv, "MXN"sv, "MXV"sv, "MYR"sv, "MZN"sv, "NAD"sv, "NGN"sv, "NIO"sv, "NOK"sv, "NPR"sv, "NZD"sv,
-    "OMR"sv, "PAB"sv, "PEN"sv, "PGK"sv, "PHP"sv, "PKR"sv, "PLN"sv, "PYG"sv, "QAR"sv, "RON"sv, "RSD"sv, "RUB"sv, "RWF"sv, "SAR"sv, "SBD"sv,
-    "SCR"sv, "SDG"sv, "SEK"sv, "SGD"sv, "SHP"sv, "SLE"sv, "SOS"sv, "SRD"sv, "SSP"sv, "STN"sv, "SVC"sv, "SYP"sv, "SZL"sv, "THB"sv, "TJS"sv,
-    "TMT"sv, "TND"sv, "TOP"sv, "TRY"sv, "TTD"sv, "TWD"sv, "TZS"sv, "UAH"sv, "UGX"sv, "USD"sv, "USN"sv, "UYI"sv, "UYU"sv, "UYW"sv, "UZS"sv,
-    "VED"sv, "VES"sv, "VND"sv, "VUV"sv, "WST"sv, "XAF"sv, "XCD"sv, "XCG"sv, "XOF"sv, "XPF"sv, "XXX"sv, "YER"sv, "ZAR"sv, "ZMW"sv, "ZWG"sv};
+    "AED"sv, "AFN"sv, "ALL"sv, "AMD"sv, "AOA"sv, "ARS"sv, "AUD"sv, "AWG"sv, "AZN"sv, "BAM"sv, "BBD"sv, "BDT"sv, "BHD"sv, "BIF"sv,
+    "BMD"sv, "BND"sv, "BOB"sv, "BOV"sv, "BRL"sv, "BSD"sv, "BTN"sv, "BWP"sv, "BYN"sv, "BZD"sv, "CAD"sv, "CDF"sv, "CHE"sv, "CHF"sv,
+    "CHW"sv, "CLF"sv, "CLP"sv, "CNY"sv, "COP"sv, "COU"sv, "CRC"sv, "CUP"sv, "CVE"sv, "CZK"sv, "DJF"sv, "DKK"sv, "DOP"sv, "DZD"sv,
+    "EGP"sv, "ERN"sv, "ETB"sv, "EUR"sv, "FJD"sv, "FKP"sv, "GBP"sv, "GEL"sv, "GHS"sv, "GIP"sv, "GMD"sv, "GNF"sv, "GTQ"sv, "GYD"sv,
+    "HKD"sv, "HNL"sv, "HTG"sv, "HUF"sv, "IDR"sv, "ILS"sv, "INR"sv, "IQD"sv, "IRR"sv, "ISK"sv, "JMD"sv, "JOD"sv, "JPY"sv, "KES"sv,
+    "KGS"sv, "KHR"sv, "KMF"sv, "KPW"sv, "KRW"sv, "KWD"sv, "KYD"sv, "KZT"sv, "LAK"sv, "LBP"sv, "LKR"sv, "LRD"sv, "LSL"sv, "LYD"sv,
+    "MAD"sv, "MDL"sv, "MGA"sv, "MKD"sv, "MMK"sv, "MNT"sv, "MOP"sv, "MRU"sv, "MUR"sv, "MVR"sv, "MWK"sv, "MXN"sv, "MXV"sv, "MYR"sv,
+    "MZN"sv, "NAD"sv, "NGN"sv, "NIO"sv, "NOK"sv, "NPR"sv, "NZD"sv, "OMR"sv, "PAB"sv, "PEN"sv, "PGK"sv, "PHP"sv, "PKR"sv, "PLN"sv,
+    "PYG"sv, "QAR"sv, "RON"sv, "RSD"sv, "RUB"sv, "RWF"sv, "SAR"sv, "SBD"sv, "SCR"sv, "SDG"sv, "SEK"sv, "SGD"sv, "SHP"sv, "SLE"sv,
+    "SOS"sv, "SRD"sv, "SSP"sv, "STN"sv, "SVC"sv, "SYP"sv, "SZL"sv, "THB"sv, "TJS"sv, "TMT"sv, "TND"sv, "TOP"sv, "TRY"sv, "TTD"sv,
+    "TWD"sv, "TZS"sv, "UAH"sv, "UGX"sv, "USD"sv, "USN"sv, "UYI"sv, "UYU"sv, "UYW"sv, "UZS"sv, "VED"sv, "VES"sv, "VND"sv, "VUV"sv,
+    "WST"sv, "XAD"sv, "XAF"sv, "XCD"sv, "XCG"sv, "XOF"sv, "XPF"sv, "XXX"sv, "YER"sv, "ZAR"sv, "ZMW"sv, "ZWG"sv};
 static_assert(std::ranges::is_sorted(kCodes));
 
 constexpr std::array kWithoutDecimals{"BIF"sv, "CLP"sv, "DJF"sv, "GNF"sv, "ISK"sv, "JPY"sv, "KMF"sv, "KRW"sv, "PYG"sv,
