@@ -117,6 +117,7 @@ UnitListResult readDevice(QIODevice& device, const QString& fileName, const Unit
     result.fileTrouble = end.cancelled ? Words::tr("%1: reading was cancelled; nothing was taken").arg(fileName) : end.trouble;
     if (result.fileTrouble.isEmpty())
         rows.finish();
+    result.rowsFine = result.fileTrouble.isEmpty() ? result.rowsTaken : 0;
     if (!result.fileTrouble.isEmpty() || (result.refusedCount > 0 && !options.withoutBadRows)) {
         result.tiers.clear();
         result.rowsTaken = 0;

@@ -38,6 +38,7 @@ struct UnitListResult {
     Currency currency;
     std::vector<TierCase> tiers; ///< In order of first appearance; units in file order. Empty when refused (unless withoutBadRows).
     qint64 rowsTaken = 0;
+    qint64 rowsFine = 0;             ///< Rows that were taken, or would be without the refused ones. 0 with a fileTrouble.
     std::vector<RefusedRow> refused; ///< The first kRefusedRowsKept.
     qint64 refusedCount = 0;
     QStringList unknownColumns; ///< Kept aside, reported once.
