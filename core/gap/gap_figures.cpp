@@ -86,6 +86,7 @@ void curtainSteps(std::span<const Rung> ladder, const CheapestOdds& odds, std::v
     if (!odds.defined())
         return;
     assert(odds.perRung.size() == ladder.size());
+    out.reserve(ladder.size()); // However many are tied this time.
     for (std::size_t i = 0; i < ladder.size(); ++i) {
         if (i == 0 || ladder[i].price != ladder[i - 1].price)
             out.push_back({minor(ladder[i].price), 0});

@@ -109,12 +109,21 @@ double aroundPivot(const Kernel& kernel, const MedcoupleWorkspace& work, double 
     return (upperValue + lowerValue) / 2;
 }
 
-double kernelMedian(const Kernel& kernel, MedcoupleWorkspace& work)
+/// So few candidates a row are left to plain selection.
+constexpr std::size_t kCandidatesToSort = 4;
+
+double kernelMedian(const Kernel& kernel, std::size_t values, MedcoupleWorkspace& work)
 {
     const std::size_t rows = kernel.rows();
     const std::size_t total = rows * kernel.columns();
     const std::size_t upper = (total - 1) / 2;
     const std::size_t lower = total / 2;
+    // How many rows there are and how many candidates stay depends on the values; room for the most there can be is asked for at once, so
+    // that the same number of values never needs more.
+    for (auto* byRow : {&work.first, &work.last, &work.above, &work.notBelow})
+        byRow->reserve(values);
+    work.rowMedians.reserve(values);
+    work.rest.reserve(kCandidatesToSort * values);
     work.first.assign(rows, 0);
     work.last.assign(rows, static_cast<std::uint32_t>(kernel.columns())); // One past the last candidate.
     work.above.resize(rows);
@@ -123,7 +132,7 @@ double kernelMedian(const Kernel& kernel, MedcoupleWorkspace& work)
     // Every pass drops at least a quarter of the candidates left, so that few passes over the rows are needed.
     std::size_t dropped = 0; // Candidates known to be greater than both wanted ones.
     std::size_t kept = total;
-    while (kept > 4 * rows) {
+    while (kept > kCandidatesToSort * rows) {
         work.rowMedians.clear();
         for (std::size_t row = 0; row < rows; ++row)
             if (work.first[row] < work.last[row])
@@ -167,7 +176,7 @@ std::optional<double> medcouple(std::span<const double> sorted, MedcoupleWorkspa
 {
     if (sorted.size() < 3 || !(sorted.front() < sorted.back()))
         return std::nullopt;
-    return kernelMedian(Kernel(sorted), work);
+    return kernelMedian(Kernel(sorted), sorted.size(), work);
 }
 
 } // namespace rungwright
