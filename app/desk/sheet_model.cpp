@@ -60,7 +60,8 @@ QString SheetModel::text(const SheetRow& row, int column) const
         return tr("no change");
     if (column == changeColumn)
         return signedMoneyText(static_cast<double>(changeOf(row).minor), m_currency);
-    const QString percent = percentText(shareOf(row), true);
+    // As fine as the file has it.
+    const QString percent = numberText(100.0 * shareOf(row)) + QStringLiteral("\u00a0%");
     return shareOf(row) > 0 ? u'+' + percent : percent;
 }
 

@@ -18,7 +18,7 @@ QString listed(const QStringList& names)
 {
     constexpr int most = 3;
     const QString first = names.mid(0, most).join(tr(", "));
-    return names.size() <= most ? first : tr("%1 and %2 more").arg(first).arg(names.size() - most);
+    return names.size() <= most ? first : tr("%1 and %2 more").arg(first, numberText(static_cast<double>(names.size() - most), 0));
 }
 
 QString counted(qsizetype count, const char* one, const char* several)
