@@ -28,9 +28,20 @@ QString exampleAmount(const Currency& currency, const QLocale& locale)
     return moneyText(12.5 * static_cast<double>(currency.minorPerMajor()), currency, locale);
 }
 
-/// An amount that may begin with its decimal sign.
-std::optional<Price> looseAmount(QString text, const Currency& currency, const QLocale& locale)
+/// The locale's own digits are as good as ours.
+QString plainDigits(QString text)
 {
+    for (QChar& c : text) {
+        if (c.isDigit())
+            c = QChar(u'0' + c.digitValue());
+    }
+    return text;
+}
+
+/// An amount that may begin with its decimal sign.
+std::optional<Price> looseAmount(const QString& typed, const Currency& currency, const QLocale& locale)
+{
+    QString text = plainDigits(typed);
     if (text.startsWith(u'.') || text.startsWith(locale.decimalPoint()))
         text.prepend(u'0');
     return moneyFromText(text, currency, locale);
@@ -85,8 +96,6 @@ Outcome<std::optional<double>> readPercent(const QString& text, const QLocale& l
         return trouble(tr("Not a percentage. Type one like %1.").arg(percentFieldText(7.5, locale)));
     if (percent <= 0)
         return trouble(tr("Must be more than zero."));
-    if (percent > 1000)
-        return trouble(tr("More than %1. Leave it empty for no limit.").arg(percentText(10.0, false, locale)));
     return std::optional(percent);
 }
 

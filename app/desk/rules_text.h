@@ -18,7 +18,7 @@ namespace rungwright
 
 /// An amount above zero, as the locale writes it or plainly with a point.
 Outcome<std::optional<Price>> readAmount(const QString& text, const Currency& currency, const QLocale& locale = QLocale());
-/// A percentage above zero, at most 1,000, with or without its sign.
+/// A percentage above zero, with or without its sign.
 Outcome<std::optional<double>> readPercent(const QString& text, const QLocale& locale = QLocale());
 /// Endings, each at least zero and below the step: sorted, repeats left out. Set apart by semicolons or blanks; where the locale's decimal
 /// sign is a point, by commas too. ".95" is 0.95. `step` empty: none was typed, and endings have nothing to stand on.
