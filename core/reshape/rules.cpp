@@ -115,8 +115,14 @@ Snapped snapped(const Unit& unit, Price from, Price wanted, const PriceRules& ru
 
     // What the spacing alone would have given tells whether a rule was in the way.
     const Price freely = nearer(wanted, unit.asking, rules.points.nearestWithoutLimits(wanted));
-    const Bound bound = freely > room.hi ? room.above : freely < room.lo ? room.below : Bound::none;
-    return {price, bound};
+    if (freely == price)
+        return {price, Bound::none};
+    if (freely > room.hi)
+        return {price, room.above};
+    if (freely < room.lo)
+        return {price, room.below};
+    // Between today's price and the price points, where those begin above it or end below it.
+    return {price, rules.points.greatest && freely > *rules.points.greatest ? Bound::greatestPoint : Bound::leastPoint};
 }
 
 } // namespace rungwright
