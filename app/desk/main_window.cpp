@@ -17,7 +17,9 @@
 #include "worklist_panel.h"
 
 #include <QCloseEvent>
+#include <QCoreApplication>
 #include <QDockWidget>
+#include <QFileInfo>
 #include <QMimeData>
 #include <QScreen>
 #include <QStackedWidget>
