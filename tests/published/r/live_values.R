@@ -1,0 +1,75 @@
+# SPDX-License-Identifier: GPL-3.0-or-later
+# Answers the questions of the live comparison with R. First argument: the topic. Questions come on standard input, one a line, numbers
+# separated by spaces; answers go to standard output, one line each, in 17 digits. A line "missing <package>" says what is not installed.
+
+topic <- commandArgs(trailingOnly = TRUE)[1]
+
+need <- function(package) {
+    if (!suppressWarnings(requireNamespace(package, quietly = TRUE))) {
+        cat("missing", package, "\n")
+        quit(status = 0)
+    }
+}
+say <- function(...) cat(sprintf("%.17g", c(...)), "\n")
+questions <- function() lapply(strsplit(readLines(file("stdin")), " ", fixed = TRUE), as.numeric)
+
+# The medcouple as defined, by the ordinary median of the whole kernel, with the tie rule of Brys, Hubert & Struyf (2004).
+kernelMedian <- function(x) {
+    z <- sort(x) - median(x)
+    above <- rev(z[z >= 0])
+    below <- rev(z[z <= 0])
+    k <- sum(z == 0)
+    h <- outer(seq_along(above), seq_along(below), function(i, j) {
+        a <- above[i]
+        b <- below[j]
+        ifelse(a == 0 & b == 0, sign(k - (i - (length(above) - k)) - j + 1), (a + b) / (a - b))
+    })
+    median(h)
+}
+
+# Unbiased probability-weighted moments, Hosking (1990).
+lSkewness <- function(x) {
+    x <- sort(x)
+    n <- length(x)
+    j <- seq_len(n)
+    b0 <- mean(x)
+    b1 <- sum((j - 1) / (n - 1) * x) / n
+    b2 <- sum((j - 1) * (j - 2) / ((n - 1) * (n - 2)) * x) / n
+    (6 * b2 - 6 * b1 + b0) / (2 * b1 - b0)
+}
+
+# Question: alpha beta floor highest N. Answer: expected least of N draws from the beta distribution stretched to [floor, highest].
+fitted <- function(q) {
+    survives <- function(u) pbeta(u, q[1], q[2], lower.tail = FALSE)^q[5]
+    # Split where the integrand falls, so that integrate() cannot miss it.
+    falls <- qbeta(1 - c(1 - 1e-12, 0.999, 0.9, 0.5, 0.1, 1e-3, 1e-12)^(1 / q[5]), q[1], q[2])
+    at <- unique(c(0, falls, 1))
+    parts <- mapply(function(from, to) integrate(survives, from, to, rel.tol = 1e-12, subdivisions = 5000L)$value, head(at, -1), tail(at, -1))
+    q[3] + (q[4] - q[3]) * sum(parts)
+}
+
+# Question: alpha beta floor highest N p. Answer: the p quantile of the least of N draws.
+quantileOfLeast <- function(q) q[3] + (q[4] - q[3]) * qbeta(-expm1(log1p(-q[6]) / q[5]), q[1], q[2])
+
+if (topic == "fitted") {
+    for (q in questions()) say(fitted(q))
+} else if (topic == "quantile") {
+    for (q in questions()) say(quantileOfLeast(q))
+} else if (topic == "survival") { # alpha beta u
+    for (q in questions()) say(pbeta(q[3], q[1], q[2], lower.tail = FALSE))
+} else if (topic == "skewness") { # x1 x2 ...: types 1 and 2, the kernel's median, L-skewness
+    need("e1071")
+    for (x in questions()) say(e1071::skewness(x, type = 1), e1071::skewness(x, type = 2), kernelMedian(x), lSkewness(x))
+} else if (topic == "medcouple") { # robustbase averages mc(x) and -mc(-x) up to 100 values, which is the ordinary median of the kernel
+    need("robustbase")
+    for (x in questions()) say(robustbase::mc(x, doScale = FALSE))
+} else if (topic == "datasets") { # no questions: n, the values, then as for skewness
+    need("e1071")
+    for (x in list(faithful$eruptions, faithful$waiting, as.numeric(precip), mtcars$mpg, mtcars$hp, as.numeric(islands), as.numeric(rivers),
+                   cars$dist, sleep$extra, trees$Volume, warpbreaks$breaks, stack.loss, quakes$mag, chickwts$weight, PlantGrowth$weight))
+        say(length(x), x, e1071::skewness(x, type = 1), e1071::skewness(x, type = 2), kernelMedian(x), lSkewness(x))
+} else if (topic == "remainder") { # M k: odds of the rungs 1..M
+    for (q in questions()) say(choose(q[1] - seq_len(q[1]), q[2] - 1) / choose(q[1], q[2]))
+} else if (topic == "hypergeometric") { # M k i: none of the i lowest of M among the k left
+    for (q in questions()) say(dhyper(0, q[3], q[1] - q[3], q[2]))
+}
