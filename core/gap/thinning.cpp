@@ -139,7 +139,8 @@ void batchLoads(int servers, std::vector<double>& loads)
             // Newton's method on wanted / F - 1, as in loadForCarried().
             const Lanes slope = wanted * (1 - loss * (1 + free)) / (free * free);
             const Lanes next = (load - (wanted / free - 1) / slope).max(least);
-            const bool settledAll = ((next - load).abs() <= 1e-14 * next).all();
+            // The next step would be some square of this one: far below what rounding leaves.
+            const bool settledAll = ((next - load).abs() <= 1e-9 * next).all();
             load = next;
             if (settledAll)
                 break;
