@@ -80,6 +80,27 @@ std::optional<TroubleAt> findKeyTrouble(std::string_view text)
     return {};
 }
 
+// QJsonDocument's offset lies just behind the character it stumbled over, and somewhere inside a word or number it does not know; what
+// helps is the place of that character, or where the word begins.
+std::size_t placeOf(const QJsonParseError& error, std::string_view text)
+{
+    auto at = static_cast<std::size_t>(std::max(0, error.offset));
+    if (error.error == QJsonParseError::GarbageAtEnd || at == 0 || at > text.size())
+        return at;
+    --at;
+    if (error.error != QJsonParseError::IllegalValue && error.error != QJsonParseError::IllegalNumber)
+        return at;
+    constexpr std::string_view between = " \t\r\n,:[]{}";
+    const auto separates = [&](std::size_t i) { return i >= text.size() || between.find(text[i]) != std::string_view::npos; };
+    if (separates(at) && !separates(at + 1))
+        return at + 1;
+    while (at > 0 && separates(at))
+        --at;
+    while (at > 0 && !separates(at - 1))
+        --at;
+    return at;
+}
+
 QString reasonOf(const QJsonParseError& error)
 {
     switch (error.error) {
@@ -123,8 +144,7 @@ bool parseJson(const std::string& text, const QString& fileName, QJsonDocument& 
     QJsonParseError error;
     document = QJsonDocument::fromJson(QByteArray::fromRawData(text.data(), qsizetype(text.size())), &error);
     if (error.error != QJsonParseError::NoError) {
-        trouble = placeAt(text, static_cast<std::size_t>(std::max(0, error.offset)), fileName) +
-                  Words::tr("not valid JSON: %1").arg(reasonOf(error));
+        trouble = placeAt(text, placeOf(error, text), fileName) + Words::tr("not valid JSON: %1").arg(reasonOf(error));
         return false;
     }
     if (const auto found = findKeyTrouble(text)) {

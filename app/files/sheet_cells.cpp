@@ -52,7 +52,7 @@ std::string changePercent(Price before, Price now)
     // Hundredths of a percent, in integers: below 9 * 10^15 in size for prices the tool takes.
     const std::int64_t change = (now - before).minor;
     const std::int64_t size = change < 0 ? -change : change;
-    const std::int64_t hundredths = (size * 10'000 + before.minor / 2 + before.minor % 2) / before.minor;
+    const std::int64_t hundredths = (size * 10'000 + before.minor / 2) / before.minor;
     std::string out = change < 0 && hundredths != 0 ? "-" : "";
     out += std::to_string(hundredths / 100);
     out += '.';

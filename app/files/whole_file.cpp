@@ -35,9 +35,14 @@ Outcome<bool> writeWhole(const QString& path, const QByteArray& bytes)
     if (existed && !there.isFile() && !there.isDir())
         return Trouble{Words::tr("%1: cannot be written: it is not a regular file").arg(path).toStdString()};
     QSaveFile file(path);
-    bool done = file.open(QIODevice::WriteOnly) && file.write(bytes) == bytes.size();
-    done = done && file.commit();
-    if (done)
+    bool done = file.open(QIODevice::WriteOnly);
+    // A disk that fills up takes a part without a word; only writing the rest brings the reason.
+    for (qsizetype at = 0; done && at < bytes.size();) {
+        const qint64 taken = file.write(bytes.constData() + at, bytes.size() - at);
+        done = taken > 0;
+        at += taken;
+    }
+    if (done && file.commit())
         return true;
     const QString reason = file.errorString();
     file.cancelWriting();
