@@ -1,0 +1,39 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+// What a command was asked to do, and how it ended.
+#pragma once
+
+#include "cheapest/model.h"
+
+#include <QString>
+#include <QStringList>
+
+#include <optional>
+
+namespace rungwright
+{
+
+/// The exit status of every command.
+enum class ExitStatus : int {
+    done = 0,
+    wrongUsage = 2,   ///< An option, a value or a name on the command line that does not hold.
+    inputRefused = 3, ///< FILE cannot be read, or what it holds is refused.
+    cannotWrite = 4,  ///< The file or standard output could not be written whole.
+};
+
+/// One command line, read. What was not said is empty.
+struct Request {
+    QString file;
+    std::optional<QString> site;
+    std::optional<QString> tier;
+    std::optional<QString> candidate;
+    std::optional<ModelKind> model;
+    std::optional<int> left;    ///< >= 1.
+    std::optional<double> load; ///< Finite, > 0.
+    QString currency;           ///< A code findCurrency() knows, or empty.
+    QString out;
+    bool json = false;
+    bool withoutBadRows = false;
+    bool help = false; ///< Only help was asked for; the rest is empty.
+};
+
+} // namespace rungwright
