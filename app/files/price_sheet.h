@@ -33,7 +33,7 @@ std::vector<SheetRow> sheetRows(const Scenario& scenario, const TierCase& tierCa
 
 /// RFC 4180, CRLF, header site,tier,unit,status,current_price,new_price,change,change_percent,currency,candidate. change_percent has two
 /// decimals. Text cells a spreadsheet would take for a formula (first character = + - @ TAB CR, also LF) get a leading apostrophe; so does
-/// a text that itself begins with an apostrophe followed by one of these, so that reading back is exact.
+/// a text that itself begins with apostrophes followed by one of these, so that reading back is exact.
 QByteArray sheetToCsv(const std::vector<SheetRow>& rows, const Currency& currency);
 Outcome<std::vector<SheetRow>> sheetFromCsv(const QByteArray& csv, const QString& fileName);
 

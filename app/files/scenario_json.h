@@ -22,7 +22,8 @@ QByteArray scenarioToJson(const Scenario& scenario);
 Outcome<Scenario> scenarioFromJson(const QByteArray& json, const QString& fileName);
 
 Outcome<Scenario> loadScenario(const QString& path);
-/// Whole or not at all (QSaveFile): on any error, a full disk included, the old file stands and the message says why.
+/// Whole or not at all (QSaveFile): on any error, a full disk included, the old file stands and the message says why. What is to be written
+/// is read first: a scenario that could not be opened again as it is (a text that is not UTF-8, a price of 0) is not written.
 Outcome<bool> saveScenario(const Scenario& scenario, const QString& path);
 
 } // namespace rungwright

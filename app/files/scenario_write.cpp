@@ -2,7 +2,9 @@
 #include "scenario_json.h"
 
 #include "whole_file.h"
+#include "words.h"
 
+#include <cassert>
 #include <charconv>
 
 namespace rungwright
@@ -12,7 +14,7 @@ namespace
 {
 
 // As JSON (RFC 8259, section 7) asks and no more: names in any script stay readable.
-std::string quoted(std::string_view text)
+std::string jsonText(std::string_view text)
 {
     constexpr std::string_view hex = "0123456789abcdef";
     std::string out = "\"";
@@ -76,18 +78,18 @@ public:
     {
         const Tier& tier = tierCase.tier;
         m_out += "    {\n";
-        m_out += "      \"site\": " + quoted(tier.site) + ",\n";
-        m_out += "      \"tier\": " + quoted(tier.name) + ",\n";
+        m_out += "      \"site\": " + jsonText(tier.site) + ",\n";
+        m_out += "      \"tier\": " + jsonText(tier.name) + ",\n";
         m_out += "      \"advertised_floor\": " + price(tier.advertisedFloor) + ",\n";
         if (!tierCase.note.empty())
-            m_out += "      \"note\": " + quoted(tierCase.note) + ",\n";
+            m_out += "      \"note\": " + jsonText(tierCase.note) + ",\n";
         model(tierCase.model);
         m_out += "      \"units\": [";
         list(tier.units.size(), "        ", "      ", [&](std::size_t i) { unit(tier.units[i]); });
         m_out += ",\n      \"candidates\": [";
         list(tierCase.candidates.size(), "        ", "      ", [&](std::size_t i) { candidate(tierCase.candidates[i], tier.units); });
         if (tierCase.chosen)
-            m_out += ",\n      \"chosen\": " + quoted(tierCase.candidates[static_cast<std::size_t>(*tierCase.chosen)].name);
+            m_out += ",\n      \"chosen\": " + jsonText(tierCase.candidates[static_cast<std::size_t>(*tierCase.chosen)].name);
         m_out += "\n    }";
     }
 
@@ -120,7 +122,7 @@ private:
 
     void unit(const Unit& unit)
     {
-        m_out += "{\"unit\": " + quoted(unit.name) + ", \"price\": " + price(unit.asking) + ", \"status\": \"";
+        m_out += "{\"unit\": " + jsonText(unit.name) + ", \"price\": " + price(unit.asking) + ", \"status\": \"";
         m_out += statusWord(unit.status);
         m_out += "\"";
         if (unit.locked)
@@ -136,12 +138,13 @@ private:
 
     void candidate(const Candidate& candidate, const std::vector<Unit>& units)
     {
-        m_out += "{\n          \"name\": " + quoted(candidate.name) + ",\n";
+        assert(candidate.prices.size() == units.size());
+        m_out += "{\n          \"name\": " + jsonText(candidate.name) + ",\n";
         if (!candidate.note.empty())
-            m_out += "          \"note\": " + quoted(candidate.note) + ",\n";
+            m_out += "          \"note\": " + jsonText(candidate.note) + ",\n";
         m_out += "          \"prices\": [";
         list(candidate.prices.size(), "            ", "          ",
-             [&](std::size_t i) { m_out += "{\"unit\": " + quoted(units[i].name) + ", \"price\": " + price(candidate.prices[i]) + "}"; });
+             [&](std::size_t i) { m_out += "{\"unit\": " + jsonText(units[i].name) + ", \"price\": " + price(candidate.prices[i]) + "}"; });
         m_out += "\n        }";
     }
 
@@ -156,9 +159,9 @@ QByteArray scenarioToJson(const Scenario& scenario)
     std::string& out = writer.m_out;
     out += "{\n  \"format\": \"rungwright-scenario\",\n";
     out += "  \"version\": " + std::to_string(kScenarioVersion) + ",\n";
-    out += "  \"title\": " + quoted(scenario.title) + ",\n";
-    out += "  \"currency\": " + quoted(scenario.currency.code) + ",\n";
-    out += "  \"note\": " + quoted(scenario.note) + ",\n";
+    out += "  \"title\": " + jsonText(scenario.title) + ",\n";
+    out += "  \"currency\": " + jsonText(scenario.currency.code) + ",\n";
+    out += "  \"note\": " + jsonText(scenario.note) + ",\n";
     writer.rules(scenario.rules);
     out += "  \"tiers\": [";
     writer.list(scenario.tiers.size(), "", "  ", [&](std::size_t i) { writer.tier(scenario.tiers[i]); });
@@ -166,6 +169,18 @@ QByteArray scenarioToJson(const Scenario& scenario)
     return QByteArray::fromStdString(out);
 }
 
-Outcome<bool> saveScenario(const Scenario& scenario, const QString& path) { return writeWhole(path, scenarioToJson(scenario)); }
+Outcome<bool> saveScenario(const Scenario& scenario, const QString& path)
+{
+    const QByteArray bytes = scenarioToJson(scenario);
+    // Better an error now, while the scenario is in hand, than a file tomorrow that cannot be opened.
+    const Outcome<Scenario> read = scenarioFromJson(bytes, path);
+    if (!read.ok())
+        return Trouble{Words::tr("not saved, because the file could not be opened again: %1")
+                           .arg(QString::fromStdString(read.trouble()))
+                           .toStdString()};
+    if (!(read.value() == scenario))
+        return Trouble{Words::tr("%1: not saved, because the file would not hold the same scenario").arg(path).toStdString()};
+    return writeWhole(path, bytes);
+}
 
 } // namespace rungwright

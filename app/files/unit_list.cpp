@@ -3,6 +3,7 @@
 
 #include "csv_records.h"
 #include "unit_rows.h"
+#include "whole_file.h"
 #include "words.h"
 
 #include <QBuffer>
@@ -17,10 +18,14 @@ namespace rungwright
 namespace
 {
 
+constexpr qint64 kLargestPipe = qint64(256) << 20;
+
 bool isBlank(std::span<const std::string_view> cells)
 {
     return std::all_of(cells.begin(), cells.end(), [](std::string_view cell) { return trimmedText(cell).empty(); });
 }
+
+QString cancelled(const QString& fileName) { return Words::tr("%1: reading was cancelled; nothing was taken").arg(fileName); }
 
 // What must be known before the first price can be read: the columns, and the currency, which a later row may name first.
 struct FirstLook {
@@ -31,7 +36,7 @@ struct FirstLook {
     QString trouble;
 };
 
-FirstLook lookAhead(QIODevice& device, const QString& fileName)
+FirstLook lookAhead(QIODevice& device, const QString& fileName, const Progress& progress)
 {
     FirstLook look;
     const auto sink = [&](qint64 line, std::span<const std::string_view> cells) {
@@ -59,7 +64,10 @@ FirstLook lookAhead(QIODevice& device, const QString& fileName)
         look.currencyLine = line;
         return false;
     };
-    const CsvEnd end = readCsv(device, fileName, sink);
+    // Nearly always over with the first piece; a list whose currency cells are all empty is walked through, though.
+    const CsvEnd end = readCsv(device, fileName, sink, [&progress](double) { return !progress || progress(0); });
+    if (end.cancelled)
+        look.trouble = cancelled(fileName);
     if (look.trouble.isEmpty() && !look.header)
         look.trouble = end.trouble;
     if (look.trouble.isEmpty() && !look.header)
@@ -89,7 +97,7 @@ QString settleCurrency(const FirstLook& look, const QString& asked, const QStrin
 UnitListResult readDevice(QIODevice& device, const QString& fileName, const UnitListOptions& options, const Progress& progress)
 {
     UnitListResult result;
-    const FirstLook look = lookAhead(device, fileName);
+    const FirstLook look = lookAhead(device, fileName, progress);
     result.fileTrouble = look.trouble;
     if (result.fileTrouble.isEmpty())
         result.fileTrouble = settleCurrency(look, options.currencyCode, fileName, result.currency);
@@ -114,7 +122,7 @@ UnitListResult readDevice(QIODevice& device, const QString& fileName, const Unit
         },
         progress);
     result.encoding = end.encoding;
-    result.fileTrouble = end.cancelled ? Words::tr("%1: reading was cancelled; nothing was taken").arg(fileName) : end.trouble;
+    result.fileTrouble = end.cancelled ? cancelled(fileName) : end.trouble;
     if (result.fileTrouble.isEmpty())
         rows.finish();
     result.rowsFine = result.fileTrouble.isEmpty() ? result.rowsTaken : 0;
@@ -152,10 +160,15 @@ UnitListResult loadUnitList(const QString& path, const UnitListOptions& options,
                                                      : Words::tr("%1: cannot be opened: %2").arg(path, file.errorString());
         return result;
     }
-    // A pipe cannot be read twice.
-    if (file.isSequential())
-        return readUnitList(file.readAll(), path, options, progress);
-    return readDevice(file, path, options, progress);
+    if (!file.isSequential())
+        return readDevice(file, path, options, progress);
+    // A pipe cannot be read twice, so it is kept, and a device that never ends is not waited for.
+    const Outcome<QByteArray> bytes = readRest(file, kLargestPipe);
+    if (bytes.ok())
+        return readUnitList(bytes.value(), path, options, progress);
+    UnitListResult result;
+    result.fileTrouble = QString::fromStdString(bytes.trouble());
+    return result;
 }
 
 } // namespace rungwright

@@ -40,10 +40,11 @@ struct UnitListResult {
     qint64 rowsTaken = 0;
     qint64 rowsFine = 0;             ///< Rows that were taken, or would be without the refused ones. 0 with a fileTrouble.
     std::vector<RefusedRow> refused; ///< The first kRefusedRowsKept.
-    qint64 refusedCount = 0;
-    QStringList unknownColumns; ///< Kept aside, reported once.
-    QString encoding;           ///< "UTF-8", "UTF-8 with BOM", "UTF-16LE", "UTF-16BE".
-    QString fileTrouble;        ///< Not empty: the file as a whole could not be read (encoding, header, quotes, empty, cancelled).
+    qint64 refusedCount = 0;         ///< All of them; a tier that is refused whole counts once.
+    QStringList unknownColumns;      ///< Kept aside, reported once.
+    QString encoding;                ///< "UTF-8", "UTF-8 with BOM", "UTF-16LE", "UTF-16BE".
+    QString fileTrouble; ///< Not empty: the file as a whole could not be read (encoding, header, quotes, empty, cancelled); names the file
+                         ///< and line.
 
     bool clean() const { return fileTrouble.isEmpty() && refusedCount == 0; }
 };
@@ -54,6 +55,10 @@ inline constexpr std::size_t kRefusedRowsKept = 1000;
 using Progress = std::function<bool(double)>;
 
 /// Reads a unit list from memory. `fileName` is for messages only.
+/// One entry of `refused` stands for one row, whatever is wrong in it; the other columns in trouble are named in its `wrong`. Only rows
+/// that are taken count when another is compared with them: a refused row neither makes a later one a duplicate nor fixes its tier's floor.
+/// Rows in which every cell is empty are passed over (spreadsheets leave them). The file's currency and options.currencyCode must not
+/// differ.
 UnitListResult readUnitList(const QByteArray& bytes, const QString& fileName, const UnitListOptions& options,
                             const Progress& progress = {});
 UnitListResult loadUnitList(const QString& path, const UnitListOptions& options, const Progress& progress = {});

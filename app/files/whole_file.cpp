@@ -3,7 +3,6 @@
 
 #include "words.h"
 
-#include <QFile>
 #include <QFileInfo>
 #include <QSaveFile>
 
@@ -17,13 +16,23 @@ Outcome<QByteArray> readWhole(const QString& path, qint64 most)
     QFile file(path);
     if (!file.open(QIODevice::ReadOnly))
         return Trouble{Words::tr("%1: cannot be opened: %2").arg(path, file.errorString()).toStdString()};
-    // One byte more than allowed shows that a file is too long, pipes and growing files included.
-    QByteArray bytes = file.read(most + 1);
+    return readRest(file, most);
+}
+
+Outcome<QByteArray> readRest(QFile& file, qint64 most)
+{
+    constexpr qint64 piece = 1'048'576;
+    const QString path = file.fileName();
+    QByteArray bytes;
+    for (QByteArray more = file.read(piece); !more.isEmpty(); more = file.read(piece)) {
+        bytes += more;
+        // Counted while reading, not asked beforehand: a pipe or a growing file does not know its size.
+        if (bytes.size() > most)
+            return Trouble{
+                Words::tr("%1: is larger than %2 MB, which no such file should be").arg(path, QString::number(most >> 20)).toStdString()};
+    }
     if (file.error() != QFileDevice::NoError)
         return Trouble{Words::tr("%1: cannot be read: %2").arg(path, file.errorString()).toStdString()};
-    if (bytes.size() > most)
-        return Trouble{
-            Words::tr("%1: is larger than %2 MB, which no such file should be").arg(path, QString::number(most >> 20)).toStdString()};
     return bytes;
 }
 

@@ -5,6 +5,7 @@
 #include "outcome.h"
 
 #include <QByteArray>
+#include <QFile>
 #include <QString>
 
 namespace rungwright
@@ -12,6 +13,8 @@ namespace rungwright
 
 /// Everything in the file; refused beyond `most` bytes. The message starts with the path and gives the system's reason.
 Outcome<QByteArray> readWhole(const QString& path, qint64 most);
+/// The same from a file that is open already, a pipe for one.
+Outcome<QByteArray> readRest(QFile& file, qint64 most);
 
 /// Replaces the file in one step (QSaveFile: written beside it, synced, renamed). On any error the old file stands, and the message says
 /// so and gives the system's reason. What is there and is no regular file is never replaced.
