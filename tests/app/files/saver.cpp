@@ -36,7 +36,9 @@ int main(int count, char** words)
         return saved.ok() ? 0 : 4;
     }
     const bool bytesOnly = args[2] == QStringLiteral("bytes");
-    const QByteArray versions[]{savedBytes(Kind::scenario, 1, units), savedBytes(Kind::scenario, 2, units)};
+    QByteArray versions[2];
+    for (int i = 0; bytesOnly && i < 2; ++i)
+        versions[i] = savedBytes(Kind::scenario, 1 + i, units);
     for (int turn = 0;; ++turn) {
         const auto saved = bytesOnly ? rungwright::writeWhole(args[3], versions[turn % 2]) : save(kind, 1 + turn % 2, units, args[3]);
         if (!saved.ok()) {

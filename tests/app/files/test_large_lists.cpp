@@ -160,6 +160,26 @@ private slots:
         QCOMPARE(read.rowsTaken, qint64(1));
     }
 
+    void endlessDevice()
+    {
+        const QString trouble = loadUnitList(QStringLiteral("/dev/zero"), {}).fileTrouble;
+        QVERIFY2(trouble.contains(QStringLiteral("larger than 256 MB")), qPrintable(trouble));
+    }
+
+    // The currency is named nowhere although there is a column for it: the look ahead goes through the whole file, and can be cancelled
+    // too.
+    void cancelWhileLookingForTheCurrency()
+    {
+        QByteArray text = kNeededHeader + ",currency\n";
+        for (int i = 0; i < 100'000; ++i)
+            text += "Q,T,U" + QByteArray::number(i) + ",7,vacant,6,\n";
+        int calls = 0;
+        const UnitListResult read = readUnitList(text, QStringLiteral("F"), {}, [&calls](double) { return ++calls < 2; });
+        QCOMPARE(calls, 2);
+        QVERIFY(read.fileTrouble.contains(QStringLiteral("cancelled")));
+        QCOMPARE(readList(text).rowsTaken, qint64(100'000));
+    }
+
     // Bytes thrown at the reader, from a fixed seed: whatever they are, it comes back, and what it takes holds together.
     void damagedLists()
     {

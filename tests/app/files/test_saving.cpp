@@ -81,10 +81,10 @@ private slots:
     {
         QTest::addColumn<QString>("kind");
         QTest::addColumn<int>("units");
-        QTest::newRow("scenario") << "scenario" << 1500;
-        QTest::newRow("sheet") << "sheet" << 1500;
+        QTest::newRow("scenario") << "scenario" << 600;
+        QTest::newRow("sheet") << "sheet" << 600;
         // Nothing but the writing itself, and much of it, so that most kills fall into the middle of a save.
-        QTest::newRow("bytes") << "bytes" << 30'000;
+        QTest::newRow("bytes") << "bytes" << 10'000;
     }
 
     void killedAtRandomMoments()

@@ -188,6 +188,40 @@ private slots:
         QCOMPARE(QDir(folder.path()).entryList(QDir::Files | QDir::Hidden).size(), qsizetype(1));
     }
 
+    void doesNotSaveWhatCouldNotBeOpened()
+    {
+        const QTemporaryDir folder;
+        const QString path = folder.filePath(QStringLiteral("a.rungs.json"));
+        QVERIFY(saveScenario({}, path).ok());
+        const QByteArray old = scenarioToJson({});
+        Dice dice(5);
+        std::set<std::string> taken;
+        Scenario good;
+        good.tiers = {oddTier(dice, taken)};
+        good.tiers[0].tier.units = {{"A", {100}, Status::vacant, false, {}, {}, {}}};
+        good.tiers[0].candidates.clear();
+        good.tiers[0].chosen.reset();
+        const auto refused = [&](const Scenario& scenario) {
+            const Outcome<bool> saved = saveScenario(scenario, path);
+            QFile file(path);
+            return !saved.ok() && saved.trouble().find("not saved") != std::string::npos && file.open(QIODevice::ReadOnly) &&
+                   file.readAll() == old;
+        };
+        Scenario bad = good;
+        bad.title = "not UTF-8: \xE9";
+        QVERIFY(refused(bad));
+        bad = good;
+        bad.tiers[0].tier.units[0].asking = {0};
+        QVERIFY(refused(bad));
+        bad = good;
+        bad.tiers[0].tier.units[0].areaM2 = std::numeric_limits<double>::quiet_NaN();
+        QVERIFY(refused(bad));
+        bad = good;
+        bad.currency.decimals = 3; // XXX has 2.
+        QVERIFY(refused(bad));
+        QVERIFY(saveScenario(good, path).ok());
+    }
+
     void troubleWithTheFile()
     {
         const QTemporaryDir folder;
