@@ -1,5 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // The sample scenarios: they open without a warning, save as the same bytes, are what their maker makes, and show what they promise.
+#include "gap/measure.h"
 #include "sample_files.h"
 #include "scenario_json.h"
 #include "unit_list.h"
@@ -116,6 +117,30 @@ private slots:
         QCOMPARE(count(matters->tier, &Unit::onOffer), 13);
         QCOMPARE(matters->candidates.size(), std::size_t(3));
         QVERIFY(count(findTier(scenario, "Quillmere Mill", "Room 3 m²")->tier, &Unit::onOffer) <= 3); // Nearly full.
+    }
+
+    // The tier to look at first is the one that matters, and the others show what the README says of them.
+    void storageShowsWhatItPromises()
+    {
+        const Scenario scenario = sample(QStringLiteral("quillmere-storage"));
+        const auto measure = [&scenario](const char* site, const char* tier, int candidate = -1) {
+            const TierCase* tierCase = findTier(scenario, site, tier);
+            return measured(tierCase->tier, pricesOf(*tierCase, candidate), tierCase->model, MeasureParts::figuresOnly);
+        };
+        const Measurement matters = measure("Quillmere Quay", "Room 4 m²");
+        QCOMPARE(matters.figures.lowest->minor, std::int64_t(9000));
+        QVERIFY(*matters.figures.skew.moment < -0.3); // Leans left, and not by a hair.
+        for (const TierCase& tierCase : scenario.tiers) {
+            const Measurement other = measure(tierCase.tier.site.c_str(), tierCase.tier.name.c_str());
+            QVERIFY(*other.gap.gapShare <= *matters.gap.gapShare);
+        }
+        const Measurement gone = measure("Quillmere Quay", "Room 9 m²");
+        QCOMPARE(gone.atFloor, std::size_t(0));
+        QVERIFY(*measure("Quillmere Quay", "Locker 1.5 m²").figures.skew.moment > 0.3); // Leans right.
+        QVERIFY(measure("Quillmere Mill", "Room 6 m²").figures.inversions > 5);
+        QCOMPARE(matters.figures.inversions, std::size_t(0));
+        for (int candidate = 0; candidate < 3; ++candidate)
+            QVERIFY(*measure("Quillmere Quay", "Room 4 m²", candidate).gap.gap < *matters.gap.gap);
     }
 
     void berthsAndStudios()
