@@ -44,7 +44,9 @@ Outcome<bool> writeWhole(const QString& path, const QByteArray& bytes)
     if (existed && !there.isFile() && !there.isDir())
         return Trouble{Words::tr("%1: cannot be written: it is not a regular file").arg(path).toStdString()};
     QSaveFile file(path);
-    bool done = file.open(QIODevice::WriteOnly);
+    // Unbuffered: QSaveFile's commit() forgets an error that it meets while emptying the buffer (Qt 6.4), and would put a torn file in
+    // place.
+    bool done = file.open(QIODevice::WriteOnly | QIODevice::Unbuffered);
     // A disk that fills up takes a part without a word; only writing the rest brings the reason.
     for (qsizetype at = 0; done && at < bytes.size();) {
         const qint64 taken = file.write(bytes.constData() + at, bytes.size() - at);
