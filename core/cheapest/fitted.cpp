@@ -171,11 +171,8 @@ double cheapestQuantile(const FittedRange& fit, double n, double p)
         return fit.floor;
     if (p >= 1)
         return fit.highest;
-    // S(x) = (1 - p)^(1/n), through its complement when that is the smaller one.
-    const double logSurvival = std::log1p(-p) / n;
-    const double below = -std::expm1(logSurvival);
-    const double u = below < 0.5 ? boost::math::ibeta_inv(fit.alpha, fit.beta, below, BetaPolicy())
-                                 : boost::math::ibetac_inv(fit.alpha, fit.beta, std::exp(logSurvival), BetaPolicy());
+    // F(x) = 1 - (1 - p)^(1/n).
+    const double u = boost::math::ibeta_inv(fit.alpha, fit.beta, -std::expm1(std::log1p(-p) / n), BetaPolicy());
     return fit.floor + (fit.highest - fit.floor) * u;
 }
 

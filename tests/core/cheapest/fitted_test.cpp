@@ -228,6 +228,9 @@ void FittedTest::quantilesUndoTheDistribution()
             }
     // F = x: the cheapest of n is at most x with chance 1 - (1 - x)^n.
     COMPARE_CLOSE(cheapestQuantile(FittedRange{0, 1, 1, 1}, 4, 0.5), 1 - std::pow(0.5, 0.25), 1e-12);
+    // Far out, 1 - p is what counts: 1 - F = (1 - x)^20.
+    const double p = 1 - 1e-10;
+    COMPARE_CLOSE(cheapestQuantile(FittedRange{0, 1, 1, 20}, 1, p), 1 - std::pow(1 - p, 0.05), 1e-12);
 }
 
 QTEST_APPLESS_MAIN(FittedTest)

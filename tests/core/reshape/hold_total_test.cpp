@@ -254,16 +254,16 @@ void HoldTotalTest::countsOnlyWhatItIsTold()
 
 void HoldTotalTest::exchangesAStepToComeOutEven()
 {
-    // Multiples of 5.00; the second unit's price today, 67.30, is none. It takes 2.70 to get to 70.00 and leaves 2.30, which one more step
-    // of 5.00 by the third unit and the second one's return make good.
-    const Tier tier = tierOf({8000, 6730, 6000}, 5000);
+    // Multiples of 5.00; the second unit's price today, 52.30, is none. By room, 12.70 and 5.00, its share of 5.00 takes it to 55.00, and
+    // the 2.30 left are no step; the third unit's step of 5.00 and the second one's return by 2.70 make them good.
+    const Tier tier = tierOf({8000, 5230, 6000}, 5000);
     PriceRules rules;
     rules.points.step = {500};
-    rules.greatestChange = Price{600};
+    rules.ceiling = Price{6500};
     const auto held = dragAndHold(tier, {0}, -500, rules);
     QCOMPARE(held.out.prices[0].minor, 7500);
     QCOMPARE(held.out.leftOver.minor, 0);
-    QCOMPARE(held.out.prices[1].minor, 6730);
+    QCOMPARE(held.out.prices[1].minor, 5230);
     QCOMPARE(held.out.prices[2].minor, 6500);
 }
 
