@@ -127,12 +127,14 @@ void BenchPage::showTitle()
     }
     const Measurement& m = m_bench.current();
     const QString title = tr("%1 · %2").arg(QString::fromStdString(tc->tier.site), QString::fromStdString(tc->tier.name));
-    m_ui->tierTitle->setText(tr("%1 – %2 on offer of %3 rentable").arg(title).arg(m.onOffer).arg(m.rentable));
+    m_ui->tierTitle->setText(title);
     m_ui->tierTitle->setToolTip(title);
     if (m_bench.candidate() < 0)
-        m_ui->workingOn->setText(tr("the current ladder; a first change makes a candidate"));
+        m_ui->workingOn->setText(tr("%1 of %2 on offer · current ladder").arg(m.onOffer).arg(m.rentable));
     else
-        m_ui->workingOn->setText(tr("working on “%1”").arg(m_bench.candidateName()));
+        m_ui->workingOn->setText(tr("%1 of %2 on offer · working on “%3”").arg(m.onOffer).arg(m.rentable).arg(m_bench.candidateName()));
+    m_ui->workingOn->setToolTip(m_bench.candidate() < 0 ? tr("The current ladder is never altered: a first change makes a candidate.")
+                                                        : QString());
 }
 
 void BenchPage::showModel()

@@ -7,6 +7,8 @@
 
 #include <QPainter>
 
+#include <algorithm>
+
 namespace rungwright
 {
 
@@ -14,7 +16,7 @@ namespace
 {
 
 constexpr int kMargin = 8;
-constexpr int kThumbWidth = 88;
+constexpr int kThumbWidth = 72;
 
 } // namespace
 
@@ -24,7 +26,7 @@ QSize CandidateDelegate::cardSize() const
 {
     const auto* widget = qobject_cast<const QWidget*>(parent());
     const QFontMetrics metrics = widget ? widget->fontMetrics() : QFontMetrics(QFont());
-    return {kThumbWidth + 3 * kMargin + metrics.averageCharWidth() * 22, 3 * metrics.lineSpacing() + 2 * kMargin};
+    return {kThumbWidth + 3 * kMargin + metrics.averageCharWidth() * 19, 3 * metrics.lineSpacing() + 2 * kMargin};
 }
 
 QSize CandidateDelegate::sizeHint(const QStyleOptionViewItem&, const QModelIndex&) const { return cardSize() + QSize(kMargin, 0); }
@@ -46,10 +48,21 @@ void CandidateDelegate::paint(QPainter* painter, const QStyleOptionViewItem& opt
     const int candidate = CandidatesModel::candidateOf(index.row());
     const bool live = candidate == m_bench.candidate();
     const QRect thumb(card.left() + kMargin, card.top() + kMargin, kThumbWidth, card.height() - 2 * kMargin);
-    if (live)
-        paintLadderThumb(*painter, thumb, tc->tier, m_bench.workedPrices(), look);
-    else
-        paintLadderThumb(*painter, thumb, tc->tier, pricesOf(*tc, candidate), look);
+    const std::vector<Price> kept = live ? std::vector<Price>() : pricesOf(*tc, candidate);
+    ThumbLadder ladder;
+    ladder.units = tc->tier.units;
+    ladder.prices = live ? m_bench.workedPrices() : std::span<const Price>(kept);
+    ladder.advertisedFloor = tc->tier.advertisedFloor;
+    ladder.expectedCheapest = index.data(CandidatesModel::expectedRole).isValid()
+                                  ? std::optional(index.data(CandidatesModel::expectedRole).toDouble())
+                                  : std::nullopt;
+    // One scale for all cards, that of the current ladder: they are there to be compared.
+    if (const auto& low = m_bench.current().figures.lowest) {
+        ladder.low = static_cast<double>(std::min(*low, ladder.advertisedFloor).minor);
+        for (const Price price : m_bench.currentPrices())
+            ladder.high = std::max(ladder.high.value_or(0.0), static_cast<double>(price.minor));
+    }
+    paintLadderThumb(*painter, thumb, ladder, look);
 
     const QRect words(thumb.right() + kMargin, thumb.top(), card.right() - thumb.right() - 2 * kMargin, thumb.height());
     const int line = option.fontMetrics.lineSpacing();

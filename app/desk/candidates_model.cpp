@@ -73,6 +73,8 @@ QVariant CandidatesModel::data(const QModelIndex& index, int role) const
         return tc->chosen && *tc->chosen == candidate && candidate >= 0;
     case currentRole:
         return candidate < 0;
+    case expectedRole:
+        return m.gap.expectedCheapest ? QVariant(*m.gap.expectedCheapest) : QVariant();
     case Qt::ToolTipRole:
     case Qt::AccessibleTextRole: {
         const QString base = data(index, Qt::DisplayRole).toString() + QStringLiteral(", ") + data(index, gapTextRole).toString();

@@ -20,6 +20,7 @@ public:
         totalTextRole,              ///< "total −6.00", empty for the current ladder
         chosenRole,                 ///< bool
         currentRole,                ///< bool: the current ladder
+        expectedRole,               ///< expected cheapest in minor units; invalid when undefined
     };
 
     explicit CandidatesModel(Workbench& bench, QObject* parent = nullptr);

@@ -31,7 +31,7 @@ protected:
         option->palette.setColor(QPalette::Text, ink);
         option->palette.setColor(QPalette::HighlightedText, ink);
         if (index.column() == FiguresModel::nameColumn)
-            option->text.prepend(QString(2 * indent, QChar(0x2003)));
+            option->text.prepend(QString(indent, QChar(0x2003)));
     }
 };
 
@@ -49,7 +49,9 @@ FiguresPanel::FiguresPanel(Workbench& bench, QWidget* parent) : QWidget(parent),
     header->setSectionResizeMode(FiguresModel::nameColumn, QHeaderView::Stretch);
     for (const int column : {FiguresModel::currentColumn, FiguresModel::workedColumn, FiguresModel::changeColumn}) {
         header->setSectionResizeMode(column, QHeaderView::Interactive);
-        header->resizeSection(column, fontMetrics().horizontalAdvance(QStringLiteral("+8,888.88")) + 10);
+        const QString heading = m_model.headerData(column, Qt::Horizontal, Qt::DisplayRole).toString();
+        const int figure = fontMetrics().horizontalAdvance(QStringLiteral("8,888.88")) + 12;
+        header->resizeSection(column, qMax(figure, fontMetrics().horizontalAdvance(heading) + 14));
     }
     // Room for the longest explanation, so that the table does not jump when another figure is chosen.
     m_ui->figureExplanation->setMinimumHeight(8 * fontMetrics().height());

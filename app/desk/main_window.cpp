@@ -123,6 +123,9 @@ void MainWindow::buildStatus()
     m_modelInUse = new QLabel;
     m_modelInUse->setObjectName(QStringLiteral("modelInUse"));
     m_modelInUse->setAccessibleName(tr("Availability model in use"));
+    for (QLabel* label : {m_lastAction, m_saveState, m_modelInUse})
+        label->setContentsMargins(8, 0, 8, 0);
+    statusBar()->setSizeGripEnabled(false);
     statusBar()->addWidget(m_lastAction, 1);
     statusBar()->addPermanentWidget(m_modelInUse);
     statusBar()->addPermanentWidget(m_saveState);
@@ -252,7 +255,7 @@ void MainWindow::resetLayout()
     const bool narrow = width() < kNarrow;
     if (narrow)
         m_worklist->useNarrowColumns();
-    resizeDocks({m_worklistDock, m_figuresDock}, narrow ? QList<int>{330, 270} : QList<int>{410, 290}, Qt::Horizontal);
+    resizeDocks({m_worklistDock, m_figuresDock}, narrow ? QList<int>{310, 320} : QList<int>{404, 340}, Qt::Horizontal);
 }
 
 void MainWindow::restoreLayout()

@@ -6,6 +6,7 @@
 #include "worklist_model.h"
 
 #include <QPainter>
+#include <QTableView>
 
 namespace rungwright
 {
@@ -13,9 +14,20 @@ namespace rungwright
 namespace
 {
 
-constexpr int kMargin = 8;
+constexpr int kMargin = 6;
 
 QString elided(const QFontMetrics& metrics, const QString& text, int width) { return metrics.elidedText(text, Qt::ElideRight, width); }
+
+/// Where the row's second line runs: below the tier's name and the figures behind it, up to the gap's bar.
+QRect secondLineSpan(const QStyleOptionViewItem& option, const QModelIndex& index)
+{
+    const auto* table = qobject_cast<const QTableView*>(option.widget);
+    if (!table)
+        return option.rect;
+    const QRect first = table->visualRect(index.siblingAtColumn(WorklistModel::tierColumn));
+    const QRect end = table->visualRect(index.siblingAtColumn(WorklistModel::gapColumn));
+    return end.left() > first.left() ? QRect(first.left(), first.top(), end.left() - first.left(), first.height()) : first;
+}
 
 } // namespace
 
@@ -37,14 +49,19 @@ void WorklistDelegate::paint(QPainter* painter, const QStyleOptionViewItem& opti
     QFont bold = option.font;
     bold.setWeight(QFont::DemiBold);
 
+    // The second line is one text over several cells: each cell draws its part of it.
+    if (index.column() <= WorklistModel::cheapestColumn) {
+        const QRect span = secondLineSpan(option, index).adjusted(kMargin, 3, -kMargin, -4);
+        const QRect line(span.left(), lower.top(), span.width(), lower.height());
+        painter->setFont(option.font);
+        painter->setPen(look.faintInk);
+        const QString second = index.siblingAtColumn(WorklistModel::tierColumn).data(WorklistModel::secondLineRole).toString();
+        painter->drawText(line, Qt::AlignLeft | Qt::AlignVCenter, elided(option.fontMetrics, second, line.width()));
+    }
     if (index.column() == WorklistModel::tierColumn) {
         painter->setFont(bold);
         painter->setPen(look.ink);
         painter->drawText(upper, Qt::AlignLeft | Qt::AlignVCenter, elided(QFontMetrics(bold), text, inner.width()));
-        painter->setFont(option.font);
-        painter->setPen(look.faintInk);
-        const QString second = index.data(WorklistModel::secondLineRole).toString();
-        painter->drawText(lower, Qt::AlignLeft | Qt::AlignVCenter, elided(option.fontMetrics, second, inner.width()));
         if (selected) // the row's mark does not rest on colour alone
             painter->fillRect(QRect(option.rect.left(), option.rect.top(), 3, option.rect.height()), look.focus);
     } else if (index.column() == WorklistModel::gapColumn) {
@@ -63,7 +80,7 @@ void WorklistDelegate::paint(QPainter* painter, const QStyleOptionViewItem& opti
         painter->setFont(option.font);
         painter->setPen(look.ink);
         const auto alignment = Qt::Alignment(index.data(Qt::TextAlignmentRole).toInt());
-        painter->drawText(inner, static_cast<int>(alignment), elided(option.fontMetrics, text, inner.width()));
+        painter->drawText(upper, static_cast<int>(alignment), elided(option.fontMetrics, text, inner.width()));
     }
     painter->restore();
 }

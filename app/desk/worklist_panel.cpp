@@ -52,12 +52,15 @@ WorklistPanel::WorklistPanel(Workbench& bench, QWidget* parent) :
     header->setSectionResizeMode(QHeaderView::Interactive);
     header->setSectionResizeMode(WorklistModel::tierColumn, QHeaderView::Stretch);
     header->setMinimumSectionSize(fontMetrics().averageCharWidth() * 5);
-    const auto wide = [&](const QString& sample) { return fontMetrics().horizontalAdvance(sample) + 18; };
-    header->resizeSection(WorklistModel::onOfferColumn, qMax(wide(tr("On offer")), wide(QStringLiteral("88 / 88"))));
-    header->resizeSection(WorklistModel::floorColumn, wide(QStringLiteral("188.00")));
-    header->resizeSection(WorklistModel::cheapestColumn, qMax(wide(tr("Cheapest")), wide(QStringLiteral("188.00"))));
-    header->resizeSection(WorklistModel::gapColumn, wide(QStringLiteral("88.88  88 %")));
-    header->resizeSection(WorklistModel::leanColumn, wide(QStringLiteral("−0.88")) + 6);
+    // As wide as usual figures need and no wider: what is over belongs to the tier's name.
+    const auto wide = [&](const QString& heading, const QString& figure) {
+        return qMax(fontMetrics().horizontalAdvance(heading) + 12, fontMetrics().horizontalAdvance(figure) + 14);
+    };
+    header->resizeSection(WorklistModel::onOfferColumn, wide(tr("On offer"), QStringLiteral("88 / 88")));
+    header->resizeSection(WorklistModel::floorColumn, wide(tr("Floor"), QStringLiteral("188.00")));
+    header->resizeSection(WorklistModel::cheapestColumn, wide(tr("Cheapest"), QStringLiteral("188.00")));
+    header->resizeSection(WorklistModel::gapColumn, wide(tr("Gap") + QStringLiteral("   ▾"), QStringLiteral("888.88 ")));
+    header->resizeSection(WorklistModel::leanColumn, wide(tr("Lean"), QStringLiteral("−0.88")));
     header->setContextMenuPolicy(Qt::CustomContextMenu);
     // The tier column tells site and flags on its second line; as columns of their own they serve for sorting.
     table->setColumnHidden(WorklistModel::siteColumn, true);

@@ -36,7 +36,7 @@ const std::array kRows{
     FigureRow{"gap_share", "Gap share", Kind::share, 0, [](M m) { return m.gap.gapShare; }, "gap ÷ advertised floor", kShare, kOwn, -1},
     FigureRow{"gap_median", "Gap, median", Kind::money, 0, [](M m) { return m.gap.gapMedian; },
               "least price whose cumulated chance reaches 50 %, − advertised floor", kMoney, kOwn, -1},
-    FigureRow{"gap_p90", "Gap, 90th percentile", Kind::money, 0, [](M m) { return m.gap.gapP90; },
+    FigureRow{"gap_p90", "Gap, 90th perc.", Kind::money, 0, [](M m) { return m.gap.gapP90; },
               "least price whose cumulated chance reaches 90 %, − advertised floor", kMoney, kOwn, -1},
     FigureRow{"chance_floor_met", "Floor met", Kind::share, 0, [](M m) { return m.gap.chanceFloorMet; },
               "chance that the cheapest unit found costs no more than the advertised floor", kShare, kOwn, +1},
@@ -64,7 +64,7 @@ const std::array kRows{
               0},
     FigureRow{"median", "Median on offer", Kind::money, 0, [](M m) { return m.figures.median; },
               "middle price, or the mean of the middle two", kMoney, kUsual, 0},
-    FigureRow{"mean_standing", "Standing of the mean", Kind::share, 0, [](M m) { return m.figures.meanStanding; },
+    FigureRow{"mean_standing", "Mean’s standing", Kind::share, 0, [](M m) { return m.figures.meanStanding; },
               "(mean − floor) ÷ (highest − floor)", kShare, kOwn, 0},
     FigureRow{"asking_total", "Asking total", Kind::money, 0, total, "sum of the asking prices on offer", kMoney, kUsual, 0},
     FigureRow{"inversions", "Inversions", Kind::count, 0, [](M m) { return Value(static_cast<double>(m.figures.inversions)); },
@@ -98,9 +98,11 @@ QString figureChangeText(const FigureRow& row, std::optional<double> from, std::
     if (!from || !to)
         return {};
     const double change = *to - *from;
-    const QString text = figureText(row, change, currency, locale);
+    QString text = figureText(row, change, currency, locale);
     if (text == figureText(row, 0.0, currency, locale))
         return {};
+    if (row.kind == Kind::share) // a change of a share is in percentage points, not in percent of it
+        text.replace(QLatin1Char('%'), QStringLiteral("pp"));
     return change > 0 ? QLatin1Char('+') + text : text;
 }
 

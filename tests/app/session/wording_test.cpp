@@ -149,6 +149,9 @@ void WordingTest::changesCarryTheirSign()
     QCOMPARE(figureChangeText(gap, 500.0, 750.0, kEuro, kEnglish), QStringLiteral("+2.50"));
     QCOMPARE(figureChangeText(gap, 750.0, 500.0, kEuro, kEnglish), QChar(0x2212) + QStringLiteral("2.50"));
     QCOMPARE(figureChangeText(gap, 750.0, 750.2, kEuro, kEnglish), QString());
+    const FigureRow& met = figureRows()[7];
+    QCOMPARE(QLatin1String(met.key), QLatin1String("chance_floor_met"));
+    QCOMPARE(figureChangeText(met, 0.0, 0.65, kEuro, kEnglish), QStringLiteral("+65%1pp").arg(QChar(0x00A0)));
     QCOMPARE(figureChangeText(gap, {}, 750.0, kEuro, kEnglish), QString());
 }
 
