@@ -1,0 +1,77 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+// Two to six ladders of the tier on the bench beside each other: pictures on one price axis, figures, the best of each marked.
+#pragma once
+
+#include "ladder_pick.h"
+#include "side_by_side_model.h"
+#include "workbench.h"
+
+#include <QWidget>
+
+#include <map>
+#include <memory>
+
+namespace Ui
+{
+class SideBySidePage;
+}
+
+namespace rungwright
+{
+
+class Questions;
+
+class SideBySidePage : public QWidget
+{
+    Q_OBJECT
+public:
+    /// Both outlive the page.
+    SideBySidePage(Workbench& bench, Questions& questions, QWidget* parent = nullptr);
+    ~SideBySidePage() override;
+
+    /// Candidates in the order of the columns, -1 = the current ladder; empty while there is nothing to compare.
+    std::vector<int> shownCandidates() const;
+    /// The candidate of the selected column; -1 for the current ladder, and while there is nothing to compare.
+    int selectedCandidate() const;
+
+signals:
+    /// The user settled on a candidate; the document knows already.
+    void chosen(int candidate);
+    /// A sentence for the status bar.
+    void told(const QString& sentence);
+
+protected:
+    void showEvent(QShowEvent* event) override;
+    void resizeEvent(QResizeEvent* event) override;
+    void changeEvent(QEvent* event) override;
+
+private:
+    void prepareTable();
+    void prepareExport();
+    void prepareMoves();
+    void dress();
+    void refresh();
+    void fillPickMenu(const QStringList& names);
+    void pickLadder(int candidate, bool on);
+    void showLadders(int selected);
+    void straightenHeader();
+    void showInPlot();
+    void alignPlot();
+    void showEmpty();
+    void showTitle();
+    void showChoice();
+    void adoptHeaderOrder();
+    void moveSelected(int by);
+    void choose();
+    LadderPick& pick() { return m_picks[m_bench.tier()]; }
+    QStringList candidateNames() const;
+
+    Workbench& m_bench;
+    Questions& m_questions;
+    SideBySideModel m_model;
+    std::map<int, LadderPick> m_picks; ///< By tier.
+    bool m_stale = true;               ///< Something changed while the page was hidden.
+    std::unique_ptr<Ui::SideBySidePage> m_ui;
+};
+
+} // namespace rungwright
