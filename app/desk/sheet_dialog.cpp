@@ -94,18 +94,24 @@ void SheetDialog::showSummary(const TierCase& tierCase, const std::vector<Price>
     const Tier& tier = tierCase.tier;
     const Measurement today = measured(tier, askingPrices(tier.units), tierCase.model, MeasureParts::figuresOnly);
     const Measurement sheet = measured(tier, prices, tierCase.model, MeasureParts::figuresOnly);
-    const auto fill = [&](const char* key, QLabel* was, QLabel* is, QLabel* change) {
-        const FigureRow& row = figure(key);
-        was->setText(figureText(row, row.value(today), m_currency));
-        is->setText(figureText(row, row.value(sheet), m_currency));
-        const QString by = figureChangeText(row, row.value(today), row.value(sheet), m_currency);
-        change->setText(by.isEmpty() ? tr("no change") : by);
+    // A figure alone says nothing to those who hear it without its row and column.
+    const auto say = [](QLabel* label, const QString& row, const QString& column, const QString& text) {
+        label->setText(text);
+        label->setAccessibleName(tr("%1, %2: %3").arg(row, column, text));
     };
-    fill("asking_total", m_ui->totalToday, m_ui->totalSheet, m_ui->totalChange);
-    fill("gap", m_ui->gapToday, m_ui->gapSheet, m_ui->gapChange);
-    fill("gap_share", m_ui->shareToday, m_ui->shareSheet, m_ui->shareChange);
+    const auto fill = [&](const char* key, const QLabel* name, QLabel* was, QLabel* is, QLabel* change) {
+        const FigureRow& row = figure(key);
+        say(was, name->text(), m_ui->todayHeading->text(), figureText(row, row.value(today), m_currency));
+        say(is, name->text(), m_ui->sheetHeading->text(), figureText(row, row.value(sheet), m_currency));
+        const QString by = figureChangeText(row, row.value(today), row.value(sheet), m_currency);
+        say(change, name->text(), m_ui->changeHeading->text(), by.isEmpty() ? tr("no change") : by);
+    };
+    fill("asking_total", m_ui->totalLabel, m_ui->totalToday, m_ui->totalSheet, m_ui->totalChange);
+    fill("gap", m_ui->gapLabel, m_ui->gapToday, m_ui->gapSheet, m_ui->gapChange);
+    fill("gap_share", m_ui->shareLabel, m_ui->shareToday, m_ui->shareSheet, m_ui->shareChange);
     const LadderChange change = ladderChange(tier.units, prices);
-    m_ui->unitsChanged->setText(
+    say(m_ui->unitsChanged, m_ui->unitsLabel->text(), m_ui->changeHeading->text(),
+
         tr("%1 of %2").arg(numberText(static_cast<double>(change.unitsChanged), 0), numberText(static_cast<double>(tier.units.size()), 0)));
 
     QStringList remarks = sheetRemarks(tier, prices, sheet, m_rules, m_currency);
