@@ -99,6 +99,7 @@ private slots:
         QCOMPARE(labelText(dialog, "gapChange"), QStringLiteral("−7.50"));
         QCOMPARE(labelText(dialog, "shareToday"), QStringLiteral("18\u00a0%"));
         QCOMPARE(labelText(dialog, "shareSheet"), QStringLiteral("7.1\u00a0%"));
+        QCOMPARE(child<QLabel>(dialog, "gapSheet").accessibleName(), QStringLiteral("Gap, On the sheet: 5.00"));
         QVERIFY(child<QLabel>(dialog, "remarksLabel").isHidden());
         QCOMPARE(labelText(dialog, "cautionLabel"), cautionText());
         QVERIFY(child<QLabel>(dialog, "cautionLabel").isVisible());

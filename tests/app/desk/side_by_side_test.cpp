@@ -1,27 +1,28 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-// Ladders side by side: figures, the best of each, order, choice, and the ways out.
+// The page of ladders side by side: what is picked, their order, the choice, and the ways out.
 #include "caution.h"
 #include "compared_tier.h"
-#include "csv_records.h"
+#include "read_table.h"
 #include "side_by_side_page.h"
 #include "side_by_side_plot.h"
 
-#include <QAbstractItemModelTester>
-#include <QBuffer>
 #include <QClipboard>
 #include <QGuiApplication>
 #include <QHeaderView>
-#include <QImageReader>
+#include <QImage>
 #include <QLabel>
+#include <QMap>
 #include <QMenu>
 #include <QPushButton>
 #include <QRadioButton>
-#include <QRandomGenerator>
 #include <QSignalSpy>
 #include <QStackedWidget>
 #include <QTableView>
 #include <QTemporaryDir>
 #include <QTest>
+#include <QTimer>
+
+#include <functional>
 
 using namespace rungwright;
 
@@ -29,36 +30,6 @@ namespace
 {
 
 using Ladders = std::vector<int>;
-
-ComparedLadder compared(const Scenario& scenario, int candidate)
-{
-    const TierCase& tierCase = scenario.tiers.front();
-    ComparedLadder ladder;
-    ladder.candidate = candidate;
-    ladder.name = candidate < 0 ? QStringLiteral("current") : QString::fromStdString(tierCase.candidates[std::size_t(candidate)].name);
-    ladder.prices = pricesOf(tierCase, candidate);
-    ladder.measurement = measured(tierCase.tier, ladder.prices, tierCase.model);
-    ladder.change = ladderChange(tierCase.tier.units, ladder.prices);
-    return ladder;
-}
-
-std::vector<QStringList> readTable(const QByteArray& csv)
-{
-    std::vector<QStringList> lines;
-    QBuffer buffer;
-    buffer.setData(csv);
-    buffer.open(QIODevice::ReadOnly);
-    const CsvEnd end = readCsv(buffer, QStringLiteral("table"), [&](qint64, std::span<const std::string_view> cells) {
-        QStringList line;
-        for (const std::string_view cell : cells)
-            line << QString::fromUtf8(cell.data(), qsizetype(cell.size()));
-        lines.push_back(line);
-        return true;
-    });
-    if (!end.trouble.isEmpty())
-        qFatal("%s", qPrintable(end.trouble));
-    return lines;
-}
 
 } // namespace
 
@@ -68,119 +39,260 @@ class SideBySideTest : public QObject
 
 private slots:
     void initTestCase() { QLocale::setDefault(QLocale(QLocale::English, QLocale::UnitedKingdom)); }
-
-    // Model ----------------------------------------------------------------------------------------------------------
-
-    void theFiguresStandSideBySide()
+    void init()
     {
-        const Scenario scenario = comparedScenario();
-        SideBySideModel model;
-        const QAbstractItemModelTester tester(&model, QAbstractItemModelTester::FailureReportingMode::QtTest);
-        model.show({compared(scenario, -1), compared(scenario, 0), compared(scenario, 1)}, scenario.currency);
-        QCOMPARE(model.columnCount(), 3);
-        const auto texts = [&](const char* key) {
-            QStringList row;
-            for (int column = 0; column < model.columnCount(); ++column)
-                row << model.index(model.rowOf(key), column).data().toString();
-            return row;
+        m_document = std::make_unique<Document>();
+        m_bench = std::make_unique<Workbench>(*m_document);
+        m_answers = PathAnswers();
+        m_page = std::make_unique<SideBySidePage>(*m_bench, m_answers);
+        m_page->resize(900, 640);
+        m_page->show();
+        QVERIFY(QTest::qWaitForWindowActive(m_page.get()));
+    }
+    void cleanup()
+    {
+        m_page.reset();
+        m_bench.reset();
+        m_document.reset();
+    }
+
+    void withNothingToCompareThePageSaysWhatToDo()
+    {
+        QCOMPARE(child<QStackedWidget>("stack").currentWidget()->objectName(), QStringLiteral("emptyPage"));
+        QVERIFY(child<QLabel>("emptyLabel").text().contains(QStringLiteral("import a unit list")));
+        Scenario scenario = comparedScenario();
+        scenario.tiers.front().candidates.clear();
+        m_document->begin(scenario, {}, true);
+        QVERIFY(child<QLabel>("emptyLabel").text().contains(QStringLiteral("Drag a rung on the bench to make a candidate")));
+        m_bench->select({0});
+        m_bench->nudge(-1); // the first edit of the current ladder makes a candidate
+        QCOMPARE(child<QStackedWidget>("stack").currentWidget()->objectName(), QStringLiteral("comparePage"));
+        QCOMPARE(m_page->shownCandidates(), (Ladders{-1, 0}));
+        QCOMPARE(m_page->selectedCandidate(), 0);
+        m_document->undoStack().undo();
+        QCOMPARE(child<QStackedWidget>("stack").currentWidget()->objectName(), QStringLiteral("emptyPage"));
+    }
+
+    void whatHappensWhileThePageIsHiddenShowsLater()
+    {
+        m_document->begin(comparedScenario(), {}, true);
+        m_page->hide();
+        m_document->discardCandidate(0, 1);
+        m_page->show();
+        QCOMPARE(m_page->shownCandidates(), (Ladders{-1, 0, 1}));
+        QCOMPARE(heading(2), QStringLiteral("Same bottom"));
+    }
+
+    void columnsAreDraggedByTheirHeading()
+    {
+        m_document->begin(comparedScenario(), {}, true);
+        QCOMPARE(m_page->shownCandidates(), (Ladders{-1, 0, 1, 2}));
+        QHeaderView& header = *table().horizontalHeader();
+        const auto middle = [&](int column) {
+            return QPoint(header.sectionViewportPosition(column) + header.sectionSize(column) / 2, header.height() / 2);
         };
-        // Worked out in compared_tier.h.
-        QCOMPARE(texts("gap"), (QStringList{QStringLiteral("12.50"), QStringLiteral("★ best  5.00"), QStringLiteral("12.75")}));
-        QCOMPARE(texts("shape_part"), (QStringList{QStringLiteral("2.50"), QStringLiteral("5.00"), QStringLiteral("★ best  0.75")}));
-        QCOMPARE(texts("chance_floor_met"), (QStringList{QStringLiteral("0.0\u00a0%"), QStringLiteral("★ best  75\u00a0%"), QStringLiteral("0.0\u00a0%")}));
-        QCOMPARE(texts("total_change"), (QStringList{QStringLiteral("0.00"), QStringLiteral("−10.00"), QStringLiteral("−3.00")}));
-        QCOMPARE(texts("units_changed"), (QStringList{QStringLiteral("0"), QStringLiteral("1"), QStringLiteral("2")}));
-        // Steeper: +5.00 of 80.00 is 6.25 %, -8.00 of 90.00 is -8.9 %.
-        QCOMPARE(texts("greatest_change"), (QStringList{QStringLiteral("–"), QStringLiteral("−10.00"), QStringLiteral("−8.00")}));
-        QCOMPARE(texts("greatest_change_share"), (QStringList{QStringLiteral("–"), QStringLiteral("−13\u00a0%"), QStringLiteral("−8.9\u00a0%")}));
-        // Both without an inversion are best; the asking total has no best.
-        QCOMPARE(texts("inversions"), (QStringList{QStringLiteral("★ best  0"), QStringLiteral("★ best  0"), QStringLiteral("1")}));
-        QCOMPARE(texts("asking_total"), (QStringList{QStringLiteral("170.00"), QStringLiteral("160.00"), QStringLiteral("167.00")}));
-        QCOMPARE(model.headerData(0, Qt::Vertical).toString(), QStringLiteral("Gap"));
-        QVERIFY(model.index(model.rowOf("gap"), 1).data(Qt::AccessibleTextRole).toString().endsWith(QStringLiteral("Lower end: 5.00, best")));
+        const QPoint from = middle(0);
+        const QPoint to = middle(2) + QPoint(10, 0);
+        QTest::mousePress(header.viewport(), Qt::LeftButton, {}, from);
+        for (int i = 1; i <= 10; ++i)
+            QTest::mouseMove(header.viewport(), from + (to - from) * i / 10);
+        QTest::mouseRelease(header.viewport(), Qt::LeftButton, {}, to);
+        QTRY_COMPARE(m_page->shownCandidates(), (Ladders{0, 1, -1, 2}));
+        QCOMPARE(header.visualIndex(0), 0); // the model has the order, and the header adds none of its own
+        QCOMPARE(heading(2), QStringLiteral("current"));
+        QCOMPARE(plotOrder(), (QStringList{QStringLiteral("Lower end"), QStringLiteral("Steeper"), QStringLiteral("current"),
+                                           QStringLiteral("Same bottom")}));
+        // The order lasts.
+        m_bench->workOn(1);
+        QCOMPARE(m_page->shownCandidates(), (Ladders{0, 1, -1, 2}));
     }
 
-    void everyFigureOfTheBenchIsThere()
+    void columnsMoveByKeysAndTakeTheSelectionAlong()
     {
-        SideBySideModel model;
-        for (const FigureRow& figure : figureRows())
-            QVERIFY2(model.rowOf(figure.key) >= 0, figure.key);
-        QCOMPARE(model.rowCount(), static_cast<int>(figureRows().size()) + 4);
+        m_document->begin(comparedScenario(), {}, true);
+        table().setFocus();
+        table().setCurrentIndex(table().model()->index(3, 1));
+        QCOMPARE(m_page->selectedCandidate(), 0);
+        QTest::keyClick(&table(), Qt::Key_Right, Qt::AltModifier);
+        QCOMPARE(m_page->shownCandidates(), (Ladders{-1, 1, 0, 2}));
+        QCOMPARE(m_page->selectedCandidate(), 0);
+        QCOMPARE(table().currentIndex(), table().model()->index(3, 2));
+        for (int i = 0; i < 4; ++i) // two steps, then the edge
+            QTest::keyClick(&table(), Qt::Key_Left, Qt::AltModifier);
+        QCOMPARE(m_page->shownCandidates(), (Ladders{0, -1, 1, 2}));
+        QCOMPARE(plotOrder().first(), QStringLiteral("Lower end"));
     }
 
-    void laddersThatShowTheSameShareTheMark()
+    void laddersArePickedFromTheKeyboard()
     {
-        const Scenario scenario = comparedScenario();
-        SideBySideModel model;
-        model.show({compared(scenario, 0), compared(scenario, 2)}, scenario.currency); // alike on offer
-        for (int row = 0; row < model.rowCount(); ++row)
-            for (int column = 0; column < 2; ++column)
-                QVERIFY(!model.index(row, column).data(SideBySideModel::bestRole).toBool()); // all equal: no mark
-        model.show({compared(scenario, 0), compared(scenario, -1), compared(scenario, 2)}, scenario.currency);
-        const int gap = model.rowOf("gap");
-        QVERIFY(model.index(gap, 0).data(SideBySideModel::bestRole).toBool());
-        QVERIFY(!model.index(gap, 1).data(SideBySideModel::bestRole).toBool());
-        QVERIFY(model.index(gap, 2).data(SideBySideModel::bestRole).toBool());
-    }
-
-    /// Against a plain reading of the rule, on random ladders: marked are those that show the best of the defined figures, unless all do.
-    void theBestIsMarkedOnRandomLadders()
-    {
-        QRandomGenerator random(7);
-        for (int round = 0; round < 60; ++round) {
-            Scenario scenario = comparedScenario();
-            TierCase& tierCase = scenario.tiers.front();
-            if (round % 5 == 0)
-                tierCase.tier.units[0].status = tierCase.tier.units[1].status = Status::occupied; // undefined figures
-            for (Candidate& candidate : tierCase.candidates)
-                for (Price& price : candidate.prices)
-                    price = Price{6900 + 50 * random.bounded(6)};
-            SideBySideModel model;
-            model.show({compared(scenario, -1), compared(scenario, 0), compared(scenario, 1), compared(scenario, 2)}, scenario.currency);
-            for (const FigureRow& figure : figureRows()) {
-                std::vector<std::optional<double>> values;
-                for (const ComparedLadder& ladder : model.ladders())
-                    values.push_back(figure.value(ladder.measurement));
-                std::optional<double> best;
-                for (const auto& value : values)
-                    if (value && (!best || figure.better * *value > figure.better * *best))
-                        best = value;
-                QList<bool> wanted;
-                qsizetype defined = 0;
-                for (const auto& value : values) {
-                    defined += value ? 1 : 0;
-                    wanted << (figure.better != 0 && value && figureText(figure, value, scenario.currency) == figureText(figure, best, scenario.currency));
-                }
-                if (wanted.count(true) == defined)
-                    wanted.fill(false);
-                for (int column = 0; column < 4; ++column)
-                    QVERIFY2(model.index(model.rowOf(figure.key), column).data(SideBySideModel::bestRole).toBool() == wanted[column], figure.key);
+        Scenario scenario = comparedScenario();
+        for (int i = 0; i < 5; ++i) {
+            Candidate more = scenario.tiers.front().candidates[0];
+            more.name = "More " + std::to_string(i);
+            scenario.tiers.front().candidates.push_back(more);
+        }
+        m_document->begin(scenario, {}, true);
+        auto& button = child<QPushButton>("compareButton");
+        QCOMPARE(button.text().remove(QLatin1Char('&')), QStringLiteral("Compare 4 of 9"));
+        QMenu& menu = *button.menu();
+        // The menu runs its own event loop until it is closed: the keys are pressed from inside it.
+        const auto withMenu = [&](const std::function<void()>& press) {
+            QTimer::singleShot(0, this, [&] {
+                press();
+                QVERIFY(menu.isVisible()); // ticking leaves it open
+                QTest::keyClick(&menu, Qt::Key_Escape);
+            });
+            button.setFocus();
+            QTest::keyClick(&button, Qt::Key_Space);
+            QVERIFY(!menu.isVisible());
+        };
+        const auto goTo = [&](int place) {
+            menu.setActiveAction(menu.actions().constFirst());
+            for (int i = 0; i < place; ++i)
+                QTest::keyClick(&menu, Qt::Key_Down);
+        };
+        withMenu([&] {
+            goTo(0);
+            QTest::keyClick(&menu, Qt::Key_Space); // the current ladder goes
+            goTo(1);
+            QTest::keyClick(&menu, Qt::Key_Return); // and Lower end
+        });
+        QCOMPARE(m_page->shownCandidates(), (Ladders{1, 2}));
+        // Two are the least: what is ticked stays ticked.
+        QVERIFY(!menu.actions().at(2)->isEnabled() && !menu.actions().at(3)->isEnabled());
+        withMenu([&] {
+            for (const int place : {4, 5, 6, 7, 8}) {
+                const QRect entry = menu.actionGeometry(menu.actions().at(place));
+                QTest::mouseClick(&menu, Qt::LeftButton, {}, entry.center());
             }
+        });
+        QCOMPARE(m_page->shownCandidates(), (Ladders{1, 2, 3, 4, 5, 6})); // six are the most
+        QVERIFY(!menu.actions().at(8)->isEnabled());
+        QCOMPARE(button.text().remove(QLatin1Char('&')), QStringLiteral("Compare 6 of 9"));
+    }
+
+    void laddersAreLaidOverEachOther()
+    {
+        m_document->begin(comparedScenario(), {}, true);
+        auto& plot = child<SideBySidePlot>("sideBySidePlot");
+        QTest::keyClick(m_page.get(), Qt::Key_L, Qt::AltModifier);  // the button's mnemonic
+        QTRY_VERIFY(child<QRadioButton>("overButton").isChecked()); // a mnemonic presses the button for a moment
+        QCOMPARE(plot.arrangement(), SideBySidePlot::Arrangement::overlay);
+        QTest::mouseClick(&child<QRadioButton>("columnsButton"), Qt::LeftButton, {}, QPoint(8, 8));
+        QCOMPARE(plot.arrangement(), SideBySidePlot::Arrangement::columns);
+        // Each picture stands over its column.
+        QTest::qWait(50);
+        for (int column = 0; column < 4; ++column) {
+            const int left = table().viewport()->mapTo(m_page.get(), QPoint(table().columnViewportPosition(column), 0)).x();
+            const int picture = plot.mapTo(m_page.get(), plot.column(std::size_t(column)).topLeft().toPoint()).x();
+            QVERIFY2(std::abs(left - picture) <= 3, qPrintable(QStringLiteral("%1 %2").arg(left).arg(picture))); // whole pixels, shared out
         }
     }
 
-    void theTableForAFileIsPlainAndGuarded()
+    void aCandidateIsChosen()
     {
-        Scenario scenario = comparedScenario();
-        scenario.tiers.front().candidates[0].name = "=SUM(A1), or \"so\"";
-        SideBySideModel model;
-        model.show({compared(scenario, -1), compared(scenario, 0)}, scenario.currency);
-        QLocale::setDefault(QLocale(QLocale::German)); // files know no locale
-        const QByteArray csv = model.csv();
-        QLocale::setDefault(QLocale(QLocale::English, QLocale::UnitedKingdom));
-        QVERIFY(csv.endsWith("\r\n") && csv.count("\r\n") == csv.count('\n'));
-        const auto lines = readTable(csv);
-        const QString guardedName = QStringLiteral("'=SUM(A1), or \"so\"");
-        QCOMPARE(lines[0], (QStringList{QStringLiteral("key"), QStringLiteral("figure"), QStringLiteral("unit"), QStringLiteral("current"), guardedName, QStringLiteral("best")}));
-        QCOMPARE(lines.size(), std::size_t(model.rowCount()) + 1);
-        const auto line = [&](const char* key) { return lines[std::size_t(model.rowOf(key)) + 1].mid(2); };
-        QCOMPARE(line("gap"), (QStringList{QStringLiteral("EUR"), QStringLiteral("12.50"), QStringLiteral("5.00"), guardedName}));
-        QCOMPARE(line("total_change"), (QStringList{QStringLiteral("EUR"), QStringLiteral("0.00"), QStringLiteral("-10.00"), QString()}));
-        QCOMPARE(line("greatest_change_share"), (QStringList{QStringLiteral("share"), QString(), QStringLiteral("-0.125"), QString()}));
-        QCOMPARE(line("units_changed"), (QStringList{QStringLiteral("units"), QStringLiteral("0"), QStringLiteral("1"), QString()}));
-        // 5 / 70 to the eight decimals of the file.
-        QCOMPARE(line("gap_share")[2], QStringLiteral("0.07142857"));
+        m_document->begin(comparedScenario(), {}, true);
+        auto& choose = child<QPushButton>("chooseButton");
+        table().setCurrentIndex(table().model()->index(0, 0));
+        QVERIFY(!choose.isEnabled()); // the current ladder is asked already
+        table().setCurrentIndex(table().model()->index(0, 2));
+        QCOMPARE(choose.text(), QStringLiteral("&Choose “Steeper”"));
+        QSignalSpy chosen(m_page.get(), &SideBySidePage::chosen);
+        QTest::mouseClick(&choose, Qt::LeftButton);
+        QCOMPARE(chosen.count(), 1);
+        QCOMPARE(chosen.at(0).at(0).toInt(), 1);
+        QCOMPARE(m_document->tier(0)->chosen, std::optional<int>(1));
+        QCOMPARE(heading(2), QStringLiteral("✓ Steeper"));
+        QCOMPARE(m_page->selectedCandidate(), 1);
+        m_document->undoStack().undo();
+        QCOMPARE(heading(2), QStringLiteral("Steeper"));
     }
+
+    void theTableAndThePictureLeaveWithTheCaution()
+    {
+        m_document->begin(comparedScenario(), {}, true);
+        QVERIFY(child<QLabel>("sideBySideCaution").isVisible());
+        QCOMPARE(child<QLabel>("sideBySideCaution").text(), cautionText());
+        const QTemporaryDir folder;
+        QSignalSpy told(m_page.get(), &SideBySidePage::told);
+
+        trigger("saveTableAction"); // given up
+        QCOMPARE(m_answers.suggested.takeLast(), QStringLiteral("Tern Wharf (invented) Box 4 side by side.csv"));
+        QCOMPARE(told.count(), 0);
+        m_answers.path = folder.filePath(QStringLiteral("table"));
+        trigger("saveTableAction");
+        QCOMPARE(told.count(), 1);
+        const auto lines = readTable(content(folder.filePath(QStringLiteral("table.csv"))));
+        QCOMPARE(lines[0].mid(3), (QStringList{QStringLiteral("current"), QStringLiteral("Lower end"), QStringLiteral("Steeper"),
+                                               QStringLiteral("Same bottom"), QStringLiteral("best")}));
+        QCOMPARE(lines[1], (QStringList{QStringLiteral("gap"), QStringLiteral("Gap"), QStringLiteral("EUR"), QStringLiteral("12.50"),
+                                        QStringLiteral("5.00"), QStringLiteral("12.75"), QStringLiteral("5.00"),
+                                        QStringLiteral("Lower end; Same bottom")}));
+
+        for (const char* suffix : {"png", "svg", "pdf"}) {
+            m_answers.path = folder.filePath(QStringLiteral("picture.") + QLatin1String(suffix));
+            const QString path = m_answers.path;
+            trigger("savePictureAction");
+            const QByteArray bytes = content(path);
+            const bool good = qstrcmp(suffix, "png") == 0   ? !QImage(path).isNull()
+                              : qstrcmp(suffix, "svg") == 0 ? bytes.contains("<svg")
+                                                            : bytes.startsWith("%PDF-");
+            QVERIFY2(good, suffix);
+        }
+        m_answers.path = folder.filePath(QStringLiteral("no such folder/table.csv"));
+        trigger("saveTableAction");
+        QCOMPARE(m_answers.told.size(), 1);
+        QVERIFY(m_answers.told[0].startsWith(QStringLiteral("The table was not saved.")));
+        QVERIFY(!QFile::exists(folder.filePath(QStringLiteral("no such folder"))));
+    }
+
+    void theTableIsCopied()
+    {
+        m_document->begin(comparedScenario(), {}, true);
+        table().setFocus();
+        table().setCurrentIndex(table().model()->index(0, 1));
+        QTest::keySequence(&table(), QKeySequence::Copy);
+        QCOMPARE(QGuiApplication::clipboard()->text(), QStringLiteral("5.00")); // the figure without its mark
+        trigger("copyTableAction");
+        const QStringList lines = QGuiApplication::clipboard()->text().split(QLatin1Char('\n'));
+        QCOMPARE(lines[0], QStringLiteral("\tcurrent\tLower end\tSteeper\tSame bottom"));
+        QCOMPARE(lines[1], QStringLiteral("Gap\t12.50\t5.00\t12.75\t5.00"));
+        QCOMPARE(lines.size(), table().model()->rowCount() + 1);
+        trigger("copyPictureAction");
+        QVERIFY(!QGuiApplication::clipboard()->image().isNull());
+    }
+
+private:
+    template <class T>
+    T& child(const char* name)
+    {
+        T* found = m_page->findChild<T*>(QString::fromLatin1(name));
+        if (!found)
+            qFatal("no child of that name: %s", name);
+        return *found;
+    }
+    QTableView& table() { return child<QTableView>("sideBySideTable"); }
+    QString heading(int column) { return table().model()->headerData(column, Qt::Horizontal).toString(); }
+    void trigger(const char* action) { child<QAction>(action).trigger(); }
+    /// The ladders as the picture describes them, one after the other.
+    QStringList plotOrder()
+    {
+        const QString said = child<SideBySidePlot>("sideBySidePlot").accessibleDescription();
+        QMap<qsizetype, QString> places;
+        for (const char* name : {"current", "Lower end", "Steeper", "Same bottom"})
+            places.insert(said.indexOf(QLatin1String(name) + QStringLiteral(": ")), QLatin1String(name));
+        return places.values();
+    }
+    static QByteArray content(const QString& path)
+    {
+        QFile file(path);
+        return file.open(QIODevice::ReadOnly) ? file.readAll() : QByteArray();
+    }
+
+    std::unique_ptr<Document> m_document;
+    std::unique_ptr<Workbench> m_bench;
+    PathAnswers m_answers;
+    std::unique_ptr<SideBySidePage> m_page;
 };
 
 QTEST_MAIN(SideBySideTest)

@@ -36,7 +36,7 @@ QList<qlonglong> minors(const Outcome<std::vector<Price>>& read)
 
 } // namespace
 
-class DeskTextsTest : public QObject
+class TextsTest : public QObject
 {
     Q_OBJECT
 
@@ -251,5 +251,5 @@ private slots:
     }
 };
 
-QTEST_MAIN(DeskTextsTest)
-#include "desk_texts_test.moc"
+QTEST_MAIN(TextsTest)
+#include "texts_test.moc"

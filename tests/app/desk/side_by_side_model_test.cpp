@@ -1,0 +1,156 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+// The figures of ladders side by side, and the best of each row.
+#include "compared_tier.h"
+#include "read_table.h"
+#include "side_by_side_model.h"
+
+#include <QAbstractItemModelTester>
+#include <QRandomGenerator>
+#include <QTest>
+
+using namespace rungwright;
+
+namespace
+{
+
+ComparedLadder compared(const Scenario& scenario, int candidate)
+{
+    const TierCase& tierCase = scenario.tiers.front();
+    ComparedLadder ladder;
+    ladder.candidate = candidate;
+    ladder.name = candidate < 0 ? QStringLiteral("current") : QString::fromStdString(tierCase.candidates[std::size_t(candidate)].name);
+    ladder.prices = pricesOf(tierCase, candidate);
+    ladder.measurement = measured(tierCase.tier, ladder.prices, tierCase.model);
+    ladder.change = ladderChange(tierCase.tier.units, ladder.prices);
+    return ladder;
+}
+
+} // namespace
+
+class SideBySideModelTest : public QObject
+{
+    Q_OBJECT
+
+private slots:
+    void initTestCase() { QLocale::setDefault(QLocale(QLocale::English, QLocale::UnitedKingdom)); }
+
+    void theFiguresStandSideBySide()
+    {
+        const Scenario scenario = comparedScenario();
+        SideBySideModel model;
+        const QAbstractItemModelTester tester(&model, QAbstractItemModelTester::FailureReportingMode::QtTest);
+        model.show({compared(scenario, -1), compared(scenario, 0), compared(scenario, 1)}, scenario.currency);
+        QCOMPARE(model.columnCount(), 3);
+        const auto texts = [&](const char* key) {
+            QStringList row;
+            for (int column = 0; column < model.columnCount(); ++column)
+                row << model.index(model.rowOf(key), column).data().toString();
+            return row;
+        };
+        // Worked out in compared_tier.h.
+        QCOMPARE(texts("gap"), (QStringList{QStringLiteral("12.50"), QStringLiteral("★ best  5.00"), QStringLiteral("12.75")}));
+        QCOMPARE(texts("shape_part"), (QStringList{QStringLiteral("2.50"), QStringLiteral("5.00"), QStringLiteral("★ best  0.75")}));
+        QCOMPARE(texts("chance_floor_met"),
+                 (QStringList{QStringLiteral("0.0\u00a0%"), QStringLiteral("★ best  75\u00a0%"), QStringLiteral("0.0\u00a0%")}));
+        QCOMPARE(texts("total_change"), (QStringList{QStringLiteral("0.00"), QStringLiteral("−10.00"), QStringLiteral("−3.00")}));
+        QCOMPARE(texts("units_changed"), (QStringList{QStringLiteral("0"), QStringLiteral("1"), QStringLiteral("2")}));
+        // Steeper: +5.00 of 80.00 is 6.25 %, -8.00 of 90.00 is -8.9 %.
+        QCOMPARE(texts("greatest_change"), (QStringList{QStringLiteral("–"), QStringLiteral("−10.00"), QStringLiteral("−8.00")}));
+        QCOMPARE(texts("greatest_change_share"),
+                 (QStringList{QStringLiteral("–"), QStringLiteral("−13\u00a0%"), QStringLiteral("−8.9\u00a0%")}));
+        // Both without an inversion are best; the asking total has no best.
+        QCOMPARE(texts("inversions"), (QStringList{QStringLiteral("★ best  0"), QStringLiteral("★ best  0"), QStringLiteral("1")}));
+        QCOMPARE(texts("asking_total"), (QStringList{QStringLiteral("170.00"), QStringLiteral("160.00"), QStringLiteral("167.00")}));
+        QCOMPARE(model.headerData(0, Qt::Vertical).toString(), QStringLiteral("Gap"));
+        QVERIFY(
+            model.index(model.rowOf("gap"), 1).data(Qt::AccessibleTextRole).toString().endsWith(QStringLiteral("Lower end: 5.00, best")));
+    }
+
+    void everyFigureOfTheBenchIsThere()
+    {
+        SideBySideModel model;
+        for (const FigureRow& figure : figureRows())
+            QVERIFY2(model.rowOf(figure.key) >= 0, figure.key);
+        QCOMPARE(model.rowCount(), static_cast<int>(figureRows().size()) + 4);
+    }
+
+    void laddersThatShowTheSameShareTheMark()
+    {
+        const Scenario scenario = comparedScenario();
+        SideBySideModel model;
+        model.show({compared(scenario, 0), compared(scenario, 2)}, scenario.currency); // alike on offer
+        for (int row = 0; row < model.rowCount(); ++row)
+            for (int column = 0; column < 2; ++column)
+                QVERIFY(!model.index(row, column).data(SideBySideModel::bestRole).toBool()); // all equal: no mark
+        model.show({compared(scenario, 0), compared(scenario, -1), compared(scenario, 2)}, scenario.currency);
+        const int gap = model.rowOf("gap");
+        QVERIFY(model.index(gap, 0).data(SideBySideModel::bestRole).toBool());
+        QVERIFY(!model.index(gap, 1).data(SideBySideModel::bestRole).toBool());
+        QVERIFY(model.index(gap, 2).data(SideBySideModel::bestRole).toBool());
+    }
+
+    /// Against a plain reading of the rule, on random ladders: marked are those that show the best of the defined figures, unless all do.
+    void theBestIsMarkedOnRandomLadders()
+    {
+        QRandomGenerator random(7);
+        for (int round = 0; round < 60; ++round) {
+            Scenario scenario = comparedScenario();
+            TierCase& tierCase = scenario.tiers.front();
+            if (round % 5 == 0)
+                tierCase.tier.units[0].status = tierCase.tier.units[1].status = Status::occupied; // undefined figures
+            for (Candidate& candidate : tierCase.candidates)
+                for (Price& price : candidate.prices)
+                    price = Price{6900 + 50 * random.bounded(6)};
+            SideBySideModel model;
+            model.show({compared(scenario, -1), compared(scenario, 0), compared(scenario, 1), compared(scenario, 2)}, scenario.currency);
+            for (const FigureRow& figure : figureRows()) {
+                std::vector<std::optional<double>> values;
+                for (const ComparedLadder& ladder : model.ladders())
+                    values.push_back(figure.value(ladder.measurement));
+                std::optional<double> best;
+                for (const auto& value : values)
+                    if (value && (!best || figure.better * *value > figure.better * *best))
+                        best = value;
+                QList<bool> wanted;
+                qsizetype defined = 0;
+                for (const auto& value : values) {
+                    defined += value ? 1 : 0;
+                    wanted << (figure.better != 0 && value &&
+                               figureText(figure, value, scenario.currency) == figureText(figure, best, scenario.currency));
+                }
+                if (wanted.count(true) == defined)
+                    wanted.fill(false);
+                for (int column = 0; column < 4; ++column)
+                    QVERIFY2(model.index(model.rowOf(figure.key), column).data(SideBySideModel::bestRole).toBool() == wanted[column],
+                             figure.key);
+            }
+        }
+    }
+
+    void theTableForAFileIsPlainAndGuarded()
+    {
+        Scenario scenario = comparedScenario();
+        scenario.tiers.front().candidates[0].name = "=SUM(A1), or \"so\"";
+        SideBySideModel model;
+        model.show({compared(scenario, -1), compared(scenario, 0)}, scenario.currency);
+        QLocale::setDefault(QLocale(QLocale::German)); // files know no locale
+        const QByteArray csv = model.csv();
+        QLocale::setDefault(QLocale(QLocale::English, QLocale::UnitedKingdom));
+        QVERIFY(csv.endsWith("\r\n") && csv.count("\r\n") == csv.count('\n'));
+        const auto lines = readTable(csv);
+        const QString guardedName = QStringLiteral("'=SUM(A1), or \"so\"");
+        QCOMPARE(lines[0], (QStringList{QStringLiteral("key"), QStringLiteral("figure"), QStringLiteral("unit"), QStringLiteral("current"),
+                                        guardedName, QStringLiteral("best")}));
+        QCOMPARE(lines.size(), std::size_t(model.rowCount()) + 1);
+        const auto line = [&](const char* key) { return lines[std::size_t(model.rowOf(key)) + 1].mid(2); };
+        QCOMPARE(line("gap"), (QStringList{QStringLiteral("EUR"), QStringLiteral("12.50"), QStringLiteral("5.00"), guardedName}));
+        QCOMPARE(line("total_change"), (QStringList{QStringLiteral("EUR"), QStringLiteral("0.00"), QStringLiteral("-10.00"), QString()}));
+        QCOMPARE(line("greatest_change_share"), (QStringList{QStringLiteral("share"), QString(), QStringLiteral("-0.125"), QString()}));
+        QCOMPARE(line("units_changed"), (QStringList{QStringLiteral("units"), QStringLiteral("0"), QStringLiteral("1"), QString()}));
+        // 5 / 70 to the eight decimals of the file.
+        QCOMPARE(line("gap_share")[2], QStringLiteral("0.07142857"));
+    }
+};
+
+QTEST_MAIN(SideBySideModelTest)
+#include "side_by_side_model_test.moc"
