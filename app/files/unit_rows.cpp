@@ -178,8 +178,8 @@ void UnitRows::finish()
         Tier& tier = gathered.tierCase.tier;
         if (gathered.floorLine == 0) {
             refuse(gathered.lines.front(), Column::advertisedFloor,
-                   {Words::tr("no row that can be taken gives the floor of the tier '%1' at '%2' (%3 rows)")
-                        .arg(shownText(tier.name), shownText(tier.site), QString::number(gathered.lines.size())),
+                   {Words::tr("no row that can be taken gives the floor of the tier '%1' at '%2'")
+                        .arg(shownText(tier.name), shownText(tier.site)),
                     Words::tr("the advertised floor on at least one row of the tier")},
                    {});
             m_result.rowsTaken -= static_cast<qint64>(gathered.lines.size());
