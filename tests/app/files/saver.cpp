@@ -1,12 +1,13 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // A process that saves, to be killed or starved by test_saving.
-//   saver loop scenario|sheet|bytes PATH UNITS       saves versions 1 and 2 in turn for ever; says "saved" after the first;
+//   saver loop scenario|sheet|bytes PATH UNITS       saves versions 1 and 2 in turn for ever; says how many microseconds the first took;
 //                                                    bytes: the scenario's bytes made beforehand, so that it does nothing but write
 //   saver once scenario|sheet PATH UNITS LIMIT       saves version 2 once; LIMIT > 0: no file may grow beyond so many bytes
 #include "saved_versions.h"
 #include "whole_file.h"
 
 #include <QCoreApplication>
+#include <QElapsedTimer>
 
 #include <csignal>
 #include <cstdio>
@@ -40,13 +41,15 @@ int main(int count, char** words)
     for (int i = 0; bytesOnly && i < 2; ++i)
         versions[i] = savedBytes(Kind::scenario, 1 + i, units);
     for (int turn = 0;; ++turn) {
+        QElapsedTimer timer;
+        timer.start();
         const auto saved = bytesOnly ? rungwright::writeWhole(args[3], versions[turn % 2]) : save(kind, 1 + turn % 2, units, args[3]);
         if (!saved.ok()) {
             std::puts(saved.trouble().c_str());
             return 4;
         }
         if (turn == 0) {
-            std::puts("saved");
+            std::printf("%lld\n", static_cast<long long>(timer.nsecsElapsed() / 1000));
             std::fflush(stdout);
         }
     }
