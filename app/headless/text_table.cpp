@@ -69,7 +69,7 @@ int cellWidth(const QString& text)
     return width;
 }
 
-TextTable::TextTable(QStringList heading, std::vector<int> toTheLeft) : m_toTheLeft(std::move(toTheLeft)) { add(heading); }
+TextTable::TextTable(const QStringList& heading, std::vector<int> toTheLeft) : m_toTheLeft(std::move(toTheLeft)) { add(heading); }
 
 void TextTable::add(const QStringList& row)
 {

@@ -24,7 +24,7 @@ inline constexpr int kLongestName = 40;
 class TextTable
 {
 public:
-    TextTable(QStringList heading, std::vector<int> toTheLeft);
+    TextTable(const QStringList& heading, std::vector<int> toTheLeft);
     void add(const QStringList& row);
     QString text() const;
 
