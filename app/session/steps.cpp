@@ -64,7 +64,7 @@ void AddCandidate::undo()
 }
 
 DiscardCandidate::DiscardCandidate(Document& document, const QString& name, int tier, int candidate) :
-    ScenarioStep(document, name), m_tier(tier), m_index(candidate), m_candidate(), m_chosenBefore()
+    ScenarioStep(document, name), m_tier(tier), m_index(candidate), m_candidate()
 {
 }
 
