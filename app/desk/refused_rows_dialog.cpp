@@ -5,6 +5,7 @@
 #include "table_text.h"
 #include "ui_refused_rows_dialog.h"
 #include "wording.h"
+#include "words.h"
 
 #include <QEvent>
 #include <QFileInfo>
@@ -91,7 +92,10 @@ QVariant RefusedRowsModel::headerData(int section, Qt::Orientation orientation, 
 }
 
 RefusedRowsDialog::RefusedRowsDialog(const UnitListResult& result, const QString& fileName, QWidget* parent) :
-    QDialog(parent), m_fileName(QFileInfo(fileName).fileName()), m_model(result.refused), m_ui(std::make_unique<Ui::RefusedRowsDialog>())
+    QDialog(parent),
+    m_fileName(shownText(QFileInfo(fileName).fileName())),
+    m_model(result.refused),
+    m_ui(std::make_unique<Ui::RefusedRowsDialog>())
 {
     m_ui->setupUi(this);
     m_ui->titleLabel->setText(tr("Not every row of %1 can be taken").arg(isolated(m_fileName)));

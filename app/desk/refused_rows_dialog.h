@@ -53,7 +53,7 @@ private:
     void showDetail(int row);
     void dress();
 
-    QString m_fileName;
+    QString m_fileName; ///< Without its folder, cut if long.
     RefusedRowsModel m_model;
     std::unique_ptr<Ui::RefusedRowsDialog> m_ui;
 };

@@ -11,6 +11,7 @@
 #include "table_text.h"
 #include "ui_sheet_dialog.h"
 #include "wording.h"
+#include "words.h"
 
 #include <QAccessible>
 #include <QEvent>
@@ -26,6 +27,9 @@ QString nameOf(const TierCase& tierCase, int candidate)
 {
     return candidate < 0 ? QString() : QString::fromStdString(tierCase.candidates[static_cast<std::size_t>(candidate)].name);
 }
+
+/// A name as a title can bear it.
+QString shortName(const QString& name) { return isolated(shownText(name)); }
 
 const FigureRow& figure(const char* key)
 {
@@ -82,9 +86,9 @@ void SheetDialog::showTitle(const TierCase& tierCase, int candidate)
     const QString site = QString::fromStdString(tierCase.tier.site);
     const QString tier = QString::fromStdString(tierCase.tier.name);
     const QString name = nameOf(tierCase, candidate);
-    m_ui->titleLabel->setText(name.isEmpty() ? tr("Price sheet of the current ladder") : tr("Price sheet of “%1”").arg(isolated(name)));
+    m_ui->titleLabel->setText(name.isEmpty() ? tr("Price sheet of the current ladder") : tr("Price sheet of “%1”").arg(shortName(name)));
     m_ui->tierLabel->setText(tr("%1 · %2 · advertised from %3 %4")
-                                 .arg(isolated(site), isolated(tier), moneyText(tierCase.tier.advertisedFloor, m_currency),
+                                 .arg(shortName(site), shortName(tier), moneyText(tierCase.tier.advertisedFloor, m_currency),
                                       QString::fromStdString(m_currency.code)));
     m_suggestion = fileNameFrom({site, tier, name.isEmpty() ? tr("current") : name}, QStringLiteral("csv"));
 }

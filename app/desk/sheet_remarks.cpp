@@ -2,6 +2,7 @@
 #include "sheet_remarks.h"
 
 #include "wording.h"
+#include "words.h"
 
 #include <QCoreApplication>
 
@@ -49,7 +50,7 @@ void remarkOnRules(const Tier& tier, std::span<const Price> prices, const PriceR
             continue;
         unit.locked = false;
         const Room room = roomOf(unit, rules);
-        const QString name = QString::fromStdString(unit.name);
+        const QString name = shownText(unit.name, 24);
         if (prices[i] < room.lo || prices[i] > room.hi)
             tooFar << name;
         else if (!rules.points.allows(prices[i]))

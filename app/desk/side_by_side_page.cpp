@@ -8,6 +8,7 @@
 #include "table_names.h"
 #include "table_text.h"
 #include "ui_side_by_side_page.h"
+#include "words.h"
 
 #include <QEvent>
 #include <QHeaderView>
@@ -20,6 +21,9 @@ namespace
 
 /// What the picture leaves between two columns.
 constexpr int kBetween = 20;
+
+/// Neither a candidate nor the current ladder.
+constexpr int kNoCandidate = -2;
 
 /// For menus and buttons: a name's own "&" is no mnemonic, and a long name is cut in the middle.
 QString buttonName(const QString& name)
@@ -160,8 +164,9 @@ void SideBySidePage::refresh()
     }
     pick().update(names, m_bench.candidate());
     fillPickMenu(names);
-    const int selected = m_model.ladders().empty() ? m_bench.candidate() : selectedCandidate();
-    showLadders(selected);
+    const bool sameTier = m_shownTier == m_bench.tier() && !m_model.ladders().empty();
+    m_shownTier = m_bench.tier();
+    showLadders(sameTier ? selectedCandidate() : kNoCandidate);
     m_ui->stack->setCurrentWidget(m_ui->comparePage);
 }
 
@@ -239,7 +244,7 @@ void SideBySidePage::showLadders(int selected)
 
     // The column that was selected before; else the one worked on; else the first candidate.
     int column = m_model.columnOf(selected);
-    if (column < 0)
+    if (column < 0 && m_bench.candidate() >= 0)
         column = m_model.columnOf(m_bench.candidate());
     if (column < 0)
         column = m_model.ladders().front().candidate < 0 ? 1 : 0;
@@ -290,7 +295,7 @@ void SideBySidePage::showTitle()
     const TierCase* tierCase = m_bench.tierCase();
     if (!tierCase)
         return;
-    const QString tier = tr("%1 · %2").arg(isolated(tierCase->tier.site), isolated(tierCase->tier.name));
+    const QString tier = tr("%1 · %2").arg(isolated(shownText(tierCase->tier.site)), isolated(shownText(tierCase->tier.name)));
     const Measurement& m = m_model.ladders().front().measurement;
     QString model = modelName(m.model);
     if (m.odds.left)

@@ -70,7 +70,8 @@ private:
     Questions& m_questions;
     SideBySideModel m_model;
     std::map<int, LadderPick> m_picks; ///< By tier.
-    bool m_stale = true;               ///< Something changed while the page was hidden.
+    int m_shownTier = -1;
+    bool m_stale = true; ///< Something changed while the page was hidden.
     std::unique_ptr<Ui::SideBySidePage> m_ui;
 };
 

@@ -190,6 +190,23 @@ private slots:
                                                                       "'=B-4\tclosed\t110.00\t110.00\tno change\t"));
     }
 
+    void longNamesDoNotStretchTheDialog()
+    {
+        Scenario scenario = comparedScenario();
+        TierCase& tierCase = scenario.tiers.front();
+        const std::string longName(5000, 'x');
+        tierCase.tier.site = tierCase.tier.name = tierCase.candidates[1].name = tierCase.tier.units[0].name = longName;
+        scenario.rules.greatestChange = Price{1};
+        m_document.begin(scenario, {}, true);
+        SheetDialog dialog(m_document, 0, 1, m_answers);
+        showActive(dialog);
+        QVERIFY2(dialog.width() <= 1280 && dialog.height() <= 720,
+                 qPrintable(QStringLiteral("%1 x %2").arg(dialog.width()).arg(dialog.height())));
+        RefusedRowsDialog refused(readUnitList("site\n", QString::fromStdString(longName), {}), QString::fromStdString(longName));
+        showActive(refused);
+        QVERIFY2(refused.width() <= 1280, qPrintable(QString::number(refused.width())));
+    }
+
     void theCurrentLadderHasASheetToo()
     {
         SheetDialog dialog(m_document, 0, -1, m_answers);

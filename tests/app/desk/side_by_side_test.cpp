@@ -47,6 +47,8 @@ private slots:
         m_page = std::make_unique<SideBySidePage>(*m_bench, m_answers);
         m_page->resize(900, 640);
         m_page->show();
+        QVERIFY(QTest::qWaitForWindowExposed(m_page.get()));
+        m_page->activateWindow(); // where no window manager does it
         QVERIFY(QTest::qWaitForWindowActive(m_page.get()));
     }
     void cleanup()
@@ -193,6 +195,7 @@ private slots:
     {
         m_document->begin(comparedScenario(), {}, true);
         auto& choose = child<QPushButton>("chooseButton");
+        QCOMPARE(m_page->selectedCandidate(), 0); // at first: a candidate, as the current ladder cannot be chosen
         table().setCurrentIndex(table().model()->index(0, 0));
         QVERIFY(!choose.isEnabled()); // the current ladder is asked already
         table().setCurrentIndex(table().model()->index(0, 2));
