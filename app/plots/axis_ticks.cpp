@@ -28,12 +28,13 @@ double MoneyTicks::getTickStep(const QCPRange& range)
     return m_step;
 }
 
-QString MoneyTicks::getTickLabel(double tick, const QLocale& locale, QChar, int)
+QString MoneyTicks::getTickLabel(double tick, const QLocale&, QChar, int)
 {
+    // Not the plot's locale: QCustomPlot takes the grouping out of it.
     const double major = static_cast<double>(m_currency.minorPerMajor());
     if (m_step >= major)
-        return numberText(std::round(tick / major), 0, locale);
-    return moneyText(tick, m_currency, locale);
+        return numberText(std::round(tick / major), 0);
+    return moneyText(tick, m_currency);
 }
 
 double CountTicks::getTickStep(const QCPRange& range) { return roundStep(range.size() * m_apart); }
@@ -50,10 +51,7 @@ QVector<double> CountTicks::createTickVector(double step, const QCPRange& range)
     return ticks;
 }
 
-QString CountTicks::getTickLabel(double tick, const QLocale& locale, QChar, int)
-{
-    return tick > m_lastWritten ? QString() : numberText(tick, 0, locale);
-}
+QString CountTicks::getTickLabel(double tick, const QLocale&, QChar, int) { return tick > m_lastWritten ? QString() : numberText(tick, 0); }
 
 QSharedPointer<QCPAxisTicker> chanceTicks()
 {

@@ -19,7 +19,7 @@ namespace
 QString tr(const char* text) { return QCoreApplication::translate("BenchPicture", text); }
 
 constexpr int kSide = 12;
-constexpr QSize kLeast(520, 480);
+constexpr QSize kLeast(600, 520);
 
 /// The reading line: the gap large, the sentence below. Returns its height.
 int paintReading(QPainter& painter, const QRect& where, const Reading& r, const QFont& font, const Look& look)

@@ -22,7 +22,7 @@ BenchPlots::BenchPlots(QWidget* parent) :
     QWidget(parent), m_ladder(new LadderPlot(this)), m_curtain(new CurtainPlot(this)), m_thinning(new ThinningPlot(this))
 {
     setObjectName(QStringLiteral("benchPlots"));
-    setMinimumSize(520, 330);
+    setMinimumSize(600, 380);
     setSizePolicy(QSizePolicy::Expanding, QSizePolicy::Expanding);
     connect(m_ladder, &LadderPlot::priceRangeChanged, m_curtain, &CurtainPlot::setPriceRange);
     setTabOrder(m_ladder, m_thinning);

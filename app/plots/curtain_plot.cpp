@@ -14,7 +14,7 @@
 namespace rungwright
 {
 
-CurtainPlot::CurtainPlot(QWidget* parent) : PaperPlot(parent)
+CurtainPlot::CurtainPlot(QWidget* parent) : PaperPlot(parent, Marks::none)
 {
     setObjectName(QStringLiteral("curtainPlot"));
     setAccessibleName(tr("Curtain"));
@@ -88,9 +88,11 @@ void CurtainPlot::placeLabel()
     const Measurement& m = m_bench->worked();
     if (!m.gap.gap || m_worked.empty())
         return;
-    m_labelText =
-        (m.belowFloor > 0 ? tr("area less missing = gap %1") : tr("area = gap %1")).arg(moneyText(*m.gap.gap, m_bench->currency()));
     const QFontMetricsF metrics(font());
+    const QString gap = moneyText(*m.gap.gap, m_bench->currency());
+    m_labelText = (m_worked.reachesBelowFloor() ? tr("filled less hatched = gap %1") : tr("area = gap %1")).arg(gap);
+    if (metrics.horizontalAdvance(m_labelText) + 16 > area().width())
+        m_labelText = tr("gap %1").arg(gap);
     const QSizeF size(std::ceil(metrics.horizontalAdvance(m_labelText)) + 8, std::ceil(metrics.height()));
     const double floorY = frame().y(static_cast<double>(m.advertisedFloor.minor));
     // On the area, just above the floor; else at the upper right, where a curtain hardly ever reaches.
@@ -125,7 +127,7 @@ void CurtainPlot::paintBelow(QPainter& painter)
     painter.restore();
 }
 
-void CurtainPlot::paintMarks(QPainter& painter)
+void CurtainPlot::paintAbove(QPainter& painter)
 {
     if (!shows())
         return;
@@ -133,14 +135,6 @@ void CurtainPlot::paintMarks(QPainter& painter)
     const double floorY = frame().y(static_cast<double>(m_bench->worked().advertisedFloor.minor));
     if (floorY >= area().top() && floorY <= area().bottom())
         paintFloorLine(painter, area().left(), area().right(), floorY, look());
-    painter.restore();
-}
-
-void CurtainPlot::paintAbove(QPainter& painter)
-{
-    if (!shows())
-        return;
-    painter.save();
     if (m_bench->candidate() >= 0)
         m_current.paintLine(painter, QPen(look().trace, 1.2));
     m_worked.paintLine(painter, QPen(look().gapLine, 1.8, Qt::SolidLine, Qt::FlatCap, Qt::MiterJoin));

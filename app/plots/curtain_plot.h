@@ -25,7 +25,6 @@ public:
 
 protected:
     void paintFrame(QPainter& painter) override;
-    void paintMarks(QPainter& painter) override;
     void paintBelow(QPainter& painter) override;
     void paintAbove(QPainter& painter) override;
     void areaChanged() override;

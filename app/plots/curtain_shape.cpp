@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "curtain_shape.h"
 
+#include "curve_paint.h"
 #include "gap_paint.h"
 
 #include <QPainter>
@@ -15,87 +16,88 @@ void CurtainShape::build(const Measurement& m, const CurtainFrame& frame)
 {
     m_line.clear();
     m_area.clear();
+    m_missing.clear();
     m_claim = QRectF();
     m_left = frame.area.left();
-    m_steps = m.model != ModelKind::fitted;
     if (m.curtain.empty() || !(frame.high > frame.low))
         return;
+    const bool steps = m.model != ModelKind::fitted;
     const double floor = static_cast<double>(m.advertisedFloor.minor);
     const double fromPrice = std::clamp(floor, frame.low, frame.high);
+    const double right = frame.x(1);
+    const bool underFloor = !m.ladder.empty() && m.ladder.front().price < m.advertisedFloor;
     const auto cut = [&frame](double price) { return std::clamp(price, frame.low, frame.high); };
-
-    // From the lower edge upwards. Below the first price the chance is the first step's.
-    double below = frame.low;
-    double lastChance = m.curtain.front().chance;
-    m_line << QPointF(frame.x(lastChance), frame.y(frame.low));
-    const auto addArea = [&](double chance, double price) {
-        if (price >= fromPrice)
-            m_area << QPointF(frame.x(chance), frame.y(price));
+    const auto addBlock = [&](double chance, double from, double to) {
+        // Above the floor the block under the curve counts to the gap, below it what is missing to certainty.
+        const double low = std::max(from, fromPrice);
+        if (low < to && frame.x(chance) - m_left >= 0.5)
+            m_area.emplace_back(QPointF(m_left, frame.y(to)), QPointF(frame.x(chance), frame.y(low)));
+        const double high = std::min(to, fromPrice);
+        if (underFloor && from < high && right - frame.x(chance) >= 0.5)
+            m_missing.emplace_back(QPointF(frame.x(chance), frame.y(high)), QPointF(right, frame.y(from)));
     };
-    m_area << QPointF(frame.area.left(), frame.y(fromPrice));
+
+    // From the lower edge upwards; below the first price the chance is the first step's. Steps finer than the eye sees are one.
+    constexpr double fine = 0.2;
+    double below = frame.low;
+    double x = frame.x(m.curtain.front().chance);
+    double blockFrom = frame.low;
+    double blockChance = m.curtain.front().chance;
+    m_line << QPointF(x, frame.y(frame.low));
     for (const CurtainStep& step : m.curtain) {
         const double price = cut(step.price);
-        if (m_steps) {
-            m_line << QPointF(frame.x(step.chance), frame.y(below)) << QPointF(frame.x(step.chance), frame.y(price));
-            if (price > fromPrice) {
-                addArea(step.chance, std::max(below, fromPrice));
-                addArea(step.chance, price);
+        const double stepX = frame.x(step.chance);
+        if (steps) {
+            if (x - stepX >= fine) {
+                m_line << QPointF(x, frame.y(below)) << QPointF(stepX, frame.y(below));
+                addBlock(blockChance, blockFrom, below);
+                blockFrom = below;
+                blockChance = step.chance;
+                x = stepX;
             }
         } else {
-            m_line << QPointF(frame.x(step.chance), frame.y(price));
-            if (step.price >= floor)
-                addArea(step.chance, price);
+            const QPointF next(stepX, frame.y(price));
+            if (std::abs(next.x() - m_line.back().x()) + std::abs(next.y() - m_line.back().y()) >= 1.0) {
+                m_line << next;
+                addBlock(0.5 * (blockChance + step.chance), blockFrom, price);
+                blockFrom = price;
+                blockChance = step.chance;
+            }
         }
         below = price;
-        lastChance = step.chance;
     }
-    if (m_steps)
+    addBlock(blockChance, blockFrom, below);
+    addBlock(0, below, frame.high);
+    m_line << QPointF(steps ? x : frame.x(m.curtain.back().chance), frame.y(below));
+    if (steps)
         m_line << QPointF(frame.x(0), frame.y(below));
-    if (below >= fromPrice)
-        m_area << QPointF(frame.area.left(), frame.y(below));
-    if (m.gap.claimPart && *m.gap.claimPart >= 0.5) {
-        const double top = frame.y(cut(floor + *m.gap.claimPart));
-        m_claim = QRectF(QPointF(frame.area.left(), top), QPointF(frame.x(1), frame.y(fromPrice)));
-        if (!m_steps) // A smooth curve leaves the full width at the floor already; its claim part is no rectangle.
-            m_claim = QRectF();
-    }
+    // The claim part is the block of certainty above the floor; a smooth curve has none, it leaves certainty at once.
+    if (steps && m.gap.claimPart && *m.gap.claimPart >= 0.5)
+        m_claim = QRectF(QPointF(m_left, frame.y(cut(floor + *m.gap.claimPart))), QPointF(right, frame.y(fromPrice)));
 }
 
 void CurtainShape::paintArea(QPainter& painter, const Look& look) const
 {
-    if (m_area.size() < 3)
-        return;
+    painter.setRenderHint(QPainter::Antialiasing, false);
     painter.setPen(Qt::NoPen);
     painter.setBrush(look.gapFill);
-    painter.setRenderHint(QPainter::Antialiasing, !m_steps);
-    painter.drawPolygon(m_area);
+    if (!m_area.empty())
+        painter.drawRects(m_area.data(), static_cast<int>(m_area.size()));
     paintHatching(painter, m_claim, look);
+    for (const QRectF& rect : m_missing)
+        paintHatching(painter, rect, look);
 }
 
-void CurtainShape::paintLine(QPainter& painter, const QPen& pen) const
-{
-    if (m_line.size() < 2)
-        return;
-    painter.setRenderHint(QPainter::Antialiasing, true);
-    painter.setPen(pen);
-    painter.setBrush(Qt::NoBrush);
-    painter.drawPolyline(m_line);
-}
+void CurtainShape::paintLine(QPainter& painter, const QPen& pen) const { paintCurve(painter, m_line.constData(), m_line.size(), pen); }
 
 double CurtainShape::roomBetween(double upper, double lower) const
 {
-    if (m_area.size() < 3 || m_area.front().y() < lower)
-        return 0;
     // The curve only retreats upwards: what it reaches at the upper height holds for the rest.
-    double x = 0;
-    bool covered = false;
-    for (const QPointF& p : m_area) {
-        if (p.y() >= upper)
-            x = p.x() - m_left;
-        else
-            covered = true;
+    for (const QRectF& block : m_area) {
+        if (block.top() <= upper && block.bottom() > upper)
+            return m_area.front().bottom() >= lower ? block.right() - m_left : 0;
     }
-    return covered ? x : 0;
+    return 0;
 }
 
 } // namespace rungwright

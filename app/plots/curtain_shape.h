@@ -9,6 +9,8 @@
 #include <QPolygonF>
 #include <QRectF>
 
+#include <vector>
+
 class QPainter;
 
 namespace rungwright
@@ -31,8 +33,10 @@ public:
     /// The curve of `m` cut to the frame. Steps for models that work on rungs, a smooth line for the fitted range.
     void build(const Measurement& m, const CurtainFrame& frame);
     bool empty() const { return m_line.isEmpty(); }
+    bool reachesBelowFloor() const { return !m_missing.empty(); }
 
-    /// The area above the floor under the curve, its claim part hatched.
+    /// The area above the floor under the curve, its claim part hatched. Where units are asked below the floor, what is missing there to
+    /// certainty is hatched instead: the gap is the filled area less the hatched one.
     void paintArea(QPainter& painter, const Look& look) const;
     void paintLine(QPainter& painter, const QPen& pen) const;
     /// How far to the right the filled area reaches over the whole height between two pixel heights (upper, lower); 0 = not at all.
@@ -40,10 +44,10 @@ public:
 
 private:
     QPolygonF m_line;
-    QPolygonF m_area; ///< The same from the floor upwards, closed at chance 0.
+    std::vector<QRectF> m_area; ///< Under it, from the floor upwards.
     QRectF m_claim;
+    std::vector<QRectF> m_missing; ///< Below the floor, beyond the curve; only with units asked there.
     double m_left = 0;
-    bool m_steps = true;
 };
 
 } // namespace rungwright

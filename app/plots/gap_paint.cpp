@@ -14,7 +14,28 @@ namespace rungwright
 namespace
 {
 
-constexpr double kHatch = 7; ///< Pixels between hatching lines, along x.
+constexpr int kHatch = 7; ///< Pixels between hatching lines, along x.
+
+/// One period of the hatching, for the screen: a tile is quicker than hundreds of antialiased lines.
+const QBrush& hatchBrush(const Look& look)
+{
+    static QBrush brush;
+    static QRgb madeFor[2] = {0, 0};
+    const QRgb wanted[2] = {look.gapHatch.rgba(), look.paper.rgba()};
+    if (brush.style() == Qt::NoBrush || madeFor[0] != wanted[0] || madeFor[1] != wanted[1]) {
+        QPixmap tile(kHatch, kHatch);
+        tile.fill(Qt::transparent);
+        QPainter painter(&tile);
+        painter.setRenderHint(QPainter::Antialiasing, true);
+        painter.setPen(QPen(look.gapHatch, 1, Qt::SolidLine, Qt::FlatCap));
+        for (const int c : {0, kHatch, 2 * kHatch}) // The line itself and what its neighbours' edges leave in the corners.
+            painter.drawLine(QLineF(c + 2, -2, c - kHatch - 2, kHatch + 2));
+        painter.end();
+        brush = QBrush(tile);
+        std::copy(std::begin(wanted), std::end(wanted), std::begin(madeFor));
+    }
+    return brush;
+}
 
 } // namespace
 
@@ -24,9 +45,11 @@ void paintHatching(QPainter& painter, const QRectF& rect, const Look& look)
         return;
     // Lines x + y = c, cut to the rectangle by hand: not every picture format knows clipping, and the lines must not wander when the
     // rectangle grows.
-    QRectF seen = rect;
-    if (painter.paintEngine()->type() == QPaintEngine::Raster && painter.hasClipping())
-        seen &= painter.clipBoundingRect();
+    if (painter.paintEngine()->type() == QPaintEngine::Raster && painter.device()->devicePixelRatioF() == 1.0) {
+        painter.fillRect(rect, hatchBrush(look));
+        return;
+    }
+    const QRectF& seen = rect;
     static thread_local std::vector<QLineF> lines;
     lines.clear();
     const double first = std::ceil((seen.left() + seen.top()) / kHatch) * kHatch;

@@ -31,7 +31,7 @@ std::size_t addBeside(std::array<QRectF, N>& into, std::size_t used, double y, d
     const double right = area.right() - kEdge - size.width();
     const double left = area.left() + kEdge;
     for (const double x : {right, 0.5 * (left + right), left}) {
-        for (const double off : {3.0, 9.0, 16.0}) {
+        for (const double off : {3.0, 9.0, 16.0, size.height() + 5.0}) {
             const double top = direction < 0 ? y - off - size.height() : y + off;
             into[used++] = QRectF(QPointF(x, top), size);
         }
@@ -46,7 +46,7 @@ void placeAtLine(const QString& text, double y, double away, PlacedLabel::Tone t
     if (text.isEmpty() || y < room.area().top() || y > room.area().bottom())
         return;
     const QSizeF size = sizeOf(text, metrics);
-    std::array<QRectF, 18> wanted;
+    std::array<QRectF, 12> wanted;
     std::size_t used = addBeside(wanted, 0, y, away, size, room.area());
     QRectF rect = room.choose({wanted.data(), used});
     if (rect.isNull()) {
@@ -59,18 +59,39 @@ void placeAtLine(const QString& text, double y, double away, PlacedLabel::Tone t
     labels.push_back({text, rect, tone, true, room.rungsUnder(rect) > 0 ? PlacedLabel::Backing::paper : PlacedLabel::Backing::none});
 }
 
-/// A label inside the band between y1 and y2, its right end at `right`.
-bool placeInBand(const QString& text, double y1, double y2, double right, bool strong, bool evenOverRungs, const QFontMetricsF& metrics,
-                 LabelRoom& room, std::vector<PlacedLabel>& labels)
+/// The label of a part of the band between y1 and y2, its right end at `right`; none where it would cover rungs.
+void placePart(const QString& text, double y1, double y2, double right, const QFontMetricsF& metrics, LabelRoom& room,
+               std::vector<PlacedLabel>& labels)
 {
     const QSizeF size = sizeOf(text, metrics);
     if (text.isEmpty() || std::abs(y2 - y1) < size.height() + 2)
-        return false;
+        return;
     const QRectF rect(QPointF(right - size.width(), 0.5 * (y1 + y2 - size.height())), size);
-    if (!room.fits(rect) || (!evenOverRungs && room.rungsUnder(rect) > 0))
+    if (!room.fits(rect) || room.rungsUnder(rect) > 0)
+        return;
+    room.take(rect);
+    labels.push_back({text, rect, PlacedLabel::Tone::ink, false, PlacedLabel::Backing::fill});
+}
+
+/// The whole gap's label, beside its bracket at half height if no rung is there.
+bool placeGap(const QString& text, const QRectF& band, double right, const QFontMetricsF& metrics, LabelRoom& room,
+              std::vector<PlacedLabel>& labels)
+{
+    const QSizeF size = sizeOf(text, metrics);
+    const double highest = band.top() + 2;
+    const double lowest = band.bottom() - 2 - size.height();
+    const double left = band.left() + kEdge;
+    std::array<QRectF, 10> wanted;
+    std::size_t used = 0;
+    for (const double x : {right - size.width(), left}) {
+        for (const double share : {0.5, 0.75, 0.25, 1.0, 0.0})
+            wanted[used++] = QRectF(QPointF(x, highest + share * (lowest - highest)), size);
+    }
+    const QRectF rect = room.choose(wanted);
+    if (text.isEmpty() || rect.isNull())
         return false;
     room.take(rect);
-    labels.push_back({text, rect, PlacedLabel::Tone::ink, strong, PlacedLabel::Backing::fill});
+    labels.push_back({text, rect, PlacedLabel::Tone::ink, true, PlacedLabel::Backing::fill});
     return true;
 }
 
@@ -123,7 +144,8 @@ void layOutBand(const BandInput& in, const QFontMetricsF& plain, const QFontMetr
     const auto inside = [&area](double y) { return std::clamp(y, area.top(), area.bottom()); };
     const double top = inside(std::min(in.floorY, in.expectedY));
     const double bottom = inside(std::max(in.floorY, in.expectedY));
-    out.band = QRectF(QPointF(area.left(), top), QPointF(area.right(), bottom));
+    if (top < bottom)
+        out.band = QRectF(QPointF(area.left(), top), QPointF(area.right(), bottom));
     if (!std::isnan(in.claimY) && in.claimY < in.floorY) {
         const double claimTop = std::max(inside(in.claimY), top);
         if (claimTop < bottom)
@@ -139,16 +161,19 @@ void layOutBand(const BandInput& in, const QFontMetricsF& plain, const QFontMetr
     }
     placeAtLine(expectedText, in.expectedY, away, PlacedLabel::Tone::gap, strong, room, out.labels);
     placeAtLine(in.floorText, in.floorY, -away, PlacedLabel::Tone::floor, strong, room, out.labels);
-    if (!thick)
+    if (!thick) {
+        if (expectedText == in.expectedText)
+            placeAtLine(in.gapText, in.expectedY, away, PlacedLabel::Tone::ink, strong, room, out.labels);
         return;
+    }
     const double x = area.right() - kBracket;
     out.bracket = QLineF(x, top, x, bottom);
     double right = x - 6;
-    if (placeInBand(in.gapText, top, bottom, right, true, true, strong, room, out.labels))
+    if (placeGap(in.gapText, out.band, right, strong, room, out.labels) && out.labels.back().rect.right() > area.center().x())
         right = out.labels.back().rect.left() - 12;
     const double split = out.hatched.isNull() ? bottom : out.hatched.top();
-    placeInBand(in.shapeText, top, split, right, false, false, plain, room, out.labels);
-    placeInBand(in.claimText, split, bottom, right, false, false, plain, room, out.labels);
+    placePart(in.shapeText, top, split, right, plain, room, out.labels);
+    placePart(in.claimText, split, bottom, right, plain, room, out.labels);
 }
 
 QRectF placeBeside(QPointF at, QSizeF size, double distance, const LabelRoom& room)

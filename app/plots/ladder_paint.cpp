@@ -139,24 +139,6 @@ void LadderPlot::paintDragBox(QPainter& painter) const
     }
 }
 
-void LadderPlot::paintMessage(QPainter& painter) const
-{
-    const Measurement& m = m_bench->worked();
-    if (m.gap.gap)
-        return;
-    const Reading r = reading(m, m_bench->currency());
-    painter.setFont(font());
-    painter.setPen(look().ink);
-    const QRectF room = area().adjusted(24, 8, -24, -8);
-    const QRectF text =
-        painter.boundingRect(QRectF(room.left(), room.top(), std::min(room.width(), 420.0), room.height()),
-                             Qt::AlignLeft | Qt::AlignTop | Qt::TextWordWrap, r.headline + QStringLiteral(". ") + r.sentence);
-    QColor back = look().paper;
-    back.setAlphaF(0.9F);
-    painter.fillRect(text.adjusted(-4, -2, 4, 2), back);
-    painter.drawText(text, Qt::AlignLeft | Qt::AlignTop | Qt::TextWordWrap, r.headline + QStringLiteral(". ") + r.sentence);
-}
-
 void LadderPlot::paintAbove(QPainter& painter)
 {
     painter.save();
@@ -168,7 +150,6 @@ void LadderPlot::paintAbove(QPainter& painter)
             paintBracket(painter, band.bracket, look());
         for (const PlacedLabel& label : band.labels)
             paintLabel(painter, label, font(), strongFont(), look());
-        paintMessage(painter);
         paintHandle(painter);
         if (m_hover >= 0 && m_hand == Hand::empty && !exporting()) {
             painter.setRenderHint(QPainter::Antialiasing, true);

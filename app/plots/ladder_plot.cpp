@@ -26,7 +26,9 @@ bool drawnWithMovers(const Workbench& bench, const Unit& unit)
 } // namespace
 
 LadderPlot::LadderPlot(QWidget* parent) :
-    PaperPlot(parent), m_priceTicks(QSharedPointer<MoneyTicks>::create()), m_placeTicks(QSharedPointer<CountTicks>::create())
+    PaperPlot(parent, Marks::buffered),
+    m_priceTicks(QSharedPointer<MoneyTicks>::create()),
+    m_placeTicks(QSharedPointer<CountTicks>::create())
 {
     setObjectName(QStringLiteral("ladderPlot"));
     setAccessibleName(tr("Ladder"));
@@ -108,7 +110,7 @@ void LadderPlot::onMoving()
     }
     placeMovers();
     arrange(m_nextScene);
-    update(changedRegion(m_scene, m_nextScene));
+    update(changedRect(m_scene, m_nextScene));
     std::swap(m_scene, m_nextScene);
 }
 

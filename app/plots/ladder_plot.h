@@ -110,7 +110,7 @@ private:
     void layOutBandLabels(Scene& scene, LabelRoom& room);
     void layOutDragBox(Scene& scene, LabelRoom& room) const;
     QStringList dragText(std::uint32_t unit) const;
-    QRegion changedRegion(const Scene& from, const Scene& to) const;
+    QRect changedRect(const Scene& from, const Scene& to) const;
     std::size_t placeOf(std::uint32_t unit) const { return m_placeOf[unit]; }
     /// The unit the drag box speaks of, or -1.
     int unitInHand() const;
@@ -126,7 +126,6 @@ private:
     void paintGhosts(QPainter& painter) const;
     void paintHandle(QPainter& painter) const;
     void paintDragBox(QPainter& painter) const;
-    void paintMessage(QPainter& painter) const;
 
     // Hands and keys.
     void setHover(int unit, bool handle);

@@ -19,12 +19,6 @@ constexpr double kNowhere = std::numeric_limits<double>::quiet_NaN();
 
 QRectF around(QPointF at, double r) { return {at.x() - r, at.y() - r, 2 * r, 2 * r}; }
 
-/// The horizontal strip between two heights, lines included.
-QRect strip(const QRectF& area, double y1, double y2)
-{
-    return QRectF(QPointF(area.left(), std::min(y1, y2) - 3), QPointF(area.right(), std::max(y1, y2) + 3)).toAlignedRect();
-}
-
 QString claimWords(const Measurement& m)
 {
     return modelUnits(m.model) == Among::onOffer ? LadderPlot::tr("floor not on sale %1") : LadderPlot::tr("floor not asked %1");
@@ -96,7 +90,24 @@ void LadderPlot::layOutBandLabels(Scene& scene, LabelRoom& room)
             in.shapeText = tr("thin low end %1").arg(moneyText(*m.gap.shapePart, currency));
     }
     scene.expectedY = in.expectedY;
-    layOutBand(in, QFontMetricsF(font()), QFontMetricsF(strongFont()), room, scene.band);
+    const QFontMetricsF strong(strongFont());
+    layOutBand(in, QFontMetricsF(font()), strong, room, scene.band);
+    if (!m.gap.gap) {
+        // The reading line says why; here a word is enough.
+        const QString word = reading(m, currency).headline;
+        const QSizeF size(std::ceil(strong.horizontalAdvance(word)) + 8, std::ceil(strong.height()));
+        const QRectF& in0 = room.area();
+        std::vector<QRectF> wanted;
+        for (const double x : {in0.right() - 8 - size.width(), in0.left() + 8, in0.center().x() - 0.5 * size.width()}) {
+            for (const double y : {in.floorY - 8 - size.height(), in0.top() + 8, in0.center().y(), in0.bottom() - 8 - size.height()})
+                wanted.emplace_back(QPointF(x, y), size);
+        }
+        const QRectF rect = room.choose(wanted);
+        if (!rect.isNull()) {
+            room.take(rect);
+            scene.band.labels.push_back({word, rect, PlacedLabel::Tone::ink, true, PlacedLabel::Backing::paper});
+        }
+    }
 }
 
 QStringList LadderPlot::dragText(std::uint32_t unit) const
@@ -126,7 +137,7 @@ QStringList LadderPlot::dragText(std::uint32_t unit) const
         lines << QString::fromUtf8(reason.data(), static_cast<qsizetype>(reason.size()));
     }
     if (m_bench->holdsTotal() && m_bench->leftOver() != Price{})
-        lines << tr("asking total %1").arg(signedMoneyText(static_cast<double>(m_bench->leftOver().minor), currency));
+        lines << tr("no room left: asking total %1").arg(signedMoneyText(static_cast<double>(m_bench->leftOver().minor), currency));
     return lines;
 }
 
@@ -147,35 +158,40 @@ void LadderPlot::layOutDragBox(Scene& scene, LabelRoom& room) const
     scene.dragBox = placeBeside(rungPosition(static_cast<std::uint32_t>(unit)), size, m_size.half + 10, room);
 }
 
-QRegion LadderPlot::changedRegion(const Scene& from, const Scene& to) const
+QRect LadderPlot::changedRect(const Scene& from, const Scene& to) const
 {
-    QRegion region;
-    const auto add = [&region](const QRectF& rect) {
-        if (!rect.isEmpty())
-            region += rect.adjusted(-2, -2, 2, 2).toAlignedRect();
-    };
+    // One rectangle, for the raster engine is slow at drawing clipped to a region of many, and copying paper is quick.
+    QRectF changed;
     const QRectF in = area();
-    const auto addLine = [&](double y1, double y2) {
-        if (std::isnan(y1) && std::isnan(y2))
-            return;
-        region += strip(in, std::isnan(y1) ? in.bottom() : y1, std::isnan(y2) ? in.bottom() : y2);
+    const auto addStrip = [&](double y1, double y2) {
+        const double top = std::isnan(y1) || std::isnan(y2) ? in.top() : std::min(y1, y2);
+        const double bottom = std::isnan(y1) || std::isnan(y2) ? in.bottom() : std::max(y1, y2);
+        changed |= QRectF(QPointF(in.left(), top - 3), QPointF(in.right(), bottom + 3));
     };
-    if (!(from.expectedY == to.expectedY))
-        addLine(from.expectedY, to.expectedY);
+    const auto hatchTop = [&](const Scene& scene) { return scene.band.hatched.isNull() ? in.bottom() : scene.band.hatched.top(); };
+    if (!(from.expectedY == to.expectedY) && !(std::isnan(from.expectedY) && std::isnan(to.expectedY)))
+        addStrip(from.expectedY, to.expectedY);
     if (from.band.hatched != to.band.hatched)
-        addLine(from.band.hatched.isNull() ? in.bottom() : from.band.hatched.top(),
-                to.band.hatched.isNull() ? in.bottom() : to.band.hatched.top());
-    for (const Scene* scene : {&from, &to}) {
-        for (const PlacedLabel& label : scene->band.labels)
-            add(label.rect);
-        add(scene->movers);
-        add(scene->dragBox);
-        if (!scene->handle.isNull())
-            add(QRectF(scene->handle, QSizeF(1, 1)).adjusted(-32, -40, 32, 40));
-        if (!scene->band.bracket.isNull())
-            add(QRectF(scene->band.bracket.p1(), scene->band.bracket.p2()).normalized().adjusted(-5, -2, 5, 2));
+        addStrip(hatchTop(from), hatchTop(to));
+    for (std::size_t i = 0; i < std::max(from.band.labels.size(), to.band.labels.size()); ++i) {
+        const PlacedLabel* was = i < from.band.labels.size() ? &from.band.labels[i] : nullptr;
+        const PlacedLabel* is = i < to.band.labels.size() ? &to.band.labels[i] : nullptr;
+        if (was && is && was->rect == is->rect && was->text == is->text && was->backing == is->backing)
+            continue;
+        if (was)
+            changed |= was->rect;
+        if (is)
+            changed |= is->rect;
     }
-    return region & rect();
+    for (const Scene* scene : {&from, &to}) {
+        changed |= scene->movers;
+        changed |= scene->dragBox;
+        if (from.handle != to.handle && !scene->handle.isNull())
+            changed |= QRectF(scene->handle, QSizeF(1, 1)).adjusted(-32, -40, 32, 40);
+        if (from.band.bracket != to.band.bracket && !scene->band.bracket.isNull())
+            changed |= QRectF(scene->band.bracket.p1(), scene->band.bracket.p2()).normalized().adjusted(-5, -2, 5, 2);
+    }
+    return changed.adjusted(-2, -2, 2, 2).toAlignedRect() & rect();
 }
 
 // Bending ----------------------------------------------------------------------------------------------------------------

@@ -33,17 +33,23 @@ namespace
 const QString kMarksLayer = QStringLiteral("marks");
 }
 
-PaperPlot::PaperPlot(QWidget* parent) : QCustomPlot(parent), m_look(&Look::of(this))
+PaperPlot::PaperPlot(QWidget* parent, Marks marks) : QCustomPlot(parent), m_look(&Look::of(this))
 {
     setSelectionRect(nullptr); // Lives on the overlay layer, whose full-size buffer nothing here uses.
     removeLayer(layer(QStringLiteral("overlay")));
-    addLayer(kMarksLayer, layer(QStringLiteral("legend")));
-    layer(kMarksLayer)->setMode(QCPLayer::lmBuffered);
-    // In the order they are drawn; `below` and `above` draw nothing into the buffer, see drawPart().
-    new PaperPart(this, QStringLiteral("legend"), Part::frame);
-    new PaperPart(this, kMarksLayer, Part::below);
-    new PaperPart(this, kMarksLayer, Part::marks);
-    new PaperPart(this, kMarksLayer, Part::above);
+    const QString frameLayer = QStringLiteral("legend");
+    QString topLayer = frameLayer;
+    if (marks == Marks::buffered) {
+        addLayer(kMarksLayer, layer(frameLayer));
+        layer(kMarksLayer)->setMode(QCPLayer::lmBuffered);
+        topLayer = kMarksLayer;
+    }
+    // In the order they are drawn; `below` and `above` draw nothing into buffers, see drawPart().
+    new PaperPart(this, QStringLiteral("background"), Part::paper);
+    new PaperPart(this, frameLayer, Part::frame);
+    new PaperPart(this, topLayer, Part::below);
+    new PaperPart(this, topLayer, Part::marks);
+    new PaperPart(this, topLayer, Part::above);
     setPlottingHint(QCP::phImmediateRefresh, false);
     axisRect()->setAutoMargins(QCP::msNone);
     for (QCPAxis* axis : {xAxis2, yAxis2})
@@ -114,6 +120,10 @@ void PaperPlot::changeEvent(QEvent* event)
 void PaperPlot::drawPart(Part part, QCPPainter& painter)
 {
     switch (part) {
+    case Part::paper:
+        // Makes the lowest paint buffer opaque: laying it down is then as quick as copying.
+        painter.fillRect(viewport(), m_look->paper);
+        break;
     case Part::frame:
         paintFrame(painter);
         break;
@@ -170,21 +180,19 @@ void PaperPlot::paintEvent(QPaintEvent* event)
         setBufferDevicePixelRatio(devicePixelRatioF());
         redrawAll();
     }
-    if (mPaintBuffers.isEmpty() || hasInvalidatedPaintBuffers()) {
+    if (mPaintBuffers.isEmpty() || hasInvalidatedPaintBuffers())
         redrawAll();
-    } else if (m_marksStale) {
+    else if (m_marksStale)
         redrawMarks();
-    }
     QCPPainter painter(this);
-    painter.fillRect(event->rect(), m_look->paper);
+    if (mPaintBuffers.isEmpty())
+        painter.fillRect(event->rect(), m_look->paper);
     for (qsizetype i = 0; i < mPaintBuffers.size(); ++i) {
-        const bool last = i + 1 == mPaintBuffers.size();
-        if (last)
-            paintBelow(painter);
         mPaintBuffers.at(i)->draw(&painter);
-        if (last)
-            paintAbove(painter);
+        if (i == 0)
+            paintBelow(painter);
     }
+    paintAbove(painter);
 }
 
 // Pictures -------------------------------------------------------------------------------------------------------------

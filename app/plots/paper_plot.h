@@ -29,7 +29,9 @@ class PaperPlot : public QCustomPlot
 {
     Q_OBJECT
 public:
-    explicit PaperPlot(QWidget* parent = nullptr);
+    /// Without marks there is one paint buffer less to lay over the paper at every paint.
+    enum class Marks { none, buffered };
+    explicit PaperPlot(QWidget* parent, Marks marks);
 
     const Look& look() const { return *m_look; }
     /// Where the data lie, in widget pixels.
@@ -90,7 +92,7 @@ protected:
 
 private:
     friend class PaperPart;
-    enum class Part { frame, below, marks, above };
+    enum class Part { paper, frame, below, marks, above };
     void drawPart(Part part, QCPPainter& painter);
     void redrawMarks();
     QSize pictureSize() const;

@@ -13,7 +13,7 @@
 namespace rungwright
 {
 
-SideBySidePlot::SideBySidePlot(QWidget* parent) : PaperPlot(parent), m_priceTicks(QSharedPointer<MoneyTicks>::create())
+SideBySidePlot::SideBySidePlot(QWidget* parent) : PaperPlot(parent, Marks::buffered), m_priceTicks(QSharedPointer<MoneyTicks>::create())
 {
     setObjectName(QStringLiteral("sideBySidePlot"));
     setAccessibleName(tr("Ladders side by side"));

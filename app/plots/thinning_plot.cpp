@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "thinning_plot.h"
 
+#include "curve_paint.h"
 #include "plot_words.h"
 #include "wording.h"
 
@@ -16,7 +17,7 @@ namespace rungwright
 {
 
 ThinningPlot::ThinningPlot(QWidget* parent) :
-    PaperPlot(parent), m_gapTicks(QSharedPointer<MoneyTicks>::create()), m_leftTicks(QSharedPointer<CountTicks>::create())
+    PaperPlot(parent, Marks::none), m_gapTicks(QSharedPointer<MoneyTicks>::create()), m_leftTicks(QSharedPointer<CountTicks>::create())
 {
     setObjectName(QStringLiteral("thinningPlot"));
     setAccessibleName(tr("Thinning"));
@@ -141,15 +142,20 @@ void ThinningPlot::build(const std::vector<double>& gaps, QPolygonF& line, std::
     const double x0 = xAxis->coordToPixel(0);
     const double y0 = yAxis->coordToPixel(0);
     bool open = false;
+    CurveBuilder curve(line);
     for (std::size_t i = 0; i < gaps.size(); ++i) {
         if (std::isnan(gaps[i])) {
             open = false;
             continue;
         }
-        if (!open)
+        const QPointF point(x0 + dx * static_cast<double>(i + 1), y0 + dy * gaps[i]);
+        if (open) {
+            curve.add(point);
+        } else {
             starts.push_back(line.size());
+            curve.begin(point);
+        }
         open = true;
-        line << QPointF(x0 + dx * static_cast<double>(i + 1), y0 + dy * gaps[i]);
     }
 }
 
@@ -226,17 +232,17 @@ void ThinningPlot::paintFrame(QPainter& painter)
     painter.restore();
 }
 
-void ThinningPlot::paintCurve(QPainter& painter, const QPolygonF& line, const std::vector<qsizetype>& starts, const QPen& pen) const
+void ThinningPlot::paintStretches(QPainter& painter, const QPolygonF& line, const std::vector<qsizetype>& starts, const QPen& pen) const
 {
-    painter.setPen(pen);
-    painter.setBrush(Qt::NoBrush);
     for (std::size_t i = 0; i < starts.size(); ++i) {
         const qsizetype from = starts[i];
         const qsizetype to = i + 1 < starts.size() ? starts[i + 1] : line.size();
         if (to - from == 1) { // A single defined value still shows.
+            painter.setPen(pen);
+            painter.setBrush(Qt::NoBrush);
             painter.drawEllipse(line[from], 1.5, 1.5);
         } else {
-            painter.drawPolyline(line.constData() + from, static_cast<int>(to - from));
+            paintCurve(painter, line.constData() + from, to - from, pen);
         }
     }
 }
@@ -245,22 +251,20 @@ void ThinningPlot::paintBelow(QPainter& painter)
 {
     if (!shows())
         return;
-    painter.save();
-    painter.setRenderHint(QPainter::Antialiasing, true);
-    painter.setPen(Qt::NoPen);
-    painter.setBrush(look().gapFill);
     const double zero = std::clamp(yAxis->coordToPixel(0), area().top(), area().bottom());
-    QPolygonF fill;
+    m_fill.clear();
     for (std::size_t i = 0; i < m_workedStarts.size(); ++i) {
         const qsizetype from = m_workedStarts[i];
         const qsizetype to = i + 1 < m_workedStarts.size() ? m_workedStarts[i + 1] : m_worked.size();
-        fill.clear();
-        fill << QPointF(m_worked[from].x(), zero);
-        for (qsizetype j = from; j < to; ++j)
-            fill << m_worked[j];
-        fill << QPointF(m_worked[to - 1].x(), zero);
-        painter.drawPolygon(fill);
+        appendFill(m_worked.constData() + from, to - from, zero, m_fill);
     }
+    if (m_fill.empty())
+        return;
+    painter.save();
+    painter.setRenderHint(QPainter::Antialiasing, false);
+    painter.setPen(Qt::NoPen);
+    painter.setBrush(look().gapFill);
+    painter.drawRects(m_fill.data(), static_cast<int>(m_fill.size()));
     painter.restore();
 }
 
@@ -271,8 +275,8 @@ void ThinningPlot::paintAbove(QPainter& painter)
     painter.save();
     painter.setRenderHint(QPainter::Antialiasing, true);
     if (m_bench->candidate() >= 0)
-        paintCurve(painter, m_current, m_currentStarts, QPen(look().trace, 1.2));
-    paintCurve(painter, m_worked, m_workedStarts, QPen(look().gapLine, 1.8));
+        paintStretches(painter, m_current, m_currentStarts, QPen(look().trace, 1.2));
+    paintStretches(painter, m_worked, m_workedStarts, QPen(look().gapLine, 1.8));
     if (!m_knob.isNull()) {
         const bool canMove = movable();
         const bool held = m_dragging || m_hover;

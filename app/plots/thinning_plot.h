@@ -59,7 +59,7 @@ private:
     std::pair<double, double> heightsBetween(double from, double to) const;
     int leftAt(double x) const;
     void setLeft(int left);
-    void paintCurve(QPainter& painter, const QPolygonF& line, const std::vector<qsizetype>& starts, const QPen& pen) const;
+    void paintStretches(QPainter& painter, const QPolygonF& line, const std::vector<qsizetype>& starts, const QPen& pen) const;
 
     QPointer<Workbench> m_bench;
     QSharedPointer<MoneyTicks> m_gapTicks;
@@ -68,6 +68,7 @@ private:
     std::vector<qsizetype> m_workedStarts;
     QPolygonF m_current;
     std::vector<qsizetype> m_currentStarts;
+    std::vector<QRectF> m_fill;
     QPointF m_knob;
     QRectF m_label;
     QString m_labelText;
