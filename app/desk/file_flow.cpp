@@ -73,7 +73,9 @@ FileFlow::FileFlow(Document& document, Questions& questions, QSettings& settings
 FileFlow::~FileFlow()
 {
     cancelLoading();
-    m_watcher.waitForFinished();
+    // Only while it runs: a future whose result was taken never says that it is finished.
+    if (m_loading)
+        m_watcher.waitForFinished();
 }
 
 void FileFlow::cancelLoading()
@@ -100,15 +102,21 @@ void FileFlow::askImport()
 
 void FileFlow::open(const QString& path)
 {
-    if (m_loading || !mayLeave())
+    if (m_loading)
         return;
+    if (!mayLeave() || !begin(path))
+        emit done();
+}
+
+bool FileFlow::begin(const QString& path)
+{
     m_recovering = false;
     if (m_autosave.openElsewhere(path)) {
         const int answer = m_questions.choose(m_window, tr("“%1” is open in another window.").arg(QFileInfo(path).fileName()),
                                               tr("If both windows save, the later one overwrites the earlier one."),
                                               {tr("Open it all the same"), tr("Cancel")});
         if (answer != 0)
-            return;
+            return false;
     } else if (const auto left = m_autosave.leftBehind(path)) {
         const QString when = QLocale().toString(left->when, QLocale::ShortFormat);
         const int answer = m_questions.choose(m_window, tr("There is unsaved work on “%1” from %2.").arg(QFileInfo(path).fileName(), when),
@@ -116,15 +124,16 @@ void FileFlow::open(const QString& path)
                                                  "file itself stays as it is until you save."),
                                               {tr("Recover the unsaved work"), tr("Open the file as saved"), tr("Cancel")});
         if (answer == 2)
-            return;
+            return false;
         if (answer == 0) {
             m_recovering = true;
             m_recoverFor = path;
             load(left->copyPath, {});
-            return;
+            return true;
         }
     }
     load(path, {});
+    return true;
 }
 
 bool FileFlow::offerLeftBehind()

@@ -67,6 +67,8 @@ signals:
     void done();
 
 private:
+    /// Asks what must be asked before a file is opened, and starts reading; false when the user gave up.
+    bool begin(const QString& path);
     void load(const QString& path, const UnitListOptions& options);
     void loaded(const QString& path, const UnitListOptions& options, LoadedFile file);
     void takeScenario(Scenario scenario, const QString& path, bool saved);

@@ -153,8 +153,9 @@ void MainWindow::tell(const QString& sentence)
 void MainWindow::showSaveState()
 {
     const bool empty = m_document.empty();
-    setWindowModified(!empty && m_document.modified());
     setWindowTitle(empty ? tr("Rungwright") : tr("%1[*] – Rungwright").arg(m_document.displayName()));
+    if (!empty)
+        setWindowModified(m_document.modified());
     if (empty)
         m_saveState->clear();
     else if (m_document.modified())

@@ -46,8 +46,10 @@ QString parts(const Measurement& m, const Currency& currency, const QLocale& loc
     if (claim < 0 && shows(claim) && shows(shape))
         said << tr("%1 because the low end is thin, less %2 because the lowest price is below the advert")
                     .arg(moneyText(shape, currency, locale), moneyText(-claim, currency, locale));
-    else if (shows(shape))
+    else if (shape > 0 && shows(shape))
         said << tr("%1 because the low end is thin").arg(moneyText(shape, currency, locale));
+    else if (shows(shape)) // only the fitted range: a smooth curve begins at the floor, whatever is on offer
+        said << tr("less %1 because the fitted curve reaches below the lowest price").arg(moneyText(-shape, currency, locale));
     return said.join(tr(", "));
 }
 

@@ -66,7 +66,14 @@ public:
             qFatal("the window did not come up");
     }
 
-    static QString sample(const char* name) { return QStringLiteral(RUNGWRIGHT_SAMPLES "/") + QString::fromLatin1(name); }
+    /// A copy of a sample: the desk keeps unsaved work beside the file it opens.
+    QString sample(const char* name)
+    {
+        const QString copy = folder.filePath(QString::fromLatin1(name));
+        if (!QFile::exists(copy) && !QFile::copy(QStringLiteral(RUNGWRIGHT_SAMPLES "/") + QString::fromLatin1(name), copy))
+            qFatal("no such sample: %s", name);
+        return copy;
+    }
 
     /// Opens a file and waits until it is on the desk (or refused).
     bool open(const QString& path)

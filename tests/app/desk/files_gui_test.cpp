@@ -24,7 +24,7 @@ private slots:
     void aDroppedListWithRefusedRowsIsTakenWithoutThem();
     void givingUpOnRefusedRowsLosesNothing();
     void theSheetIsWrittenReadBackAndEqual();
-    void aFullDiskIsSaidAndNothingIsLost();
+    void anUnwritablePlaceIsSaidAndNothingIsLost();
     void leavingAsksAboutUnsavedWork();
     void workLeftBehindIsRecovered();
     void brokenFilesAreExplained_data();
@@ -55,7 +55,7 @@ private:
 
 void FilesGuiTest::aCleanListIsImported()
 {
-    QVERIFY(desk().open(DeskFixture::sample("import-2400-units.csv")));
+    QVERIFY(desk().open(desk().sample("import-2400-units.csv")));
     QTRY_VERIFY(!desk().window->document().empty());
     qsizetype units = 0;
     for (const TierCase& tier : desk().window->document().scenario().tiers)
@@ -68,7 +68,7 @@ void FilesGuiTest::aCleanListIsImported()
 void FilesGuiTest::aDroppedListWithRefusedRowsIsTakenWithoutThem()
 {
     QMimeData data;
-    data.setUrls({QUrl::fromLocalFile(DeskFixture::sample("with-refused-rows.csv"))});
+    data.setUrls({QUrl::fromLocalFile(desk().sample("with-refused-rows.csv"))});
     const QPoint at(400, 400);
     QDragEnterEvent enter(at, Qt::CopyAction, &data, Qt::LeftButton, Qt::NoModifier);
     QApplication::sendEvent(desk().window.get(), &enter);
@@ -88,9 +88,9 @@ void FilesGuiTest::aDroppedListWithRefusedRowsIsTakenWithoutThem()
 
 void FilesGuiTest::givingUpOnRefusedRowsLosesNothing()
 {
-    QVERIFY(desk().open(DeskFixture::sample("quillmere-storage.rungs.json")));
+    QVERIFY(desk().open(desk().sample("quillmere-storage.rungs.json")));
     const QByteArray before = scenarioToJson(desk().window->document().scenario());
-    QVERIFY(desk().open(DeskFixture::sample("with-refused-rows.csv")));
+    QVERIFY(desk().open(desk().sample("with-refused-rows.csv")));
     QTRY_VERIFY(dialog("RefusedRowsDialog"));
     QTest::keyClick(dialog("RefusedRowsDialog"), Qt::Key_Escape);
     QTRY_VERIFY(!dialog("RefusedRowsDialog"));
@@ -99,7 +99,7 @@ void FilesGuiTest::givingUpOnRefusedRowsLosesNothing()
 
 void FilesGuiTest::theSheetIsWrittenReadBackAndEqual()
 {
-    QVERIFY(desk().open(DeskFixture::sample("quillmere-storage.rungs.json")));
+    QVERIFY(desk().open(desk().sample("quillmere-storage.rungs.json")));
     desk().bench().workOn(-1);
     const auto unit = desk().unitOnOffer(0);
     DeskFixture::drag(desk().ladder(), desk().rung(unit), desk().rung(unit) + QPoint(0, 40));
@@ -112,7 +112,7 @@ void FilesGuiTest::theSheetIsWrittenReadBackAndEqual()
     QVERIFY(cautioned);
     const QString path = desk().folder.filePath(QStringLiteral("sheet.csv"));
     desk().questions.nextPath = path;
-    auto* save = dialog("SheetDialog")->findChild<QPushButton*>(QStringLiteral("saveSheetButton"));
+    auto* save = dialog("SheetDialog")->findChild<QPushButton*>(QStringLiteral("saveButton"));
     QVERIFY(save);
     QTest::mouseClick(save, Qt::LeftButton);
     QFile file(path);
@@ -130,12 +130,11 @@ void FilesGuiTest::theSheetIsWrittenReadBackAndEqual()
     QTest::keyClick(dialog("SheetDialog"), Qt::Key_Escape);
 }
 
-void FilesGuiTest::aFullDiskIsSaidAndNothingIsLost()
+void FilesGuiTest::anUnwritablePlaceIsSaidAndNothingIsLost()
 {
-    QVERIFY(desk().open(DeskFixture::sample("quillmere-storage.rungs.json")));
+    QVERIFY(desk().open(desk().sample("quillmere-storage.rungs.json")));
     desk().window->document().copyCandidate(desk().bench().tier(), -1);
-    desk().questions.nextPath = QStringLiteral("/dev/full");
-    desk().questions.answers = {0};
+    desk().questions.nextPath = desk().folder.filePath(QStringLiteral("no/such/folder/a.rungs.json"));
     QVERIFY(!desk().window->files().saveAs());
     QCOMPARE(desk().questions.told.size(), 1);
     QVERIFY(desk().window->document().modified());
@@ -143,7 +142,7 @@ void FilesGuiTest::aFullDiskIsSaidAndNothingIsLost()
 
 void FilesGuiTest::leavingAsksAboutUnsavedWork()
 {
-    QVERIFY(desk().open(DeskFixture::sample("quillmere-storage.rungs.json")));
+    QVERIFY(desk().open(desk().sample("quillmere-storage.rungs.json")));
     desk().window->document().copyCandidate(desk().bench().tier(), -1);
     desk().questions.answers = {2}; // Cancel
     QVERIFY(!desk().window->close());
@@ -159,7 +158,7 @@ void FilesGuiTest::leavingAsksAboutUnsavedWork()
 void FilesGuiTest::workLeftBehindIsRecovered()
 {
     const QString path = desk().folder.filePath(QStringLiteral("a.rungs.json"));
-    auto scenario = loadScenario(DeskFixture::sample("quillmere-storage.rungs.json"));
+    auto scenario = loadScenario(desk().sample("quillmere-storage.rungs.json"));
     QVERIFY(scenario.ok() && saveScenario(scenario.value(), path).ok());
     // What a crash leaves: the copy beside the file.
     Scenario unsaved = scenario.value();

@@ -38,7 +38,7 @@ private:
 void GesturesGuiTest::init()
 {
     m_desk = std::make_unique<DeskFixture>();
-    QVERIFY(desk().open(DeskFixture::sample("quillmere-storage.rungs.json")));
+    QVERIFY(desk().open(desk().sample("quillmere-storage.rungs.json")));
     QVERIFY(desk().bench().tierCase());
     desk().bench().workOn(-1);
     QVERIFY(desk().bench().worked().onOffer >= 5);
