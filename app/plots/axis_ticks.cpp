@@ -28,14 +28,20 @@ double MoneyTicks::getTickStep(const QCPRange& range)
     return m_step;
 }
 
-QString MoneyTicks::getTickLabel(double tick, const QLocale&, QChar, int)
+QString MoneyTicks::text(double tick, double step) const
 {
-    // Not the plot's locale: QCustomPlot takes the grouping out of it.
-    const double major = static_cast<double>(m_currency.minorPerMajor());
-    if (m_step >= major)
-        return numberText(std::round(tick / major), 0);
-    return moneyText(tick, m_currency);
+    const auto major = static_cast<double>(m_currency.minorPerMajor());
+    return step >= major ? numberText(std::round(tick / major), 0) : moneyText(tick, m_currency);
 }
+
+double MoneyTicks::widest(const QCPRange& range, const QFontMetricsF& metrics) const
+{
+    const double step = roundStep(range.size() * m_apart);
+    return std::max(metrics.horizontalAdvance(text(range.lower, step)), metrics.horizontalAdvance(text(range.upper, step)));
+}
+
+// Not in the plot's locale: QCustomPlot takes the grouping out of it.
+QString MoneyTicks::getTickLabel(double tick, const QLocale&, QChar, int) { return text(tick, m_step); }
 
 double CountTicks::getTickStep(const QCPRange& range) { return roundStep(range.size() * m_apart); }
 

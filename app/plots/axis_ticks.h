@@ -17,12 +17,17 @@ public:
     /// Numbers stand at least `pixels` apart on an axis `length` pixels long.
     void setSpacing(double length, double pixels) { m_apart = pixels / (length > pixels ? length : pixels); }
 
+    /// Pixels that the widest number of such a range takes.
+    double widest(const QCPRange& range, const QFontMetricsF& metrics) const;
+
 protected:
     double getTickStep(const QCPRange& range) override;
     int getSubTickCount(double) override { return 0; }
     QString getTickLabel(double tick, const QLocale& locale, QChar formatChar, int precision) override;
 
 private:
+    QString text(double tick, double step) const;
+
     Currency m_currency;
     double m_apart = 0.2; ///< Least share of the range from one number to the next.
     double m_step = 1;

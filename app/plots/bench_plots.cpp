@@ -24,7 +24,7 @@ BenchPlots::BenchPlots(QWidget* parent) :
     setObjectName(QStringLiteral("benchPlots"));
     setMinimumSize(600, 380);
     setSizePolicy(QSizePolicy::Expanding, QSizePolicy::Expanding);
-    connect(m_ladder, &LadderPlot::priceRangeChanged, m_curtain, &CurtainPlot::setPriceRange);
+    connect(m_ladder, &LadderPlot::priceRangeChanged, this, &BenchPlots::takePriceRange);
     setTabOrder(m_ladder, m_thinning);
     setFocusProxy(m_ladder);
     layOut();
@@ -54,10 +54,10 @@ BenchPlots::Places BenchPlots::placesIn(QSize size) const
             QRect(0, upper, size.width(), thinning)};
 }
 
-void BenchPlots::setMargins(const Places& places)
+void BenchPlots::setMargins()
 {
     const int line = QFontMetrics(font()).height();
-    const int rows = m_ladder->headingRows(places.ladder.width() - 16);
+    const int rows = m_ladder->headingRows(m_places.ladder.width() - 16);
     const int heading = kHeadingTop + qCeil(LadderLegend::height(rows, font())) + 8;
     const int under = line + 6 + kUnder;
     const int left = std::max(m_ladder->numbersWidth(), m_thinning->numbersWidth());
@@ -68,13 +68,23 @@ void BenchPlots::setMargins(const Places& places)
 
 void BenchPlots::layOut()
 {
-    const Places places = placesIn(size());
-    setMargins(places);
-    m_ladder->setGeometry(places.ladder);
-    m_curtain->setGeometry(places.curtain);
-    m_thinning->setGeometry(places.thinning);
+    m_places = placesIn(size());
+    setMargins();
+    m_ladder->setGeometry(m_places.ladder);
+    m_curtain->setGeometry(m_places.curtain);
+    m_thinning->setGeometry(m_places.thinning);
     for (PaperPlot* plot : {static_cast<PaperPlot*>(m_ladder), static_cast<PaperPlot*>(m_curtain), static_cast<PaperPlot*>(m_thinning)})
         plot->redrawAll();
+}
+
+void BenchPlots::takePriceRange(const QCPRange& range)
+{
+    m_curtain->setPriceRange(range);
+    // Finer or longer numbers may want more room.
+    if (std::max(m_ladder->numbersWidth(), m_thinning->numbersWidth()) != m_ladder->areaMargins().left()) {
+        setMargins();
+        m_thinning->redrawAll();
+    }
 }
 
 void BenchPlots::resizeEvent(QResizeEvent* event)
@@ -87,13 +97,14 @@ void BenchPlots::changeEvent(QEvent* event)
 {
     QWidget::changeEvent(event);
     if (event->type() == QEvent::FontChange || event->type() == QEvent::StyleChange || event->type() == QEvent::LocaleChange)
-        layOut();
+        QMetaObject::invokeMethod(this, &BenchPlots::layOut, Qt::QueuedConnection); // The plots take the new font first.
 }
 
 void BenchPlots::paintInto(QCPPainter& painter, const QRect& where)
 {
-    const Places places = placesIn(where.size());
-    setMargins(places);
+    m_places = placesIn(where.size());
+    setMargins();
+    const Places places = m_places;
     // The ladder first: it sets the price range for its height, which the curtain takes over.
     m_ladder->paintInto(painter, places.ladder.translated(where.topLeft()));
     m_curtain->paintInto(painter, places.curtain.translated(where.topLeft()));

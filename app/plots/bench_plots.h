@@ -36,10 +36,12 @@ private:
     };
     Places placesIn(QSize size) const;
     /// The same heading and numbers margins for plots that share an axis, from what is on them.
-    void setMargins(const Places& places);
+    void setMargins();
     void layOut();
+    void takePriceRange(const QCPRange& range);
 
     Workbench* m_bench = nullptr;
+    Places m_places;
     LadderPlot* m_ladder;
     CurtainPlot* m_curtain;
     ThinningPlot* m_thinning;

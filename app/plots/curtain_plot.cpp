@@ -135,9 +135,10 @@ void CurtainPlot::paintAbove(QPainter& painter)
     const double floorY = frame().y(static_cast<double>(m_bench->worked().advertisedFloor.minor));
     if (floorY >= area().top() && floorY <= area().bottom())
         paintFloorLine(painter, area().left(), area().right(), floorY, look());
+    const Qt::PenCapStyle cap = m_bench->worked().model == ModelKind::fitted ? Qt::FlatCap : Qt::SquareCap;
     if (m_bench->candidate() >= 0)
-        m_current.paintLine(painter, QPen(look().trace, 1.2));
-    m_worked.paintLine(painter, QPen(look().gapLine, 1.8, Qt::SolidLine, Qt::FlatCap, Qt::MiterJoin));
+        m_current.paintLine(painter, QPen(look().trace, 1.2, Qt::SolidLine, cap, Qt::MiterJoin));
+    m_worked.paintLine(painter, QPen(look().gapLine, 1.8, Qt::SolidLine, cap, Qt::MiterJoin));
     if (!m_label.isNull()) {
         painter.setFont(font());
         painter.setPen(look().ink);

@@ -67,9 +67,7 @@ void paintCurve(QPainter& painter, const QPointF* points, qsizetype count, const
         painter.drawPolyline(points, static_cast<int>(count));
         return;
     }
-    QPen strokes = pen;
-    strokes.setCapStyle(Qt::SquareCap); // Strokes overlap at the corners.
-    painter.setPen(strokes);
+    painter.setPen(pen);
     static thread_local std::vector<QLineF> lines;
     lines.clear();
     for (qsizetype i = 1; i < count; ++i)

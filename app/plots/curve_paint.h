@@ -29,8 +29,9 @@ private:
     double m_high = 0;
 };
 
-/// A line through `count` points. On the screen as single strokes: as one outline the raster engine takes quadratic time in the width of
-/// a flat curve, for it looks up each pixel of a row in a list.
+/// A line through `count` points. The pen's cap: square where the curve has corners, flat where it is smooth. On the screen as single
+/// strokes: as one outline the raster engine takes quadratic time in the width of a flat curve, for it looks up each pixel of a row in a
+/// list.
 void paintCurve(QPainter& painter, const QPointF* points, qsizetype count, const QPen& pen);
 
 /// The area between a curve (x never going back) and the height `base`, as rectangles a whole number of pixels wide; neighbours of equal

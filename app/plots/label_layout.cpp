@@ -181,6 +181,8 @@ QRectF placeBeside(QPointF at, QSizeF size, double distance, const LabelRoom& ro
     const double w = size.width();
     const double h = size.height();
     const double middle = at.y() - 0.5 * h;
+    const QRectF& in = room.area();
+    const double over = std::clamp(at.x() - 0.5 * w, in.left() + 2, std::max(in.left() + 2, in.right() - 2 - w));
     const std::array wanted{
         QRectF(QPointF(at.x() + distance, middle), size),
         QRectF(QPointF(at.x() - distance - w, middle), size),
@@ -188,8 +190,8 @@ QRectF placeBeside(QPointF at, QSizeF size, double distance, const LabelRoom& ro
         QRectF(QPointF(at.x() - distance - w, at.y() - distance - h), size),
         QRectF(QPointF(at.x() + distance, at.y() + distance), size),
         QRectF(QPointF(at.x() - distance - w, at.y() + distance), size),
-        QRectF(QPointF(at.x() - 0.5 * w, at.y() - distance - h), size),
-        QRectF(QPointF(at.x() - 0.5 * w, at.y() + distance), size),
+        QRectF(QPointF(over, at.y() - distance - h), size),
+        QRectF(QPointF(over, at.y() + distance), size),
         QRectF(QPointF(at.x() + distance, at.y() - 2 * distance - 2 * h), size),
         QRectF(QPointF(at.x() - distance - w, at.y() - 2 * distance - 2 * h), size),
         QRectF(QPointF(at.x() - distance - w, at.y() + 2 * distance + h), size),

@@ -53,8 +53,9 @@ void LadderPlot::mousePressEvent(QMouseEvent* event)
         return;
     }
     event->accept();
-    if (m_hand != Hand::empty || m_bench->gesture() != Workbench::Gesture::none)
+    if (m_bench->gesture() != Workbench::Gesture::none)
         return;
+    m_hand = Hand::empty; // A release may have gone elsewhere.
     m_pressPos = event->position();
     m_pressPrice = priceAt(m_pressPos.y());
     m_lastBy = Price{};

@@ -21,7 +21,7 @@ void LadderPlot::paintFrame(QPainter& painter)
     m_legend.paint(painter, QRectF(8, kHeadingTop, viewport().width() - 16, 0), font(), strongFont(), look());
     painter.setFont(font());
     painter.setPen(look().faintInk);
-    painter.drawText(QRectF(area().left(), area().bottom() + 6, area().width() - 4, metrics.height()), Qt::AlignRight | Qt::AlignTop,
+    painter.drawText(QRectF(area().left(), area().bottom() + 5, area().width() - 4, metrics.height()), Qt::AlignRight | Qt::AlignTop,
                      tr("place on the ladder"));
 }
 
@@ -154,8 +154,8 @@ void LadderPlot::paintAbove(QPainter& painter)
         if (m_hover >= 0 && m_hand == Hand::empty && !exporting()) {
             painter.setRenderHint(QPainter::Antialiasing, true);
             painter.setBrush(Qt::NoBrush);
-            painter.setPen(QPen(look().ink, 1.2));
-            const double r = std::max(m_size.grip, 2.0) + 3.2;
+            painter.setPen(QPen(look().faintInk, 1)); // Thinner than a selection's ring, and without its paper.
+            const double r = std::max(m_size.grip, 2.0) + 4;
             painter.drawEllipse(rungPosition(static_cast<std::uint32_t>(m_hover)), r, r);
         }
         paintDragBox(painter);

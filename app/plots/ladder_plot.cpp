@@ -58,15 +58,7 @@ int LadderPlot::headingRows(int width) const { return m_legend.rows(width, font(
 
 int LadderPlot::numbersWidth() const
 {
-    if (!shows())
-        return 40;
-    const QCPRange range = yAxis->range();
-    const QFontMetricsF metrics(font());
-    // The axis writes decimals only on a fine step; taking them into account always keeps the margin still while zooming.
-    double widest = 0;
-    for (const double price : {range.lower, range.upper})
-        widest = std::max(widest, metrics.horizontalAdvance(moneyText(price, m_bench->currency())));
-    return static_cast<int>(std::ceil(widest)) + 14;
+    return shows() ? static_cast<int>(std::ceil(m_priceTicks->widest(yAxis->range(), QFontMetricsF(font())))) + 14 : 40;
 }
 
 // Following the workbench ------------------------------------------------------------------------------------------------

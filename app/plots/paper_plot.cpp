@@ -20,6 +20,8 @@ public:
     PaperPart(PaperPlot* plot, const QString& layer, PaperPlot::Part part) : QCPLayerable(plot, layer), m_plot(plot), m_part(part) {}
 
 protected:
+    /// QCustomPlot moves the clip up by a pixel; the paper goes down to the last one.
+    QRect clipRect() const override { return parentPlot()->viewport().adjusted(0, 0, 0, 2); }
     void applyDefaultAntialiasingHint(QCPPainter*) const override {}
     void draw(QCPPainter* painter) override { m_plot->drawPart(m_part, *painter); }
 

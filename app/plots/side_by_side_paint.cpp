@@ -140,7 +140,7 @@ void SideBySidePlot::paintColumn(QPainter& painter, const Side& side)
         paintExpectedLine(painter, side.ladder.left(), side.ladder.right(), expectedY, look());
     }
     paintFloorLine(painter, side.ladder.left(), side.curtain.right(), floorY, look());
-    side.shape.paintLine(painter, QPen(look().gapLine, 1.6, Qt::SolidLine, Qt::FlatCap, Qt::MiterJoin));
+    side.shape.paintLine(painter, QPen(look().gapLine, 1.6, Qt::SolidLine, Qt::SquareCap, Qt::MiterJoin));
 
     const double dx = side.rungs.empty() ? 0 : (side.ladder.width() - 2 * kInset) / static_cast<double>(side.rungs.size());
     std::vector<RungMark> marks;

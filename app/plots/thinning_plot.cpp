@@ -45,13 +45,7 @@ bool ThinningPlot::movable() const { return shows() && takesLeft(m_bench->settin
 
 int ThinningPlot::numbersWidth() const
 {
-    if (!shows())
-        return 40;
-    const QFontMetricsF metrics(font());
-    double widest = 0;
-    for (const double gap : {yAxis->range().lower, yAxis->range().upper})
-        widest = std::max(widest, metrics.horizontalAdvance(moneyText(gap, m_bench->currency())));
-    return static_cast<int>(std::ceil(widest)) + 14;
+    return shows() ? static_cast<int>(std::ceil(m_gapTicks->widest(yAxis->range(), QFontMetricsF(font())))) + 14 : 40;
 }
 
 void ThinningPlot::describe() { setAccessibleDescription(shows() ? thinningDescription(*m_bench) : QString()); }
@@ -221,7 +215,7 @@ void ThinningPlot::paintFrame(QPainter& painter)
     painter.setFont(font());
     painter.setPen(look().faintInk);
     painter.drawText(QPointF(8, kHeadingTop + metrics.ascent()), gapAxisTitle(m_bench->currency()));
-    painter.drawText(QRectF(area().left(), area().bottom() + 6, area().width() - 4, metrics.height()), Qt::AlignRight | Qt::AlignTop,
+    painter.drawText(QRectF(area().left(), area().bottom() + 5, area().width() - 4, metrics.height()), Qt::AlignRight | Qt::AlignTop,
                      tr("units left on offer"));
     if (!movable() && m_bench->worked().gap.gap) {
         const double left = 8 + metrics.horizontalAdvance(gapAxisTitle(m_bench->currency())) + 16;
@@ -275,8 +269,8 @@ void ThinningPlot::paintAbove(QPainter& painter)
     painter.save();
     painter.setRenderHint(QPainter::Antialiasing, true);
     if (m_bench->candidate() >= 0)
-        paintStretches(painter, m_current, m_currentStarts, QPen(look().trace, 1.2));
-    paintStretches(painter, m_worked, m_workedStarts, QPen(look().gapLine, 1.8));
+        paintStretches(painter, m_current, m_currentStarts, QPen(look().trace, 1.2, Qt::SolidLine, Qt::FlatCap));
+    paintStretches(painter, m_worked, m_workedStarts, QPen(look().gapLine, 1.8, Qt::SolidLine, Qt::FlatCap));
     if (!m_knob.isNull()) {
         const bool canMove = movable();
         const bool held = m_dragging || m_hover;

@@ -1,8 +1,12 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // The ladder by keyboard alone.
 #include "plot_fixture.h"
+#include "plot_words.h"
+#include "wording.h"
 
 #include <QSignalSpy>
+
+#include <cmath>
 
 using namespace rungwright;
 
@@ -89,6 +93,25 @@ private slots:
             moved += (before[i] - on.bench.workedPrices()[i]).minor;
         }
         QVERIFY(moved > 0);
+    }
+
+    void theToolTipTellsAUnit()
+    {
+        OnBench on(plain());
+        const std::uint32_t unit = on.onOffer(0); // The cheapest on offer.
+        const QString tip = unitToolTip(on.bench, unit);
+        const Unit& u = on.tier().units[unit];
+        QVERIFY(tip.contains(QString::fromStdString(u.name)));
+        QVERIFY(tip.contains(moneyText(u.asking, on.bench.currency())));
+        QVERIFY(tip.contains(QLatin1String("on offer")));
+        QVERIFY(tip.contains(QStringLiteral("grade %1").arg(*u.grade)));
+        // Perceived range: the cheapest of m rungs is found with chance 1 - ((m-1)/m)^N, N = m.
+        const auto m = static_cast<double>(on.bench.worked().onOffer);
+        QVERIFY(tip.contains(percentText(1 - std::pow((m - 1) / m, m), true)));
+        // Taken units are not on the model's ladder: no chance is claimed for them.
+        QVERIFY(!unitToolTip(on.bench, on.unitWhere([](const Unit& x) {
+                     return x.status == Status::occupied;
+                 })).contains(QLatin1String("chance")));
     }
 
     void theDescriptionSaysWhatIsSelected()

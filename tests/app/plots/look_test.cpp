@@ -117,6 +117,7 @@ private slots:
         QCOMPARE(&on.ladder().look(), &Look::night());
         const QImage night = on.plots.grab().toImage();
         QCOMPARE(night.pixelColor(2, 200), Look::night().paper);
+        QCOMPARE(night.pixelColor(300, night.height() - 1), Look::night().paper); // Down to the last row.
         // No pixel of the light paper is left anywhere.
         for (int y = 0; y < night.height(); y += 5) {
             for (int x = 0; x < night.width(); x += 5)
