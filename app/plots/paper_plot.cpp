@@ -82,9 +82,8 @@ void PaperPlot::setAxisLook(QCPAxis* axis, bool grid)
 {
     axis->setBasePen(Qt::NoPen);
     axis->setTickPen(Qt::NoPen);
-    axis->setSubTickPen(Qt::NoPen);
     axis->setSubTicks(false);
-    axis->setTickLength(0, 0);
+    axis->setTickLength(1, 0); // Of no length they would be dots in an SVG, pen or no pen.
     axis->setTickLabelFont(font());
     axis->setTickLabelColor(m_look->faintInk);
     axis->setTickLabelPadding(6);

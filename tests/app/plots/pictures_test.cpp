@@ -54,7 +54,8 @@ private:
             QVERIFY(renderer.isValid());
             QVERIFY(renderer.viewBoxF().width() >= least.width() && renderer.viewBoxF().height() >= least.height());
             QVERIFY(bytes.contains(word));
-            QVERIFY(bytes.contains("regulated")); // The caution.
+            QVERIFY(!bytes.contains("fill=\"#000000\" fill-opacity=\"1\" stroke=\"none\"")); // Nothing is drawn in a colour not ours.
+            QVERIFY(bytes.contains("regulated"));                                            // The caution.
         } else {
             QVERIFY(bytes.startsWith("%PDF"));
             QVERIFY(bytes.trimmed().endsWith("%%EOF"));
@@ -81,7 +82,7 @@ private slots:
         struct {
             PaperPlot* plot;
             QByteArray word;
-        } const all[] = {{&on.ladder(), "advertised floor"}, {on.plots.curtain(), "area = gap"}, {&on.thinning(), "units left on offer"}};
+        } const all[] = {{&on.ladder(), ">100<"}, {on.plots.curtain(), "area = gap"}, {&on.thinning(), ">20<"}}; // Axis numbers too.
         for (const auto& [plot, word] : all) {
             const QString path = folder.filePath(plot->objectName() + QLatin1Char('.') + ending);
             const Outcome<bool> saved = plot->savePlot(path);
