@@ -33,8 +33,9 @@ void chooseFont(QApplication& application)
 QPalette housePalette(bool dark)
 {
     const Look& look = dark ? Look::night() : Look::light();
-    const QColor window = dark ? look.paper.darker(112) : look.paper.darker(104);
-    const QColor button = dark ? look.paper.lighter(140) : look.paper.darker(106);
+    // The style draws outlines darker than the window: on a window as dark as the paper they would not be seen.
+    const QColor window = dark ? look.paper.lighter(145) : look.paper.darker(104);
+    const QColor button = dark ? look.paper.lighter(190) : look.paper.darker(106);
     QPalette palette(button, window);
     palette.setColor(QPalette::WindowText, look.ink);
     palette.setColor(QPalette::Text, look.ink);

@@ -97,7 +97,7 @@ void BenchPage::dressLabels()
 void BenchPage::changeEvent(QEvent* event)
 {
     QWidget::changeEvent(event);
-    if (event->type() == QEvent::ApplicationPaletteChange || event->type() == QEvent::FontChange)
+    if (event->type() == QEvent::PaletteChange || event->type() == QEvent::FontChange)
         dressLabels();
 }
 

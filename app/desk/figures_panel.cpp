@@ -4,6 +4,7 @@
 #include "look.h"
 #include "table_text.h"
 #include "ui_figures_panel.h"
+#include "wording.h"
 
 #include <QHeaderView>
 #include <QPainter>
@@ -47,12 +48,17 @@ FiguresPanel::FiguresPanel(Workbench& bench, QWidget* parent) : QWidget(parent),
     QHeaderView* header = table->horizontalHeader();
     header->setMinimumSectionSize(fontMetrics().averageCharWidth() * 4);
     header->setSectionResizeMode(FiguresModel::nameColumn, QHeaderView::Stretch);
+    int room = 0;
+    for (const FigureRow& row : figureRows())
+        room = qMax(room, fontMetrics().horizontalAdvance(tr(row.label)) + 8);
     for (const int column : {FiguresModel::currentColumn, FiguresModel::workedColumn, FiguresModel::changeColumn}) {
         header->setSectionResizeMode(column, QHeaderView::Interactive);
         const QString heading = m_model.headerData(column, Qt::Horizontal, Qt::DisplayRole).toString();
         const int figure = fontMetrics().horizontalAdvance(QStringLiteral("8,888.88")) + 12;
-        header->resizeSection(column, qMax(figure, fontMetrics().horizontalAdvance(heading) + 14));
+        header->resizeSection(column, qMax(figure, fontMetrics().horizontalAdvance(heading) + 10));
+        room += header->sectionSize(column);
     }
+    setMinimumWidth(room + 20); // no name is cut, and the scroll bar has its place
     // Room for the longest explanation, so that the table does not jump when another figure is chosen.
     m_ui->figureExplanation->setMinimumHeight(8 * fontMetrics().height());
     connect(table->selectionModel(), &QItemSelectionModel::currentRowChanged, this, &FiguresPanel::explain);

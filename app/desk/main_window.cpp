@@ -36,7 +36,7 @@ const auto kGeometry = QStringLiteral("window/geometry");
 const auto kLayout = QStringLiteral("window/layout");
 const auto kColumns = QStringLiteral("window/worklistColumns");
 constexpr int kLayoutVersion = 1;
-/// Below this width the docks leave the bench too little room unless the worklist shows fewer columns.
+/// Below this width the docks begin as narrow as they can be.
 constexpr int kNarrow = 1360;
 
 } // namespace
@@ -89,6 +89,14 @@ void MainWindow::buildPages()
     m_stack->addWidget(m_pages);
     setCentralWidget(m_stack);
 
+    // Side by side has a table of the same figures for every ladder and needs the room.
+    connect(m_pages, &QTabWidget::currentChanged, this, [this] {
+        const bool beside = m_pages->currentWidget() == m_sideBySide;
+        if (beside)
+            m_figuresWanted = m_figuresDock->isVisible();
+        m_figuresDock->setVisible(!beside && m_figuresWanted);
+    });
+
     connect(m_start, &StartPage::importWanted, m_files, &FileFlow::askImport);
     connect(m_start, &StartPage::openWanted, m_files, &FileFlow::askOpen);
     connect(m_start, &StartPage::sampleWanted, this, [this] { m_files->openSample(DeskActions::firstSample()); });
@@ -134,6 +142,7 @@ void MainWindow::buildStatus()
 void MainWindow::onOpened()
 {
     m_stack->setCurrentWidget(m_pages);
+    m_figuresWanted = true;
     m_pages->setCurrentWidget(m_benchPage);
     m_worklistDock->show();
     m_figuresDock->show();
@@ -254,9 +263,7 @@ void MainWindow::resetLayout()
     m_worklistDock->setVisible(!m_document.empty());
     m_figuresDock->setVisible(!m_document.empty());
     const bool narrow = width() < kNarrow;
-    if (narrow)
-        m_worklist->useNarrowColumns();
-    resizeDocks({m_worklistDock, m_figuresDock}, narrow ? QList<int>{310, 320} : QList<int>{404, 340}, Qt::Horizontal);
+    resizeDocks({m_worklistDock, m_figuresDock}, narrow ? QList<int>{300, 320} : QList<int>{404, 340}, Qt::Horizontal);
 }
 
 void MainWindow::restoreLayout()
@@ -282,6 +289,7 @@ void MainWindow::closeEvent(QCloseEvent* event)
         return;
     }
     m_files->leave();
+    m_pages->setCurrentWidget(m_benchPage); // the layout to remember is the bench's
     m_settings.setValue(kGeometry, saveGeometry());
     m_settings.setValue(kLayout, saveState(kLayoutVersion));
     m_settings.setValue(kColumns, m_worklist->saveColumns());

@@ -84,6 +84,7 @@ private:
     QDockWidget* m_worklistDock = nullptr;
     QDockWidget* m_figuresDock = nullptr;
     DeskActions* m_actions = nullptr;
+    bool m_figuresWanted = true; ///< Whether the Figures stand beside the bench, which shows them.
     QLabel* m_lastAction = nullptr;
     QLabel* m_saveState = nullptr;
     QLabel* m_modelInUse = nullptr;

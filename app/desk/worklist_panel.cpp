@@ -61,6 +61,10 @@ WorklistPanel::WorklistPanel(Workbench& bench, QWidget* parent) :
     header->resizeSection(WorklistModel::cheapestColumn, wide(tr("Cheapest"), QStringLiteral("188.00")));
     header->resizeSection(WorklistModel::gapColumn, wide(tr("Gap") + QStringLiteral("   ▾"), QStringLiteral("888.88 ")));
     header->resizeSection(WorklistModel::leanColumn, wide(tr("Lean"), QStringLiteral("−0.88")));
+    for (int column = 0; column < WorklistModel::columnCount_; ++column)
+        m_columnWidths[static_cast<std::size_t>(column)] = header->sectionSize(column);
+    setMinimumWidth(m_columnWidths[WorklistModel::onOfferColumn] + m_columnWidths[WorklistModel::floorColumn] +
+                    m_columnWidths[WorklistModel::gapColumn] + fontMetrics().averageCharWidth() * 16);
     header->setContextMenuPolicy(Qt::CustomContextMenu);
     // The tier column tells site and flags on its second line; as columns of their own they serve for sorting.
     table->setColumnHidden(WorklistModel::siteColumn, true);
@@ -138,7 +142,10 @@ void WorklistPanel::showHeaderMenu(const QPoint& at)
         QAction* action = menu.addAction(m_model.headerData(column, Qt::Horizontal, Qt::DisplayRole).toString());
         action->setCheckable(true);
         action->setChecked(!header->isSectionHidden(column));
-        connect(action, &QAction::toggled, this, [header, column](bool on) { header->setSectionHidden(column, !on); });
+        connect(action, &QAction::toggled, this, [this, header, column](bool on) {
+            m_columnsChosen = true;
+            header->setSectionHidden(column, !on);
+        });
     }
     menu.exec(header->mapToGlobal(at));
 }
@@ -147,6 +154,28 @@ QByteArray WorklistPanel::saveColumns() const { return m_ui->worklistTable->hori
 
 void WorklistPanel::restoreColumns(const QByteArray& state) { m_ui->worklistTable->horizontalHeader()->restoreState(state); }
 
-void WorklistPanel::useNarrowColumns() { m_ui->worklistTable->setColumnHidden(WorklistModel::cheapestColumn, true); }
+void WorklistPanel::fitColumns()
+{
+    if (m_columnsChosen)
+        return;
+    QHeaderView* header = m_ui->worklistTable->horizontalHeader();
+    const auto needs = [&](std::initializer_list<int> columns) {
+        int room = fontMetrics().averageCharWidth() * 16; // of the tier's name
+        for (const int column : columns)
+            room += m_columnWidths[static_cast<std::size_t>(column)];
+        return room;
+    };
+    using M = WorklistModel;
+    const int room = m_ui->worklistTable->viewport()->width();
+    header->setSectionHidden(M::cheapestColumn,
+                             room < needs({M::onOfferColumn, M::floorColumn, M::cheapestColumn, M::gapColumn, M::leanColumn}));
+    header->setSectionHidden(M::leanColumn, room < needs({M::onOfferColumn, M::floorColumn, M::gapColumn, M::leanColumn}));
+}
+
+void WorklistPanel::resizeEvent(QResizeEvent* event)
+{
+    QWidget::resizeEvent(event);
+    fitColumns();
+}
 
 } // namespace rungwright

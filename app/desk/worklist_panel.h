@@ -8,6 +8,7 @@
 #include <QSortFilterProxyModel>
 #include <QWidget>
 
+#include <array>
 #include <memory>
 
 namespace Ui
@@ -47,10 +48,13 @@ public:
     WorklistModel& model() { return m_model; }
     QByteArray saveColumns() const;
     void restoreColumns(const QByteArray& state);
-    /// Hides what the Figures show too, where the window is narrow.
-    void useNarrowColumns();
+
+protected:
+    void resizeEvent(QResizeEvent* event) override;
 
 private:
+    /// Leaves out what the Figures show too, where there is too little room for the tier's name.
+    void fitColumns();
     void onBenchReset();
     void onCurrentRow();
     void updateCount();
@@ -61,6 +65,8 @@ private:
     WorklistOrder m_order;
     std::unique_ptr<Ui::WorklistPanel> m_ui;
     bool m_followingBench = false;
+    std::array<int, WorklistModel::columnCount_> m_columnWidths{}; ///< As the figures need them, in pixels.
+    bool m_columnsChosen = false;                                  ///< The user has said which columns to show.
 };
 
 } // namespace rungwright
