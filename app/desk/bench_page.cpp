@@ -3,6 +3,7 @@
 
 #include "bench_plots.h"
 #include "candidates_panel.h"
+#include "file_names.h"
 #include "ladder_plot.h"
 #include "look.h"
 #include "questions.h"
@@ -31,15 +32,20 @@ BenchPage::BenchPage(Workbench& bench, Questions& questions, QWidget* parent) :
     m_ui->benchSplitter->setStretchFactor(0, 1);
     m_ui->benchSplitter->setStretchFactor(1, 0);
     fillModels();
+    servePictures();
     dressLabels();
 
     m_ui->leftBox->setKeyboardTracking(false);
     m_ui->loadBox->setKeyboardTracking(false);
     m_ui->loadBox->setRange(0.0, 100000.0);
-    m_ui->loadBox->setDecimals(2);
+    m_ui->loadBox->setDecimals(4);
     m_ui->loadBox->setSpecialValueText(tr("inferred"));
 
-    connect(m_ui->modelBox, &QComboBox::activated, this, &BenchPage::applyModel);
+    connect(m_ui->modelBox, &QComboBox::activated, this, [this] {
+        // Choosing the model there is already must not write back what the boxes only show.
+        if (m_ui->modelBox->currentData().toInt() != static_cast<int>(m_bench.settings().kind))
+            applyModel();
+    });
     connect(m_ui->leftBox, &QSpinBox::valueChanged, this, &BenchPage::applyModel);
     connect(m_ui->loadBox, &QDoubleSpinBox::valueChanged, this, &BenchPage::applyModel);
     connect(m_ui->holdTotalBox, &QCheckBox::toggled, &bench, &Workbench::setHoldTotal);
@@ -60,6 +66,19 @@ BenchPage::~BenchPage() = default;
 BenchPlots& BenchPage::plots() { return *m_ui->benchPlots; }
 
 CandidatesPanel& BenchPage::candidates() { return *m_ui->candidatesPanel; }
+
+void BenchPage::servePictures()
+{
+    for (PaperPlot* plot : std::initializer_list<PaperPlot*>{plots().ladder(), plots().curtain(), plots().thinning()}) {
+        plot->setAskPath([this](QWidget* over, const QString& title, const QString& suggestion, const QString& filter) {
+            const QString path = m_questions.savePath(over, title, suggestion, filter);
+            return path.isEmpty() ? path : withSuffix(path, QStringLiteral("png"));
+        });
+        connect(plot, &PaperPlot::told, this, &BenchPage::told);
+        connect(plot, &PaperPlot::saveFailed, this,
+                [this](const QString& reason) { m_questions.tell(window(), tr("The picture was not saved."), reason); });
+    }
+}
 
 void BenchPage::fillModels()
 {
@@ -149,7 +168,7 @@ void BenchPage::showModel()
     m_ui->leftLabel->setVisible(left);
     m_ui->leftBox->setVisible(left);
     m_ui->leftBox->setEnabled(m_bench.tierCase() && m.rentable > 0);
-    m_ui->leftBox->setRange(kAsNow, qMax(1, static_cast<int>(m.rentable)));
+    m_ui->leftBox->setRange(kAsNow, qMax(s.left.value_or(1), static_cast<int>(m.rentable)));
     m_ui->leftBox->setSpecialValueText(tr("as now (%1)").arg(m.onOffer));
     m_ui->leftBox->setValue(s.left.value_or(kAsNow));
     const bool load = s.kind == ModelKind::turnover;

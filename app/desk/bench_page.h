@@ -30,11 +30,16 @@ public:
     BenchPlots& plots();
     CandidatesPanel& candidates();
 
+signals:
+    /// A sentence for the status bar.
+    void told(const QString& sentence);
+
 protected:
     void changeEvent(QEvent* event) override;
 
 private:
     void fillModels();
+    void servePictures();
     void showReading();
     void showTitle();
     void showModel();

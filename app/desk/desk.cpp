@@ -23,10 +23,8 @@ int runDesk(QApplication& application, const QString& file)
     MainWindow window(questions, settings, state, &appearance);
     window.show();
     QTimer::singleShot(0, &window, [&window, file] {
-        if (!file.isEmpty())
+        if (!window.files().offerLeftBehind() && !file.isEmpty())
             window.openFile(file);
-        else
-            window.files().offerLeftBehind();
     });
     return application.exec();
 }

@@ -170,6 +170,7 @@ void FileFlow::openSample(const QString& resource)
 void FileFlow::load(const QString& path, const UnitListOptions& options)
 {
     m_loading = true;
+    m_undoIndexBefore = m_document.undoStack().index();
     m_cancel = std::make_shared<std::atomic<bool>>(false);
     m_progress = new QProgressDialog(tr("Reading %1 …").arg(QFileInfo(path).fileName()), tr("Cancel"), 0, kProgressParts, m_window);
     m_progress->setWindowModality(Qt::WindowModal);
@@ -199,6 +200,9 @@ void FileFlow::load(const QString& path, const UnitListOptions& options)
 
 void FileFlow::loaded(const QString& path, const UnitListOptions& options, LoadedFile file)
 {
+    // The window stays alive while a file is read: what was edited meanwhile has not been asked about.
+    if (m_document.undoStack().index() != m_undoIndexBefore && !mayLeave())
+        return;
     if (!file.trouble.isEmpty()) {
         m_questions.tell(m_window, tr("“%1” could not be opened.").arg(QFileInfo(path).fileName()), file.trouble);
         return;
@@ -238,6 +242,10 @@ void FileFlow::takeList(const QString& path, const UnitListOptions& options, Uni
         const QString code = m_questions.text(m_window, tr("Currency"),
                                               tr("The list names no currency. Its ISO 4217 code, for example EUR (empty for none):"),
                                               QLocale().currencySymbol(QLocale::CurrencyIsoCode));
+        if (code.isNull()) {
+            emit told(tr("Import given up; nothing changed."));
+            return;
+        }
         const QString wanted = code.trimmed().toUpper();
         if (!wanted.isEmpty() && wanted != QStringLiteral("XXX")) {
             UnitListOptions again = options;

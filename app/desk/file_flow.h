@@ -51,6 +51,8 @@ public:
     bool saveAs();
     /// Asks what to do with unsaved changes; false = stay.
     bool mayLeave();
+    /// Gives up what is being read; nothing changes.
+    void cancelLoading();
     /// The window closes in good order.
     void leave();
 
@@ -73,7 +75,6 @@ private:
     void loaded(const QString& path, const UnitListOptions& options, LoadedFile file);
     void takeScenario(Scenario scenario, const QString& path, bool saved);
     void takeList(const QString& path, const UnitListOptions& options, UnitListResult list);
-    void cancelLoading();
     QString suggestedName() const;
 
     Document& m_document;
@@ -85,7 +86,8 @@ private:
     QPointer<QProgressDialog> m_progress;
     std::shared_ptr<std::atomic<bool>> m_cancel;
     bool m_loading = false;
-    QString m_recoverFor; ///< Set while unsaved work is being recovered: the path it belongs to.
+    int m_undoIndexBefore = 0; ///< Of the undo stack, when reading began.
+    QString m_recoverFor;      ///< Set while unsaved work is being recovered: the path it belongs to.
     bool m_recovering = false;
 };
 

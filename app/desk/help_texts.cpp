@@ -17,10 +17,10 @@ QString keysText()
                 "Double click or Enter: type a price.\n"
                 "Up, Down: one price point. Page Up, Page Down: five.\n"
                 "Left, Right: the next rung. L: lock or unlock. Esc: give up a drag.\n"
-                "Drag the handle in the middle: bend the ladder between its ends.\n\n"
+                "Drag the handle in the middle, or Ctrl+Up, Ctrl+Down: bend the ladder between its ends.\n\n"
                 "Below it: drag the marker to set the number of units left.\n\n"
                 "Alt+Down, Alt+Up: the next tier of the worklist. Ctrl+F: filter it. Ctrl+1, Ctrl+2: bench, side by side.\n"
-                "Every plot and table: right click to copy or save.");
+                "Every plot: right click to copy or save. Every table: right click or Ctrl+C to copy.");
 }
 
 QString aboutText()

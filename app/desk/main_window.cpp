@@ -7,7 +7,9 @@
 #include "caution.h"
 #include "desk_actions.h"
 #include "figures_panel.h"
+#include "file_names.h"
 #include "help_texts.h"
+#include "picture_file.h"
 #include "questions.h"
 #include "rules_dialog.h"
 #include "sheet_dialog.h"
@@ -35,6 +37,8 @@ namespace
 const auto kGeometry = QStringLiteral("window/geometry");
 const auto kLayout = QStringLiteral("window/layout");
 const auto kColumns = QStringLiteral("window/worklistColumns");
+const auto kWorklistWanted = QStringLiteral("window/worklist");
+const auto kFiguresWanted = QStringLiteral("window/figures");
 constexpr int kLayoutVersion = 1;
 /// Below this width the docks begin as narrow as they can be.
 constexpr int kNarrow = 1360;
@@ -58,11 +62,14 @@ MainWindow::MainWindow(Questions& questions, QSettings& settings, const QString&
     connect(&m_bench, &Workbench::told, this, &MainWindow::tell);
     connect(&m_bench, &Workbench::reset, this, &MainWindow::showModelInUse);
     connect(&m_document, &Document::saveStateChanged, this, &MainWindow::showSaveState);
-    connect(&m_document.undoStack(), &QUndoStack::indexChanged, this, [this] {
-        const QString redo = m_document.undoStack().redoText();
-        if (!redo.isEmpty())
-            tell(tr("Undone: %1").arg(redo));
+    connect(&m_document.undoStack(), &QUndoStack::indexChanged, this, [this](int index) {
+        if (index < std::exchange(m_undoIndex, index) && m_document.undoStack().canRedo())
+            tell(tr("Undone: %1").arg(m_document.undoStack().redoText()));
+        else if (m_document.undoStack().canUndo())
+            tell(m_document.undoStack().undoText());
     });
+    connect(m_benchPage, &BenchPage::told, this, &MainWindow::tell);
+    connect(m_sideBySide, &SideBySidePage::told, this, &MainWindow::tell);
     m_start->setRecent(m_files->recent().list());
     restoreLayout();
     showSaveState();
@@ -92,8 +99,6 @@ void MainWindow::buildPages()
     // Side by side has a table of the same figures for every ladder and needs the room.
     connect(m_pages, &QTabWidget::currentChanged, this, [this] {
         const bool beside = m_pages->currentWidget() == m_sideBySide;
-        if (beside)
-            m_figuresWanted = m_figuresDock->isVisible();
         m_figuresDock->setVisible(!beside && m_figuresWanted);
     });
 
@@ -117,6 +122,9 @@ void MainWindow::buildDocks()
     m_figuresDock->setObjectName(QStringLiteral("figuresDock"));
     m_figuresDock->setWidget(m_figures);
     addDockWidget(Qt::RightDockWidgetArea, m_figuresDock);
+    // Closed by its button or by the menu: either way the user has said so.
+    connect(m_worklistDock->toggleViewAction(), &QAction::triggered, this, [this](bool on) { m_worklistWanted = on; });
+    connect(m_figuresDock->toggleViewAction(), &QAction::triggered, this, [this](bool on) { m_figuresWanted = on; });
 }
 
 void MainWindow::buildStatus()
@@ -142,10 +150,9 @@ void MainWindow::buildStatus()
 void MainWindow::onOpened()
 {
     m_stack->setCurrentWidget(m_pages);
-    m_figuresWanted = true;
     m_pages->setCurrentWidget(m_benchPage);
-    m_worklistDock->show();
-    m_figuresDock->show();
+    m_worklistDock->setVisible(m_worklistWanted);
+    m_figuresDock->setVisible(m_figuresWanted);
     const int worst = m_worklist->model().worstTier();
     if (worst >= 0)
         m_bench.showTier(worst, m_document.tier(worst)->chosen.value_or(-1));
@@ -197,6 +204,7 @@ void MainWindow::showSheet(int candidate)
         m_document.chooseCandidate(m_bench.tier(), candidate);
     auto* dialog = new SheetDialog(m_document, m_bench.tier(), candidate, m_questions, this);
     dialog->setAttribute(Qt::WA_DeleteOnClose);
+    connect(dialog, &SheetDialog::told, this, &MainWindow::tell);
     dialog->open();
 }
 
@@ -214,10 +222,13 @@ void MainWindow::savePicture()
 {
     if (!m_bench.tierCase())
         return;
-    const QString path = m_questions.savePath(this, tr("Save a picture of the bench"), m_bench.candidateName() + QStringLiteral(".png"),
-                                              tr("Pictures (*.png *.svg *.pdf)"));
-    if (path.isEmpty())
+    const Tier& tier = m_bench.tierCase()->tier;
+    const QString name = fileNameFrom({QString::fromStdString(tier.site), QString::fromStdString(tier.name), m_bench.candidateName()},
+                                      QStringLiteral("png"));
+    const QString chosen = m_questions.savePath(this, tr("Save a picture of the bench"), name, pictureFilter());
+    if (chosen.isEmpty())
         return;
+    const QString path = withSuffix(chosen, QStringLiteral("png"));
     const auto saved = renderBench(m_document, m_bench.tier(), m_bench.candidate(), path);
     if (saved.ok())
         tell(tr("Picture saved as %1. %2").arg(QFileInfo(path).fileName(), cautionText()));
@@ -260,6 +271,7 @@ void MainWindow::resetLayout()
 {
     addDockWidget(Qt::LeftDockWidgetArea, m_worklistDock);
     addDockWidget(Qt::RightDockWidgetArea, m_figuresDock);
+    m_worklistWanted = m_figuresWanted = true;
     m_worklistDock->setVisible(!m_document.empty());
     m_figuresDock->setVisible(!m_document.empty());
     const bool narrow = width() < kNarrow;
@@ -276,6 +288,8 @@ void MainWindow::restoreLayout()
         resize(QSize(1440, 900).boundedTo(screen));
         resetLayout();
     }
+    m_worklistWanted = m_settings.value(kWorklistWanted, true).toBool();
+    m_figuresWanted = m_settings.value(kFiguresWanted, true).toBool();
     // Nothing is open yet: the start page has the window to itself.
     m_worklistDock->hide();
     m_figuresDock->hide();
@@ -284,6 +298,7 @@ void MainWindow::restoreLayout()
 void MainWindow::closeEvent(QCloseEvent* event)
 {
     m_bench.giveUpGesture();
+    m_files->cancelLoading();
     if (!m_files->mayLeave()) {
         event->ignore();
         return;
@@ -292,6 +307,8 @@ void MainWindow::closeEvent(QCloseEvent* event)
     m_pages->setCurrentWidget(m_benchPage); // the layout to remember is the bench's
     m_settings.setValue(kGeometry, saveGeometry());
     m_settings.setValue(kLayout, saveState(kLayoutVersion));
+    m_settings.setValue(kWorklistWanted, m_worklistWanted);
+    m_settings.setValue(kFiguresWanted, m_figuresWanted);
     m_settings.setValue(kColumns, m_worklist->saveColumns());
     event->accept();
 }

@@ -84,6 +84,8 @@ private:
     QDockWidget* m_worklistDock = nullptr;
     QDockWidget* m_figuresDock = nullptr;
     DeskActions* m_actions = nullptr;
+    int m_undoIndex = 0;
+    bool m_worklistWanted = true;
     bool m_figuresWanted = true; ///< Whether the Figures stand beside the bench, which shows them.
     QLabel* m_lastAction = nullptr;
     QLabel* m_saveState = nullptr;

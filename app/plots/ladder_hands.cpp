@@ -255,7 +255,9 @@ bool LadderPlot::event(QEvent* event)
     if (event->type() == QEvent::ShortcutOverride) {
         const auto* key = static_cast<QKeyEvent*>(event);
         const bool all = key->key() == Qt::Key_A && key->modifiers() == Qt::ControlModifier;
-        if (all || key->key() == Qt::Key_L || (key->key() == Qt::Key_Escape && shows() && m_bench->gesture() != Workbench::Gesture::none)) {
+        const bool bend = (key->key() == Qt::Key_Up || key->key() == Qt::Key_Down) && key->modifiers() == Qt::ControlModifier;
+        if (all || bend || key->key() == Qt::Key_L ||
+            (key->key() == Qt::Key_Escape && shows() && m_bench->gesture() != Workbench::Gesture::none)) {
             if (key->key() != Qt::Key_L || key->modifiers() == Qt::NoModifier) {
                 event->accept();
                 return true;

@@ -66,7 +66,6 @@ void LadderPlot::keyPressEvent(QKeyEvent* event)
     const Qt::KeyboardModifiers modifiers = event->modifiers() & ~Qt::KeypadModifier;
     const bool extend = modifiers == Qt::ShiftModifier;
     const bool control = modifiers == Qt::ControlModifier;
-    const bool alt = modifiers == Qt::AltModifier;
 
     if (event->key() == Qt::Key_Escape) {
         if (m_hand == Hand::rubber) {
@@ -89,7 +88,7 @@ void LadderPlot::keyPressEvent(QKeyEvent* event)
     case Qt::Key_Up:
     case Qt::Key_Down: {
         const int step = event->key() == Qt::Key_Up ? 1 : -1;
-        if (alt)
+        if (control)
             bendByKey(step);
         else
             m_bench->nudge(step);

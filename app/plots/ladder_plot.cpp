@@ -65,6 +65,13 @@ int LadderPlot::numbersWidth() const
 
 void LadderPlot::onReset()
 {
+    // What the hand was about to do belonged to what was shown before.
+    if (!m_bench || m_bench->gesture() == Workbench::Gesture::none) {
+        m_hand = Hand::empty;
+        m_pressed = -1;
+        m_rubber = QRectF();
+        m_selectedBefore.clear();
+    }
     m_zoomed = m_zoomed && shows();
     m_behind.clear();
     m_placeOf.clear();

@@ -63,7 +63,8 @@ std::optional<LeftBehind> Autosave::leftBehind(const QString& path) const
 {
     if (!path.isEmpty()) {
         const QFileInfo copy(copyFor(path));
-        if (!copy.exists() || openElsewhere(path))
+        const bool ours = copy.filePath() == m_copyPath; // it is this window's own work
+        if (ours || !copy.exists() || openElsewhere(path))
             return std::nullopt;
         return LeftBehind{copy.filePath(), path, copy.lastModified()};
     }
@@ -91,7 +92,13 @@ void Autosave::follow()
     m_lock.reset();
     m_lock = std::make_unique<QLockFile>(lockFor(m_guarded.isEmpty() ? m_copyPath : m_guarded));
     m_lock->setStaleLockTime(0);
-    m_lock->tryLock(0); // another window may hold it: the desk has warned of that before
+    if (!m_lock->tryLock(0) && !m_guarded.isEmpty()) {
+        // Another window guards this file: the user was told, and each window keeps a copy of its own.
+        m_copyPath = copyFor({});
+        m_lock = std::make_unique<QLockFile>(lockFor(m_copyPath));
+        m_lock->setStaleLockTime(0);
+        m_lock->tryLock(0);
+    }
     if (m_document.modified() && !m_document.empty())
         m_timer.start();
 }

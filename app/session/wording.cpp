@@ -2,6 +2,7 @@
 #include "wording.h"
 
 #include <QCoreApplication>
+#include <QRegularExpression>
 
 #include <cmath>
 
@@ -56,18 +57,24 @@ QString undefinedText() { return QString(QChar(0x2013)); }
 
 std::optional<Price> moneyFromText(const QString& text, const Currency& currency, const QLocale& locale)
 {
-    QString plain = text.trimmed();
-    plain.replace(kMinus, QLatin1Char('-'));
-    if (const auto price = parsePlain(plain.toStdString(), currency))
-        return price;
-    // The locale's own spelling: without its grouping, with its decimal sign made a point. Spaces of any width group.
+    QString typed = text.trimmed();
+    typed.replace(kMinus, QLatin1Char('-'));
+    // The locale's own spelling first: groups of three before its decimal sign; spaces of any width group too. Signs that do not
+    // stand where they group are not passed over: "82,50" is no way to write 8250.
     QString bare;
-    for (const QChar c : plain) {
-        if (!c.isSpace() && QString(c) != locale.groupSeparator())
-            bare += c;
+    for (const QChar c : typed)
+        bare += c.isSpace() ? QLatin1Char(' ') : c;
+    const QString group = QStringLiteral("[ ") + QRegularExpression::escape(locale.groupSeparator()) + QLatin1Char(']');
+    const QString point = QRegularExpression::escape(locale.decimalPoint());
+    const QRegularExpression local(QStringLiteral("^([+-]?)(\\d{1,3}(?:%1\\d{3})+|\\d+)(?:%2(\\d+))?$").arg(group, point));
+    if (const auto match = local.match(bare); match.hasMatch()) {
+        QString whole = match.captured(2);
+        whole.remove(QRegularExpression(group));
+        const QString decimals = match.captured(3);
+        const QString plain = match.captured(1) + whole + (decimals.isEmpty() ? QString() : QLatin1Char('.') + decimals);
+        return parsePlain(plain.toStdString(), currency);
     }
-    bare.replace(locale.decimalPoint(), QStringLiteral("."));
-    return parsePlain(bare.toStdString(), currency);
+    return parsePlain(typed.toStdString(), currency);
 }
 
 QString modelName(ModelKind kind)

@@ -5,6 +5,7 @@
 
 #include <algorithm>
 #include <cassert>
+#include <utility>
 
 namespace rungwright
 {
@@ -55,6 +56,8 @@ void Workbench::select(std::vector<std::uint32_t> units)
 {
     std::sort(units.begin(), units.end());
     units.erase(std::unique(units.begin(), units.end()), units.end());
+    const std::size_t there = tierCase() ? tierCase()->tier.units.size() : 0;
+    std::erase_if(units, [there](std::uint32_t unit) { return unit >= there; });
     if (units == m_selection)
         return;
     m_selection = std::move(units);
@@ -65,9 +68,9 @@ void Workbench::setHoldTotal(bool on)
 {
     if (m_holdTotal == on)
         return;
-    m_holdTotal = on;
     if (m_gesture == Gesture::none)
-        emit reset();
+        m_holdTotal = on; // not in the middle of a gesture, which began under the other rule
+    emit reset();         // whoever asked shows what holds
 }
 
 // Measuring ----------------------------------------------------------------------------------------------------------
@@ -101,19 +104,24 @@ void Workbench::remeasureWorked() { m_worked = &m_measureWorked.measure(tierCase
 void Workbench::onDocumentChanged(const DocumentChange& change)
 {
     using Kind = DocumentChange::Kind;
+    if (change.kind == Kind::notes)
+        return;
+    // A gesture that was going on ends here without a look back: the candidate it worked on may be gone.
+    const bool interrupted = std::exchange(m_gesture, Gesture::none) != Gesture::none;
     if (change.kind == Kind::everything) {
-        m_gesture = Gesture::none;
         m_selection.clear();
         m_tier = -1;
         showTier(m_document.empty() ? -1 : 0);
+        if (interrupted)
+            emit gestureChanged();
         return;
     }
-    if (change.kind == Kind::notes)
-        return;
     // An undo may reach back to another tier or candidate: show where it happened.
     const int tier = change.tier < 0 ? m_tier : change.tier;
     const bool namesCandidate = change.kind == Kind::prices || change.kind == Kind::candidates;
     showTier(tier, namesCandidate || tier != m_tier ? change.candidate : m_candidate);
+    if (interrupted)
+        emit gestureChanged();
 }
 
 // Gestures -----------------------------------------------------------------------------------------------------------

@@ -84,7 +84,7 @@ private slots:
     {
         OnBench on(plain());
         const std::vector<Price> before(on.bench.workedPrices().begin(), on.bench.workedPrices().end());
-        key(on, Qt::Key_Down, Qt::AltModifier);
+        key(on, Qt::Key_Down, Qt::ControlModifier);
         QCOMPARE(on.bench.gesture(), Workbench::Gesture::none);
         QCOMPARE(on.document.undoStack().count(), 1);
         std::int64_t moved = 0;

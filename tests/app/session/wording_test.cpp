@@ -67,6 +67,9 @@ void WordingTest::typedMoneyIsUnderstood()
     QCOMPARE(moneyFromText(QStringLiteral("82,5"), kEuro, kGerman), std::optional(Price{8250}));
     QCOMPARE(moneyFromText(QStringLiteral(" 82.5 "), kEuro, kEnglish), std::optional(Price{8250}));
     QCOMPARE(moneyFromText(QStringLiteral("1,419.50"), kEuro, kEnglish), std::optional(Price{141950}));
+    QVERIFY(!moneyFromText(QStringLiteral("82,50"), kEuro, kEnglish)); // not 8250
+    QCOMPARE(moneyFromText(QStringLiteral("82.50"), kEuro, kGerman), std::optional(Price{8250}));
+    QCOMPARE(moneyFromText(QStringLiteral("1.250"), Currency{"KWD", 3}, kGerman), std::optional(Price{1250000}));
     QVERIFY(!moneyFromText(QStringLiteral("eighty"), kEuro, kEnglish));
     QVERIFY(!moneyFromText(QString(), kEuro, kEnglish));
     QVERIFY(!moneyFromText(QStringLiteral("82.555"), kEuro, kEnglish));

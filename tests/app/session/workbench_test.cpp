@@ -24,6 +24,7 @@ private slots:
     void leftIsDraggedAsOneStep();
     void nudgesAreOneStepAndSayWhenTheyEnd();
     void undoGoesWhereItHappened();
+    void undoInTheMiddleOfADragIsSafe();
     void emptyDocumentIsHarmless();
     void typedPriceIsHeldInsideTheRules();
 };
@@ -219,6 +220,26 @@ void WorkbenchTest::undoGoesWhereItHappened()
     QCOMPARE(bench.candidate(), -1);
     document.undoStack().redo();
     QCOMPARE(bench.candidate(), 0);
+}
+
+void WorkbenchTest::undoInTheMiddleOfADragIsSafe()
+{
+    Document document;
+    Workbench bench(document);
+    document.begin(inventedScenario(), {}, true);
+    QVERIFY(bench.beginMove({0}));
+    bench.moveBy(Price{-100});
+    bench.finishGesture(); // makes the candidate
+    QVERIFY(bench.beginMove({1}));
+    bench.moveBy(Price{-100});
+    document.undoStack().undo(); // takes it away under the hand
+    QCOMPARE(bench.gesture(), Workbench::Gesture::none);
+    QCOMPARE(bench.candidate(), -1);
+    QVERIFY(std::equal(bench.workedPrices().begin(), bench.workedPrices().end(), bench.currentPrices().begin()));
+    bench.finishGesture();
+    QVERIFY(document.tier(0)->candidates.empty());
+    bench.select({3, 400}); // a unit that is not there
+    QCOMPARE(bench.selection().size(), std::size_t(1));
 }
 
 void WorkbenchTest::emptyDocumentIsHarmless()
