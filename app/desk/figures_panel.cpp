@@ -50,7 +50,7 @@ FiguresPanel::FiguresPanel(Workbench& bench, QWidget* parent) : QWidget(parent),
     header->setSectionResizeMode(FiguresModel::nameColumn, QHeaderView::Stretch);
     int room = 0;
     for (const FigureRow& row : figureRows())
-        room = qMax(room, fontMetrics().horizontalAdvance(tr(row.label)) + 8);
+        room = qMax(room, fontMetrics().horizontalAdvance(tr(row.label)) + 14);
     for (const int column : {FiguresModel::currentColumn, FiguresModel::workedColumn, FiguresModel::changeColumn}) {
         header->setSectionResizeMode(column, QHeaderView::Interactive);
         const QString heading = m_model.headerData(column, Qt::Horizontal, Qt::DisplayRole).toString();
