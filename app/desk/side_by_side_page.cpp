@@ -2,9 +2,9 @@
 #include "side_by_side_page.h"
 
 #include "caution.h"
+#include "pick_menu.h"
 #include "plot_words.h"
 #include "side_by_side_export.h"
-#include "stay_open_menu.h"
 #include "table_names.h"
 #include "table_text.h"
 #include "ui_side_by_side_page.h"
@@ -12,6 +12,7 @@
 
 #include <QEvent>
 #include <QHeaderView>
+#include <QSignalBlocker>
 
 namespace rungwright
 {
@@ -25,16 +26,6 @@ constexpr int kBetween = 20;
 /// Neither a candidate nor the current ladder.
 constexpr int kNoCandidate = -2;
 
-/// For menus and buttons: a name's own "&" is no mnemonic, and a long name is cut in the middle.
-QString buttonName(const QString& name)
-{
-    constexpr int most = 32;
-    QString text = name.simplified();
-    if (text.size() > most)
-        text = text.left(most / 2).trimmed() + u'…' + text.right(most / 2 - 1).trimmed();
-    return text.replace(u'&', QStringLiteral("&&"));
-}
-
 } // namespace
 
 SideBySidePage::SideBySidePage(Workbench& bench, Questions& questions, QWidget* parent) :
@@ -44,9 +35,10 @@ SideBySidePage::SideBySidePage(Workbench& bench, Questions& questions, QWidget* 
     m_ui->sideBySideCaution->setText(cautionText());
     m_ui->sideBySideSplitter->setStretchFactor(0, 1);
     m_ui->sideBySideSplitter->setStretchFactor(1, 1);
-    auto* menu = new StayOpenMenu(m_ui->compareButton);
-    menu->setObjectName(QStringLiteral("compareMenu"));
-    m_ui->compareButton->setMenu(menu);
+    m_pickMenu = new PickMenu(m_ui->compareButton);
+    m_pickMenu->setObjectName(QStringLiteral("compareMenu"));
+    m_ui->compareButton->setMenu(m_pickMenu);
+    connect(m_pickMenu, &PickMenu::ticked, this, &SideBySidePage::pickLadder);
     prepareTable();
     prepareMoves();
     prepareExport();
@@ -163,7 +155,7 @@ void SideBySidePage::refresh()
         return;
     }
     pick().update(names, m_bench.candidate());
-    fillPickMenu(names);
+    showPick(names);
     const bool sameTier = m_shownTier == m_bench.tier() && !m_model.ladders().empty();
     m_shownTier = m_bench.tier();
     showLadders(sameTier ? selectedCandidate() : kNoCandidate);
@@ -180,35 +172,13 @@ void SideBySidePage::showEmpty()
     m_ui->stack->setCurrentWidget(m_ui->emptyPage);
 }
 
-void SideBySidePage::fillPickMenu(const QStringList& names)
+void SideBySidePage::showPick(const QStringList& names)
 {
-    QMenu* menu = m_ui->compareButton->menu();
-    const LadderPick& picked = pick();
-    // The entry that was just ticked is the one that calls: entries are kept and changed, not made anew.
-    while (menu->actions().size() > names.size() + 1) {
-        QAction* last = menu->actions().constLast();
-        menu->removeAction(last);
-        last->deleteLater();
-    }
-    for (int candidate = -1; candidate < names.size(); ++candidate) {
-        const int place = candidate + 1;
-        if (place == menu->actions().size()) {
-            QAction* made = menu->addAction(QString());
-            made->setCheckable(true);
-            made->setObjectName(QStringLiteral("pick%1").arg(candidate));
-            connect(made, &QAction::triggered, this, [this, candidate](bool on) { pickLadder(candidate, on); });
-        }
-        QAction* action = menu->actions().at(place);
-        action->setText(candidate < 0 ? tr("Current ladder") : buttonName(names[candidate]));
-        const bool on = picked.isShown(candidate);
-        action->setChecked(on);
-        action->setEnabled(on ? picked.canShowFewer() : picked.canShowMore());
-    }
-    menu->setToolTipsVisible(true);
-    m_ui->compareButton->setText(tr("Com&pare %1 of %2").arg(picked.shown().size()).arg(names.size() + 1));
+    QPushButton* button = m_ui->compareButton;
+    m_pickMenu->setLadders(names, pick());
+    button->setText(tr("Com&pare %1 of %2").arg(pick().shown().size()).arg(names.size() + 1));
     // The style leaves the arrow no air.
-    m_ui->compareButton->setMinimumWidth(m_ui->compareButton->minimumSizeHint().width() + 8);
-    m_ui->compareButton->setToolTip(tr("Two to six ladders at a time"));
+    button->setMinimumWidth(button->minimumSizeHint().width() + 8);
 }
 
 void SideBySidePage::pickLadder(int candidate, bool on)

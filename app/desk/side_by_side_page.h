@@ -19,6 +19,7 @@ class SideBySidePage;
 namespace rungwright
 {
 
+class PickMenu;
 class Questions;
 
 class SideBySidePage : public QWidget
@@ -51,7 +52,7 @@ private:
     void prepareMoves();
     void dress();
     void refresh();
-    void fillPickMenu(const QStringList& names);
+    void showPick(const QStringList& names);
     void pickLadder(int candidate, bool on);
     void showLadders(int selected);
     void straightenHeader();
@@ -69,6 +70,7 @@ private:
     Workbench& m_bench;
     Questions& m_questions;
     SideBySideModel m_model;
+    PickMenu* m_pickMenu = nullptr;
     std::map<int, LadderPick> m_picks; ///< By tier.
     int m_shownTier = -1;
     bool m_stale = true; ///< Something changed while the page was hidden.
