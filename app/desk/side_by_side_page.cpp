@@ -295,6 +295,7 @@ void SideBySidePage::adoptHeaderOrder()
     if (header->count() != m_model.columnCount())
         return;
     std::vector<int> order;
+    order.reserve(static_cast<std::size_t>(header->count()));
     for (int visual = 0; visual < header->count(); ++visual)
         order.push_back(m_model.ladders()[static_cast<std::size_t>(header->logicalIndex(visual))].candidate);
     if (order == pick().shown())
