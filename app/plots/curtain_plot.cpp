@@ -68,7 +68,7 @@ void CurtainPlot::onMoving()
     if (m_bench->gesture() == Workbench::Gesture::left && m_bench->candidate() >= 0)
         m_current.build(m_bench->current(), frame());
     placeLabel();
-    update();
+    update(area().adjusted(-2, -2, 2, 2).toAlignedRect());
 }
 
 void CurtainPlot::areaChanged()

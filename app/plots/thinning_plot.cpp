@@ -77,7 +77,7 @@ void ThinningPlot::onMoving()
     }
     build(gaps, m_worked, m_workedStarts);
     placeMarker();
-    update();
+    update(area().adjusted(-8, -8, 8, 8).toAlignedRect()); // A knob at the edge reaches a little beyond.
 }
 
 void ThinningPlot::fitRange()
