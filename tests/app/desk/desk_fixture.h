@@ -64,6 +64,10 @@ public:
         window->show();
         if (!QTest::qWaitForWindowExposed(window.get()))
             qFatal("the window did not come up");
+        // Shortcuts work in the active window only, and without a window manager no window becomes active by itself.
+        window->activateWindow();
+        if (!QTest::qWaitForWindowActive(window.get()))
+            qFatal("the window did not become active");
     }
 
     /// A copy of a sample: the desk keeps unsaved work beside the file it opens.
