@@ -6,7 +6,7 @@
 # To build and run the desk and the commands.
 rungwright_build_packages=(
     g++ cmake ninja-build
-    qt6-base-dev qt6-svg-dev qt6-tools-dev qt6-tools-dev-tools qt6-l10n-tools qt6-wayland
+    qt6-base-dev qt6-svg-dev qt6-wayland
     libqcustomplot-dev libeigen3-dev libboost-math-dev libcsv-dev
     fontconfig fonts-dejavu-core
 )
