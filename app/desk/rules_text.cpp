@@ -54,7 +54,7 @@ QStringList endingWords(const QString& text, const QLocale& locale)
     if (pointIsDecimal(locale))
         return text.split(apartOrComma, Qt::SkipEmptyParts);
     QStringList words;
-    for (QString word : text.split(apart, Qt::SkipEmptyParts)) {
+    for (const QString& word : text.split(apart, Qt::SkipEmptyParts)) {
         // A comma at the end of a word, or in a word with points, sets apart here too: "0.00, 0.50".
         if (word.contains(u'.'))
             words << word.split(u',', Qt::SkipEmptyParts);

@@ -50,7 +50,9 @@ QVector<double> CountTicks::createTickVector(double step, const QCPRange& range)
     QVector<double> ticks;
     if (range.contains(1))
         ticks << 1;
-    for (double tick = std::max(step, std::ceil(range.lower / step) * step); tick <= range.upper; tick += step) {
+    const auto first = std::max<qint64>(1, static_cast<qint64>(std::ceil(range.lower / step)));
+    for (qint64 i = first; static_cast<double>(i) * step <= range.upper; ++i) {
+        const double tick = static_cast<double>(i) * step;
         if (tick > 1)
             ticks << tick;
     }

@@ -155,7 +155,7 @@ void CurtainPlot::lookChanged()
     yAxis->grid()->setVisible(true);
     xAxis->grid()->setVisible(true);
     PaperPlot::lookChanged();
-    areaChanged();
+    CurtainPlot::areaChanged();
 }
 
 } // namespace rungwright

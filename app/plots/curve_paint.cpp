@@ -87,7 +87,10 @@ void appendFill(const QPointF* points, qsizetype count, double base, std::vector
             rects.emplace_back(QPointF(left, std::min(height, base)), QPointF(right, std::max(height, base)));
     };
     qsizetype at = 0;
-    for (double x = std::floor(left); x < last; x += 1) {
+    const double firstColumn = std::floor(left);
+    const int columns = static_cast<int>(std::ceil(last - firstColumn));
+    for (int column = 0; column < columns; ++column) {
+        const double x = firstColumn + column;
         // The curve's height in the middle of this pixel's column.
         const double middle = std::clamp(x + 0.5, points[0].x(), last);
         while (at + 2 < count && points[at + 1].x() < middle)

@@ -52,8 +52,9 @@ void paintHatching(QPainter& painter, const QRectF& rect, const Look& look)
     const QRectF& seen = rect;
     static thread_local std::vector<QLineF> lines;
     lines.clear();
-    const double first = std::ceil((seen.left() + seen.top()) / kHatch) * kHatch;
-    for (double c = first; c < seen.right() + seen.bottom(); c += kHatch) {
+    const int first = static_cast<int>(std::ceil((seen.left() + seen.top()) / kHatch));
+    for (int line = first; line * kHatch < seen.right() + seen.bottom(); ++line) {
+        const double c = line * kHatch;
         const double x1 = std::max(seen.left(), c - seen.bottom());
         const double x2 = std::min(seen.right(), c - seen.top());
         lines.emplace_back(x1, c - x1, x2, c - x2);

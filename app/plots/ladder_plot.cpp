@@ -341,7 +341,7 @@ void LadderPlot::lookChanged()
     yAxis->grid()->setVisible(true);
     xAxis->grid()->setVisible(false);
     PaperPlot::lookChanged();
-    areaChanged();
+    LadderPlot::areaChanged();
 }
 
 } // namespace rungwright

@@ -139,7 +139,7 @@ void SideBySidePlot::lookChanged()
     yAxis->grid()->setVisible(true);
     xAxis->grid()->setVisible(false);
     PaperPlot::lookChanged();
-    areaChanged();
+    SideBySidePlot::areaChanged();
 }
 
 } // namespace rungwright

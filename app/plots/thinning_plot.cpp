@@ -310,7 +310,7 @@ void ThinningPlot::lookChanged()
     yAxis->grid()->setVisible(true);
     xAxis->grid()->setVisible(false);
     PaperPlot::lookChanged();
-    areaChanged();
+    ThinningPlot::areaChanged();
 }
 
 // Hands and keys ---------------------------------------------------------------------------------------------------------------
