@@ -16,14 +16,29 @@ qint64 characters(std::string_view utf8)
     return std::count_if(utf8.begin(), utf8.end(), [](char c) { return (static_cast<unsigned char>(c) & 0xC0U) != 0x80U; });
 }
 
+QString delimiterName(char delimiter)
+{
+    switch (delimiter) {
+    case ',':
+        return Words::tr("a comma");
+    case ';':
+        return Words::tr("a semicolon");
+    case '\t':
+        return Words::tr("a tab");
+    default:
+        return Words::tr("a %1").arg(QLatin1Char(delimiter));
+    }
+}
+
 // RFC 4180, section 2, point 4: spaces are part of a cell.
 int noSpace(unsigned char) { return 0; }
 
 } // namespace
 
-CsvLexer::CsvLexer(const CsvSink& sink) : m_sink(sink)
+CsvLexer::CsvLexer(const CsvSink& sink, char delimiter) : m_sink(sink), m_delimiter(delimiter)
 {
     csv_init(&m_parser, CSV_STRICT | CSV_STRICT_FINI);
+    csv_set_delim(&m_parser, static_cast<unsigned char>(delimiter));
     csv_set_space_func(&m_parser, noSpace);
     csv_set_blk_size(&m_parser, 16'384); // The default of 128 bytes would grow a long cell's buffer thousands of times.
 }
@@ -144,8 +159,9 @@ bool CsvLexer::refuseMalformed(std::string_view part, std::size_t done)
                       "those inside it, or take it out"));
     return refuse(
         m_line, column,
-        Words::tr("text after the quotation mark that closes a cell. Put a comma or a line end after it, or double it if it belongs to "
-                  "the text"));
+        Words::tr("text after the quotation mark that closes a cell. Put %1 or a line end after it, or double it if it belongs to "
+                  "the text")
+            .arg(delimiterName(m_delimiter)));
 }
 
 void CsvLexer::takeCell(const char* text, std::size_t size)

@@ -16,7 +16,7 @@ namespace rungwright
 class CsvLexer
 {
 public:
-    explicit CsvLexer(const CsvSink& sink);
+    explicit CsvLexer(const CsvSink& sink, char delimiter = ',');
     ~CsvLexer();
     CsvLexer(const CsvLexer&) = delete;
     CsvLexer& operator=(const CsvLexer&) = delete;
@@ -43,6 +43,7 @@ private:
 
     csv_parser m_parser{};
     CsvSink m_sink;
+    char m_delimiter;
     std::string m_text; ///< The record's cells, one after the other.
     std::vector<std::size_t> m_ends;
     std::vector<std::string_view> m_cells;

@@ -33,9 +33,15 @@ QString placed(const QString& fileName, const TextDecoder& decoder)
 
 CsvEnd readCsv(QIODevice& device, const QString& fileName, const CsvSink& sink, const std::function<bool(double)>& progress)
 {
+    return readCsv(device, fileName, CsvLayout{}, sink, progress);
+}
+
+CsvEnd readCsv(QIODevice& device, const QString& fileName, const CsvLayout& layout, const CsvSink& sink,
+               const std::function<bool(double)>& progress)
+{
     CsvEnd end;
-    TextDecoder decoder;
-    CsvLexer lexer(sink);
+    TextDecoder decoder(layout.encoding);
+    CsvLexer lexer(sink, layout.delimiter);
     std::string text;
     QByteArray piece(kPiece, Qt::Uninitialized);
     const qint64 whole = std::max<qint64>(1, device.size());

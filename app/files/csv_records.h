@@ -2,10 +2,13 @@
 // CSV as RFC 4180 has it, record by record, with the physical line each record starts on.
 #pragma once
 
+#include "text_encodings.h"
+
 #include <QIODevice>
 #include <QString>
 
 #include <functional>
+#include <optional>
 #include <span>
 #include <string_view>
 
@@ -26,7 +29,7 @@ using CsvSink = std::function<bool(qint64 line, std::span<const std::string_view
 /// How a reading ended.
 struct CsvEnd {
     QString trouble;  ///< Empty, or "file:line: ..." with what is wrong and the remedy: encoding, quotes, sizes, a device that fails.
-    QString encoding; ///< "UTF-8", "UTF-8 with BOM", "UTF-16LE", "UTF-16BE".
+    QString encoding; ///< "UTF-8", "UTF-8 with BOM", "UTF-16LE", "UTF-16BE", or the one that was said.
     bool cancelled = false;
 };
 
@@ -34,5 +37,13 @@ struct CsvEnd {
 /// kept. Strict: a quotation mark inside an unquoted cell, text after a closing one and an end inside quotes are refused with line and
 /// column. `progress` gets the share done after each piece and cancels by returning false.
 CsvEnd readCsv(QIODevice& device, const QString& fileName, const CsvSink& sink, const std::function<bool(double)>& progress = {});
+
+/// How the text is written, where it is not ours: an encoding said beforehand (else told by the byte-order mark), another delimiter.
+struct CsvLayout {
+    std::optional<TextEncoding> encoding;
+    char delimiter = ',';
+};
+CsvEnd readCsv(QIODevice& device, const QString& fileName, const CsvLayout& layout, const CsvSink& sink,
+               const std::function<bool(double)>& progress = {});
 
 } // namespace rungwright

@@ -80,6 +80,10 @@ QString TextDecoder::encodingName() const
         return QStringLiteral("UTF-16LE");
     case Kind::utf16be:
         return QStringLiteral("UTF-16BE");
+    case Kind::singleByte: {
+        const std::string_view word = encodingWord(*m_said);
+        return QString::fromUtf8(word.data(), qsizetype(word.size()));
+    }
     case Kind::unknown:
     case Kind::utf8:
         break;
@@ -129,13 +133,40 @@ bool TextDecoder::start(bool atEnd)
     } else {
         m_kind = Kind::utf8;
     }
+    if (m_said && !followSaid())
+        return false;
     m_raw.erase(0, mark);
     m_byte = static_cast<qint64>(mark);
     return true;
 }
 
+// A mark is stronger than what was said: it is never there by chance.
+bool TextDecoder::followSaid()
+{
+    const bool marked = m_kind != Kind::utf8;
+    const bool fits = *m_said == TextEncoding::utf8      ? m_kind == Kind::utf8Bom
+                      : *m_said == TextEncoding::utf16le ? m_kind == Kind::utf16le
+                      : *m_said == TextEncoding::utf16be ? m_kind == Kind::utf16be
+                                                         : false;
+    const std::string_view said = encodingWord(*m_said);
+    if (marked && !fits) {
+        const QString found = m_kind == Kind::utf8Bom ? QStringLiteral("UTF-8") : encodingName();
+        return refuse(Words::tr("the file begins with the byte-order mark of %1, but is to be read as %2. Choose the encoding %1")
+                          .arg(found, QString::fromUtf8(said.data(), qsizetype(said.size()))));
+    }
+    if (*m_said == TextEncoding::utf16le)
+        m_kind = Kind::utf16le;
+    else if (*m_said == TextEncoding::utf16be)
+        m_kind = Kind::utf16be;
+    else if (isSingleByte(*m_said))
+        m_kind = Kind::singleByte;
+    return true;
+}
+
 bool TextDecoder::decode(bool atEnd, std::string& out)
 {
+    if (m_kind == Kind::singleByte)
+        return decodeSingleBytes(out);
     return m_kind == Kind::utf16le || m_kind == Kind::utf16be ? decodeUtf16(atEnd, out) : decodeUtf8(atEnd, out);
 }
 
@@ -208,6 +239,25 @@ bool TextDecoder::decodeUtf16(bool atEnd, std::string& out)
     m_raw.erase(0, i);
     if (atEnd && !m_raw.empty())
         return refuse(Words::tr("the UTF-16 file ends in the middle of a character. Save it anew, as UTF-8"));
+    return true;
+}
+
+bool TextDecoder::decodeSingleBytes(std::string& out)
+{
+    for (std::size_t i = 0; i < m_raw.size(); ++i) {
+        const char32_t c = characterOf(*m_said, byteAt(m_raw, i));
+        if (c == 0) {
+            m_byte += static_cast<qint64>(i);
+            if (byteAt(m_raw, i) == 0)
+                return refuseNul();
+            return refuse(Words::tr("the byte %1 stands for nothing in %2. Choose the encoding that the file was written in")
+                              .arg(hexBytes(m_raw.substr(i, 1), 0), encodingName()));
+        }
+        appendUtf8(c, out);
+        countLine(c);
+    }
+    m_byte += static_cast<qint64>(m_raw.size());
+    m_raw.clear();
     return true;
 }
 
