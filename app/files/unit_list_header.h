@@ -26,6 +26,11 @@ struct UnitListHeader {
     std::array<int, kColumnNames.size()> place; ///< Index of the column's cell in a row; -1 = the file does not have it.
     std::size_t cells = 0;                      ///< Cells a row must have.
     QStringList unknown;                        ///< Columns the tool has no use for, in file order.
+    /// Of a list read through a mapping: what its own header calls the column, and where it has it (from 1; 0 = nowhere). Messages tell
+    /// these. Empty and unused for a list of our own format.
+    std::array<QString, kColumnNames.size()> theirName;
+    std::array<int, kColumnNames.size()> theirPlace{};
+    bool mapped = false;
 
     int at(Column column) const { return place[static_cast<std::size_t>(column)]; }
 };

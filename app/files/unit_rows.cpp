@@ -82,7 +82,7 @@ bool UnitRows::readCells(qint64 line, std::span<const std::string_view> cells, R
         if (!complaint)
             return;
         if (firstBad) {
-            others << columnName(column);
+            others << shownName(column);
             return;
         }
         firstBad = column;
@@ -176,7 +176,7 @@ void UnitRows::finish()
 {
     for (Gathered& gathered : m_tiers) {
         Tier& tier = gathered.tierCase.tier;
-        if (gathered.floorLine == 0) {
+        if (gathered.floorLine == 0 && !m_floorsMayBeMissing) {
             refuse(gathered.lines.front(), Column::advertisedFloor,
                    {Words::tr("no row that can be taken gives the floor of the tier '%1' at '%2'")
                         .arg(shownText(tier.name), shownText(tier.site)),
@@ -189,6 +189,11 @@ void UnitRows::finish()
     }
 }
 
+QString UnitRows::shownName(Column column) const
+{
+    return m_header.mapped ? m_header.theirName[static_cast<std::size_t>(column)] : columnName(column);
+}
+
 void UnitRows::refuse(qint64 line, std::optional<Column> column, const Complaint& complaint, const QString& found)
 {
     ++m_result.refusedCount;
@@ -197,8 +202,8 @@ void UnitRows::refuse(qint64 line, std::optional<Column> column, const Complaint
     RefusedRow refused;
     refused.line = line;
     if (column) {
-        refused.column = m_header.at(*column) + 1;
-        refused.columnName = columnName(*column);
+        refused.column = m_header.mapped ? m_header.theirPlace[static_cast<std::size_t>(*column)] : m_header.at(*column) + 1;
+        refused.columnName = shownName(*column);
     }
     refused.wrong = complaint.wrong;
     refused.found = found;

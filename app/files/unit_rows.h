@@ -41,6 +41,8 @@ public:
     UnitRows(UnitListHeader header, Currency currency, qint64 currencyLine, UnitListResult& result);
 
     void take(qint64 line, std::span<const std::string_view> cells);
+    /// Tiers without a floor are to be taken, with the floor 0.
+    void takeTiersWithoutFloor() { m_floorsMayBeMissing = true; }
     /// After the last row: refuses tiers without a floor and moves the others into the result.
     void finish();
 
@@ -57,11 +59,13 @@ private:
     bool fitsTier(qint64 line, std::span<const std::string_view> cells, const Row& row);
     Gathered* tierOf(const Row& row);
     Gathered& newTier(const Row& row);
+    QString shownName(Column column) const;
     void refuse(qint64 line, std::optional<Column> column, const Complaint& complaint, const QString& found);
 
     UnitListHeader m_header;
     Currency m_currency;
     qint64 m_currencyLine;
+    bool m_floorsMayBeMissing = false;
     UnitListResult& m_result;
     std::deque<Gathered> m_tiers; ///< A deque: the name sets point into their tiers, which must not move.
     std::unordered_map<std::string, Gathered*> m_byKey;
