@@ -222,7 +222,7 @@ void BenchPage::askPrice(std::uint32_t unit)
             return;
         }
         label = tr("That is not a price above zero. Asking price, for example %1:")
-                    .arg(moneyText(tc->tier.advertisedFloor, m_bench.currency()));
+                    .arg(moneyText(m_bench.workedPrices()[unit], m_bench.currency()));
     }
 }
 

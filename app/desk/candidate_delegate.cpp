@@ -58,7 +58,7 @@ void CandidateDelegate::paint(QPainter* painter, const QStyleOptionViewItem& opt
                                   : std::nullopt;
     // One scale for all cards, that of the current ladder: they are there to be compared.
     if (const auto& low = m_bench.current().figures.lowest) {
-        ladder.low = static_cast<double>(std::min(*low, ladder.advertisedFloor).minor);
+        ladder.low = static_cast<double>((tc->tier.hasFloor() ? std::min(*low, ladder.advertisedFloor) : *low).minor);
         for (const Price price : m_bench.currentPrices())
             ladder.high = std::max(ladder.high.value_or(0.0), static_cast<double>(price.minor));
     }

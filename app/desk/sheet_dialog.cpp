@@ -88,7 +88,7 @@ void SheetDialog::showTitle(const TierCase& tierCase, int candidate)
     const QString name = nameOf(tierCase, candidate);
     m_ui->titleLabel->setText(name.isEmpty() ? tr("Price sheet of the current ladder") : tr("Price sheet of “%1”").arg(shortName(name)));
     m_ui->tierLabel->setText(tr("%1 · %2 · advertised from %3 %4")
-                                 .arg(shortName(site), shortName(tier), moneyText(tierCase.tier.advertisedFloor, m_currency),
+                                 .arg(shortName(site), shortName(tier), floorText(tierCase.tier.advertisedFloor, m_currency),
                                       QString::fromStdString(m_currency.code)));
     m_suggestion = fileNameFrom({site, tier, name.isEmpty() ? tr("current") : name}, QStringLiteral("csv"));
 }

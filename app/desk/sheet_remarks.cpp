@@ -29,6 +29,10 @@ QString counted(qsizetype count, const char* one, const char* several)
 
 void remarkOnFloor(const Measurement& m, const Currency& currency, QStringList& said)
 {
+    if (m.advertisedFloor.minor <= 0) {
+        said << tr("No advertised floor is known for this tier, so nothing was checked against it.");
+        return;
+    }
     const QString floor = moneyText(m.advertisedFloor, currency);
     if (m.onOffer == 0)
         said << tr("Nothing is on offer, so the advertised floor of %1 is not on sale.").arg(floor);

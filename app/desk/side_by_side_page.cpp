@@ -270,7 +270,7 @@ void SideBySidePage::showTitle()
     QString model = modelName(m.model);
     if (m.odds.left)
         model += *m.odds.left == 1 ? tr(", 1 unit left") : tr(", %1 units left").arg(numberText(*m.odds.left, 0));
-    const QString title = tr("%1 · advertised from %2 · %3").arg(tier, moneyText(m.advertisedFloor, m_bench.currency()), model);
+    const QString title = tr("%1 · advertised from %2 · %3").arg(tier, floorText(m.advertisedFloor, m_bench.currency()), model);
     m_ui->sideBySideTitle->setToolTip(title);
     m_ui->sideBySideTitle->setText(title);
     m_ui->sideBySidePlot->setPictureHeading(title);

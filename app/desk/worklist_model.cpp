@@ -119,7 +119,7 @@ QVariant WorklistModel::text(int row, int column) const
     case onOfferColumn:
         return tr("%1 / %2").arg(r.onOffer).arg(r.rentable);
     case floorColumn:
-        return moneyText(tier.advertisedFloor, currency);
+        return floorText(tier.advertisedFloor, currency);
     case cheapestColumn:
         return money(r.cheapest);
     case gapColumn:
@@ -174,7 +174,7 @@ QVariant WorklistModel::data(const QModelIndex& index, int role) const
                            .arg(QString::fromStdString(tier.site), QString::fromStdString(tier.name))
                            .arg(r.onOffer)
                            .arg(r.rentable)
-                           .arg(moneyText(tier.advertisedFloor, m_document.scenario().currency));
+                           .arg(floorText(tier.advertisedFloor, m_document.scenario().currency));
         if (r.gap)
             said += tr(", gap %1 (%2)").arg(text(index.row(), gapColumn).toString(), percentText(*r.share, true));
         const QString flags = flagWords(r.flags);

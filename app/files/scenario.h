@@ -6,6 +6,7 @@
 #include "ladder/currency.h"
 #include "ladder/unit.h"
 #include "reshape/rules.h"
+#include "tier_list.h"
 
 #include <optional>
 #include <string>
@@ -23,6 +24,24 @@ struct Candidate {
     bool operator==(const Candidate&) const = default;
 };
 
+/// One price of a sheet that was handed over.
+struct SignedPrice {
+    std::string unit; ///< The unit's name at that time.
+    Price before;
+    Price after;
+
+    bool operator==(const SignedPrice&) const = default;
+};
+
+/// The last price sheet of a tier that left the tool: what the operator decided to ask.
+struct SignedSheet {
+    std::string candidate;           ///< The ladder's name.
+    std::string whenUtc;             ///< ISO 8601, "2026-12-01T09:30:00Z".
+    std::vector<SignedPrice> prices; ///< Of the units whose price it changes, in unit order.
+
+    bool operator==(const SignedSheet&) const = default;
+};
+
 /// A tier and what was done with it.
 struct TierCase {
     Tier tier;
@@ -30,9 +49,22 @@ struct TierCase {
     std::optional<int> chosen; ///< Index of the candidate the user settled on.
     ModelSettings model;
     std::string note;
+    bool seen = false; ///< The user has dealt with this tier since the unit list came in.
+    std::optional<SignedSheet> signedOff;
 
     bool operator==(const TierCase&) const = default;
 };
+
+/// From where on the worklist flags a tier. The user's to set; these are common practice, no source.
+struct FlagThresholds {
+    double leansLeft = -0.5; ///< Flagged when g1 lies below.
+    int lastUnits = 3;       ///< Flagged with at most so many on offer, and at least one. >= 0.
+    double gapShare = 0.10;  ///< Flagged when the gap is at least this share of the advertised floor. >= 0.
+
+    bool operator==(const FlagThresholds&) const = default;
+};
+
+using TierList = SharedList<TierCase>;
 
 /// Everything one `*.rungs.json` file holds. Self-contained: no path inside.
 struct Scenario {
@@ -40,7 +72,8 @@ struct Scenario {
     std::string title;
     std::string note;
     PriceRules rules;
-    std::vector<TierCase> tiers;
+    FlagThresholds flags;
+    TierList tiers;
 
     bool operator==(const Scenario&) const = default;
 };

@@ -10,10 +10,12 @@
 
 #include <QStringList>
 
+#include <cmath>
 #include <limits>
 #include <map>
 #include <set>
 #include <unordered_map>
+#include <utility>
 
 namespace rungwright
 {
@@ -35,7 +37,8 @@ public:
     Scenario read(const QJsonValue& document)
     {
         const JsonWalk top(
-            document, {}, {Key("format"), Key("version"), Key("title"), Key("currency"), Key("note"), Key("rules"), Key("tiers")}, trouble);
+            document, {},
+            {Key("format"), Key("version"), Key("title"), Key("currency"), Key("note"), Key("rules"), Key("flags"), Key("tiers")}, trouble);
         Scenario scenario;
         scenario.title = top.text(Key("title"));
         scenario.note = top.text(Key("note"));
@@ -48,12 +51,14 @@ public:
         scenario.currency = m_currency;
         if (top.has(Key("rules")))
             scenario.rules = rules(top.value(Key("rules")));
+        if (top.has(Key("flags")))
+            scenario.flags = flags(top.value(Key("flags")));
         const QJsonArray tiers = top.list(Key("tiers"), true);
         std::map<std::pair<std::string, std::string>, qsizetype> seen;
         for (qsizetype i = 0; i < tiers.size() && !trouble.any(); ++i) {
             const QString place = top.placeOf(Key("tiers"), i);
             scenario.tiers.push_back(tier(tiers.at(i), place));
-            const Tier& read = scenario.tiers.back().tier;
+            const Tier& read = std::as_const(scenario.tiers).back().tier;
             const auto [same, fresh] = seen.emplace(std::pair(read.site, read.name), i);
             if (!fresh)
                 trouble.set(place, Words::tr("the same site and tier as tiers[%1]").arg(same->second),
@@ -96,17 +101,28 @@ private:
             points.endings.push_back(*price);
     }
 
+    FlagThresholds flags(const QJsonValue& value)
+    {
+        const JsonWalk walk(value, QStringLiteral("flags"), {Key("leans_left"), Key("last_units"), Key("gap_share")}, trouble);
+        FlagThresholds flags;
+        flags.leansLeft = walk.number(Key("leans_left"), -kGreatestDouble, kGreatestDouble, true).value_or(flags.leansLeft);
+        flags.lastUnits = walk.integer(Key("last_units"), 0, kMostLeft).value_or(flags.lastUnits);
+        flags.gapShare = walk.number(Key("gap_share"), 0, kGreatestDouble, true).value_or(flags.gapShare);
+        return flags;
+    }
+
     TierCase tier(const QJsonValue& value, const QString& place)
     {
-        const JsonWalk walk(
-            value, place,
-            {Key("site"), Key("tier"), Key("advertised_floor"), Key("note"), Key("model"), Key("units"), Key("candidates"), Key("chosen")},
-            trouble);
+        const JsonWalk walk(value, place,
+                            {Key("site"), Key("tier"), Key("advertised_floor"), Key("note"), Key("seen"), Key("model"), Key("units"),
+                             Key("candidates"), Key("chosen"), Key("signed_off")},
+                            trouble);
         TierCase tierCase;
         tierCase.tier.site = walk.name(Key("site"));
         tierCase.tier.name = walk.name(Key("tier"));
-        tierCase.tier.advertisedFloor = walk.neededPrice(Key("advertised_floor"), m_currency);
+        tierCase.tier.advertisedFloor = walk.price(Key("advertised_floor"), m_currency).value_or(Price{});
         tierCase.note = walk.text(Key("note"));
+        tierCase.seen = walk.yes(Key("seen"));
         if (walk.has(Key("model")))
             tierCase.model = model(walk.value(Key("model")), walk.placeOf(Key("model")));
         const QJsonArray units = walk.list(Key("units"), true);
@@ -132,6 +148,8 @@ private:
         }
         if (walk.has(Key("chosen")))
             tierCase.chosen = chosen(walk, tierCase);
+        if (walk.has(Key("signed_off")))
+            tierCase.signedOff = signedSheet(walk.value(Key("signed_off")), walk.placeOf(Key("signed_off")));
         return tierCase;
     }
 
@@ -211,6 +229,28 @@ private:
         return candidate;
     }
 
+    // The units it names may be gone by now, so they are not looked up.
+    SignedSheet signedSheet(const QJsonValue& value, const QString& place)
+    {
+        const JsonWalk walk(value, place, {Key("candidate"), Key("when"), Key("prices")}, trouble);
+        SignedSheet sheet;
+        sheet.candidate = walk.name(Key("candidate"));
+        sheet.whenUtc = walk.name(Key("when"));
+        const QJsonArray prices = walk.list(Key("prices"), true);
+        std::set<std::string> names;
+        for (qsizetype i = 0; i < prices.size() && !trouble.any(); ++i) {
+            const JsonWalk row(prices.at(i), walk.placeOf(Key("prices"), i), {Key("unit"), Key("before"), Key("after")}, trouble);
+            SignedPrice one;
+            one.unit = row.name(Key("unit"));
+            one.before = row.neededPrice(Key("before"), m_currency);
+            one.after = row.neededPrice(Key("after"), m_currency);
+            if (!trouble.any() && !names.insert(one.unit).second)
+                row.refuse(Key("unit"), Words::tr("a unit that has its price already"), Words::tr("each unit once"));
+            sheet.prices.push_back(std::move(one));
+        }
+        return sheet;
+    }
+
     Currency m_currency;
 };
 
@@ -226,8 +266,10 @@ QString envelopeTrouble(const QJsonDocument& document)
     if (version.isDouble() && number > kScenarioVersion)
         return Words::tr("the scenario is of format version %1, and this program knows versions up to %2. Open it with a newer Rungwright")
             .arg(QString::number(number, 'g', 12), QString::number(kScenarioVersion));
-    if (!version.isDouble() || number != kScenarioVersion)
-        return Words::tr("version: not a version; found %1; wanted: %2").arg(shownValue(version), QString::number(kScenarioVersion));
+    // Version 1 is version 2 without thresholds, seen marks and sheets handed over.
+    if (!version.isDouble() || number < 1 || number != std::floor(number))
+        return Words::tr("version: not a version; found %1; wanted: a whole number from 1 to %2")
+            .arg(shownValue(version), QString::number(kScenarioVersion));
     return {};
 }
 

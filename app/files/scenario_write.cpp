@@ -74,15 +74,24 @@ public:
         m_out += "\n  },\n";
     }
 
+    void flags(const FlagThresholds& flags)
+    {
+        m_out += "  \"flags\": {\"leans_left\": " + number(flags.leansLeft) + ", \"last_units\": " + std::to_string(flags.lastUnits) +
+                 ", \"gap_share\": " + number(flags.gapShare) + "},\n";
+    }
+
     void tier(const TierCase& tierCase)
     {
         const Tier& tier = tierCase.tier;
         m_out += "    {\n";
         m_out += "      \"site\": " + jsonText(tier.site) + ",\n";
         m_out += "      \"tier\": " + jsonText(tier.name) + ",\n";
-        m_out += "      \"advertised_floor\": " + price(tier.advertisedFloor) + ",\n";
+        if (tier.hasFloor())
+            m_out += "      \"advertised_floor\": " + price(tier.advertisedFloor) + ",\n";
         if (!tierCase.note.empty())
             m_out += "      \"note\": " + jsonText(tierCase.note) + ",\n";
+        if (tierCase.seen)
+            m_out += "      \"seen\": true,\n";
         model(tierCase.model);
         m_out += "      \"units\": [";
         list(tier.units.size(), "        ", "      ", [&](std::size_t i) { unit(tier.units[i]); });
@@ -90,6 +99,8 @@ public:
         list(tierCase.candidates.size(), "        ", "      ", [&](std::size_t i) { candidate(tierCase.candidates[i], tier.units); });
         if (tierCase.chosen)
             m_out += ",\n      \"chosen\": " + jsonText(tierCase.candidates[static_cast<std::size_t>(*tierCase.chosen)].name);
+        if (tierCase.signedOff)
+            signedSheet(*tierCase.signedOff);
         m_out += "\n    }";
     }
 
@@ -148,6 +159,17 @@ private:
         m_out += "\n        }";
     }
 
+    void signedSheet(const SignedSheet& sheet)
+    {
+        m_out += ",\n      \"signed_off\": {\n        \"candidate\": " + jsonText(sheet.candidate) +
+                 ",\n        \"when\": " + jsonText(sheet.whenUtc) + ",\n        \"prices\": [";
+        list(sheet.prices.size(), "          ", "        ", [&](std::size_t i) {
+            const SignedPrice& one = sheet.prices[i];
+            m_out += "{\"unit\": " + jsonText(one.unit) + ", \"before\": " + price(one.before) + ", \"after\": " + price(one.after) + "}";
+        });
+        m_out += "\n      }";
+    }
+
     const Currency& m_currency;
 };
 
@@ -163,6 +185,7 @@ QByteArray scenarioToJson(const Scenario& scenario)
     out += "  \"currency\": " + jsonText(scenario.currency.code) + ",\n";
     out += "  \"note\": " + jsonText(scenario.note) + ",\n";
     writer.rules(scenario.rules);
+    writer.flags(scenario.flags);
     out += "  \"tiers\": [";
     writer.list(scenario.tiers.size(), "", "  ", [&](std::size_t i) { writer.tier(scenario.tiers[i]); });
     out += "\n}\n";

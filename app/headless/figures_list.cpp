@@ -62,7 +62,7 @@ std::vector<NamedFigure> namedFigures(const MeasuredLadder& measured, const Curr
         {"", "units", count(m.units)},
         {"", "rentable", count(m.rentable)},
         {"", "on_offer", count(m.onOffer)},
-        {"", "advertised_floor", money(m.advertisedFloor)},
+        {"", "advertised_floor", tier.hasFloor() ? money(m.advertisedFloor) : Value{}},
         {"", "lowest", money(m.figures.lowest)},
         {"", "highest", money(m.figures.highest)},
         {"", "width", money(m.figures.width)},

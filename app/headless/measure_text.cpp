@@ -30,7 +30,7 @@ QString overview(const std::vector<MeasuredLadder>& all, const Currency& currenc
         table.add({QString::fromStdString(tier.site), QString::fromStdString(tier.name),
                    QString::fromUtf8(candidate.data(), qsizetype(candidate.size())),
                    QStringLiteral("%1 / %2").arg(locale.toString(qulonglong(m.onOffer)), locale.toString(qulonglong(m.rentable))),
-                   moneyText(m.advertisedFloor, currency, locale), money(m.gap.expectedCheapest, currency, locale),
+                   floorText(m.advertisedFloor, currency, locale), money(m.gap.expectedCheapest, currency, locale),
                    money(m.gap.gap, currency, locale), percent(m.gap.gapShare, locale), percent(m.gap.chanceFloorMet, locale),
                    m.figures.skew.moment ? numberText(*m.figures.skew.moment, 2, locale) : undefinedText()});
     }

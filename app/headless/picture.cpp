@@ -7,6 +7,8 @@
 
 #include <QFileInfo>
 
+#include <algorithm>
+
 namespace rungwright
 {
 
@@ -22,7 +24,9 @@ ExitStatus picture(const Request& request)
 
     // --site and --tier together name one tier at most.
     const int candidate = ladders.front().candidate;
-    const int tier = int(ladders.front().tierCase - scenario.tiers.data());
+    const TierList& tiers = scenario.tiers;
+    const auto place = std::find_if(tiers.begin(), tiers.end(), [&](const TierCase& one) { return &one == ladders.front().tierCase; });
+    const int tier = int(place - tiers.begin());
     Document document;
     document.begin(std::move(scenario), request.file, true);
     const Outcome<bool> drawn = renderBench(document, tier, candidate, request.out);

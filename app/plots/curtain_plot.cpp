@@ -133,7 +133,7 @@ void CurtainPlot::paintAbove(QPainter& painter)
         return;
     painter.save();
     const double floorY = frame().y(static_cast<double>(m_bench->worked().advertisedFloor.minor));
-    if (floorY >= area().top() && floorY <= area().bottom())
+    if (m_bench->tierCase()->tier.hasFloor() && floorY >= area().top() && floorY <= area().bottom())
         paintFloorLine(painter, area().left(), area().right(), floorY, look());
     const Qt::PenCapStyle cap = m_bench->worked().model == ModelKind::fitted ? Qt::FlatCap : Qt::SquareCap;
     if (m_bench->candidate() >= 0)

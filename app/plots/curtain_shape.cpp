@@ -22,7 +22,8 @@ void CurtainShape::build(const Measurement& m, const CurtainFrame& frame)
     if (m.curtain.empty() || !(frame.high > frame.low))
         return;
     const bool steps = m.model != ModelKind::fitted;
-    const double floor = static_cast<double>(m.advertisedFloor.minor);
+    // Without a known floor no area is a gap.
+    const double floor = m.advertisedFloor.minor > 0 ? static_cast<double>(m.advertisedFloor.minor) : frame.high;
     const double fromPrice = std::clamp(floor, frame.low, frame.high);
     const double right = frame.x(1);
     const bool underFloor = !m.ladder.empty() && m.ladder.front().price < m.advertisedFloor;

@@ -141,6 +141,10 @@ void layOutBand(const BandInput& in, const QFontMetricsF& plain, const QFontMetr
         placeAtLine(in.floorText, in.floorY, 1.0, PlacedLabel::Tone::floor, strong, room, out.labels);
         return;
     }
+    if (std::isnan(in.floorY)) {
+        placeAtLine(in.expectedText, in.expectedY, -1.0, PlacedLabel::Tone::gap, strong, room, out.labels);
+        return;
+    }
     const auto inside = [&area](double y) { return std::clamp(y, area.top(), area.bottom()); };
     const double top = inside(std::min(in.floorY, in.expectedY));
     const double bottom = inside(std::max(in.floorY, in.expectedY));

@@ -52,7 +52,7 @@ private:
 
 /// The gap on the ladder in pixels: a band from the advertised floor to the expected cheapest.
 struct BandInput {
-    double floorY = 0;
+    double floorY = 0;    ///< NaN: no floor is known; then there is no band either.
     double expectedY = 0; ///< NaN when undefined.
     double claimY = 0;    ///< Where the claim part ends; NaN when there is none to show.
     QString expectedText; ///< "expected cheapest 98.19"

@@ -43,7 +43,7 @@ void LadderPlot::paintMarks(QPainter& painter)
         return;
     painter.save();
     const double floorY = yOf(static_cast<double>(m_bench->worked().advertisedFloor.minor));
-    if (floorY >= area().top() && floorY <= area().bottom())
+    if (m_bench->tierCase()->tier.hasFloor() && floorY >= area().top() && floorY <= area().bottom())
         paintFloorLine(painter, area().left(), area().right(), floorY, look());
     paintTrace(painter);
     m_rungs.paint(painter, m_still, m_size, look());

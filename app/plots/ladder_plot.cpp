@@ -152,8 +152,8 @@ void LadderPlot::describe() { setAccessibleDescription(m_bench ? ladderDescripti
 QCPRange LadderPlot::wantedRange() const
 {
     const Measurement& m = m_bench->worked();
-    double low = static_cast<double>(m.advertisedFloor.minor);
-    double high = low;
+    double low = std::numeric_limits<double>::max();
+    double high = std::numeric_limits<double>::lowest();
     const auto take = [&](double price) {
         low = std::min(low, price);
         high = std::max(high, price);
@@ -162,6 +162,8 @@ QCPRange LadderPlot::wantedRange() const
         for (const Price price : prices)
             take(static_cast<double>(price.minor));
     }
+    if (m_bench->tierCase()->tier.hasFloor() || high < low)
+        take(static_cast<double>(m.advertisedFloor.minor));
     if (m.gap.expectedCheapest)
         take(*m.gap.expectedCheapest);
     if (!(high > low)) {

@@ -73,12 +73,16 @@ void LadderPlot::layOutBandLabels(Scene& scene, LabelRoom& room)
     const Measurement& m = m_bench->worked();
     const Currency& currency = m_bench->currency();
     BandInput in;
-    in.floorY = yOf(static_cast<double>(m.advertisedFloor.minor));
-    in.expectedY = in.claimY = kNowhere;
-    in.floorText = tr("advertised floor %1").arg(moneyText(m.advertisedFloor, currency));
-    if (m.gap.gap) {
+    in.floorY = in.expectedY = in.claimY = kNowhere;
+    if (m_bench->tierCase()->tier.hasFloor()) {
+        in.floorY = yOf(static_cast<double>(m.advertisedFloor.minor));
+        in.floorText = tr("advertised floor %1").arg(moneyText(m.advertisedFloor, currency));
+    }
+    if (m.gap.expectedCheapest) {
         in.expectedY = yOf(*m.gap.expectedCheapest);
         in.expectedText = tr("expected cheapest %1").arg(moneyText(*m.gap.expectedCheapest, currency));
+    }
+    if (m.gap.gap) {
         in.gapText = tr("gap %1").arg(moneyText(*m.gap.gap, currency));
         if (m.gap.gapShare)
             in.gapText += QStringLiteral(" (") + percentText(*m.gap.gapShare, true) + QLatin1Char(')');
@@ -99,7 +103,8 @@ void LadderPlot::layOutBandLabels(Scene& scene, LabelRoom& room)
         const QRectF& in0 = room.area();
         std::vector<QRectF> wanted;
         for (const double x : {in0.right() - 8 - size.width(), in0.left() + 8, in0.center().x() - 0.5 * size.width()}) {
-            for (const double y : {in.floorY - 8 - size.height(), in0.top() + 8, in0.center().y(), in0.bottom() - 8 - size.height()})
+            for (const double y : {std::isnan(in.floorY) ? in0.top() + 8 : in.floorY - 8 - size.height(), in0.top() + 8, in0.center().y(),
+                                   in0.bottom() - 8 - size.height()})
                 wanted.emplace_back(QPointF(x, y), size);
         }
         const QRectF rect = room.choose(wanted);

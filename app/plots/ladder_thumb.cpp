@@ -15,11 +15,16 @@ void paintLadderThumb(QPainter& painter, const QRectF& where, const ThumbLadder&
     std::vector<Rung> rungs;
     sortLadder(ladder.units, ladder.prices, Among::rentable, rungs);
     const auto floor = static_cast<double>(ladder.advertisedFloor.minor);
+    const bool hasFloor = ladder.advertisedFloor.minor > 0;
     double low = floor;
     double high = floor;
     if (!rungs.empty()) {
-        low = std::min(low, static_cast<double>(rungs.front().price.minor));
-        high = std::max(high, static_cast<double>(rungs.back().price.minor));
+        low = static_cast<double>(rungs.front().price.minor);
+        high = static_cast<double>(rungs.back().price.minor);
+        if (hasFloor) {
+            low = std::min(low, floor);
+            high = std::max(high, floor);
+        }
     }
     low = ladder.low.value_or(low);
     high = ladder.high.value_or(high);
@@ -35,9 +40,10 @@ void paintLadderThumb(QPainter& painter, const QRectF& where, const ThumbLadder&
     const double floorY = y(floor);
     if (ladder.expectedCheapest) {
         const double expectedY = y(*ladder.expectedCheapest);
-        paintGapBand(painter,
-                     QRectF(QPointF(where.left(), std::min(floorY, expectedY)), QPointF(where.right(), std::max(floorY, expectedY))),
-                     QRectF(), look);
+        if (hasFloor)
+            paintGapBand(painter,
+                         QRectF(QPointF(where.left(), std::min(floorY, expectedY)), QPointF(where.right(), std::max(floorY, expectedY))),
+                         QRectF(), look);
         painter.setRenderHint(QPainter::Antialiasing, true);
         painter.setPen(QPen(look.gapLine, 1.4, Qt::SolidLine, Qt::FlatCap));
         painter.drawLine(QPointF(where.left(), expectedY), QPointF(where.right(), expectedY));
@@ -46,7 +52,8 @@ void paintLadderThumb(QPainter& painter, const QRectF& where, const ThumbLadder&
     QPen dashed(look.floor, 1.2, Qt::CustomDashLine, Qt::FlatCap);
     dashed.setDashPattern({4, 3});
     painter.setPen(dashed);
-    painter.drawLine(QPointF(where.left(), floorY), QPointF(where.right(), floorY));
+    if (hasFloor)
+        painter.drawLine(QPointF(where.left(), floorY), QPointF(where.right(), floorY));
 
     const double dx = rungs.empty() ? 0 : in.width() / static_cast<double>(rungs.size());
     painter.setPen(Qt::NoPen);

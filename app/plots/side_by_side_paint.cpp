@@ -139,7 +139,8 @@ void SideBySidePlot::paintColumn(QPainter& painter, const Side& side)
         paintGapBand(painter, band, hatched, look());
         paintExpectedLine(painter, side.ladder.left(), side.ladder.right(), expectedY, look());
     }
-    paintFloorLine(painter, side.ladder.left(), side.curtain.right(), floorY, look());
+    if (m_floor.minor > 0)
+        paintFloorLine(painter, side.ladder.left(), side.curtain.right(), floorY, look());
     side.shape.paintLine(painter, QPen(look().gapLine, 1.6, Qt::SolidLine, Qt::SquareCap, Qt::MiterJoin));
 
     const double dx = side.rungs.empty() ? 0 : (side.ladder.width() - 2 * kInset) / static_cast<double>(side.rungs.size());
@@ -180,14 +181,16 @@ void SideBySidePlot::paintColumnLabels(QPainter& painter, const Side& side, std:
     if (side.measurement.gap.gap)
         write(moneyText(*side.measurement.gap.expectedCheapest, m_currency), at.y(*side.measurement.gap.expectedCheapest), away,
               PlacedLabel::Tone::gap);
-    write(moneyText(m_floor, m_currency), at.y(static_cast<double>(m_floor.minor)), -away, PlacedLabel::Tone::floor);
+    if (m_floor.minor > 0)
+        write(moneyText(m_floor, m_currency), at.y(static_cast<double>(m_floor.minor)), -away, PlacedLabel::Tone::floor);
 }
 
 void SideBySidePlot::paintOverlay(QPainter& painter)
 {
     const Side& first = m_sides.front();
     const double floorY = frame(first.ladder).y(static_cast<double>(m_floor.minor));
-    paintFloorLine(painter, first.ladder.left(), first.curtain.right(), floorY, look());
+    if (m_floor.minor > 0)
+        paintFloorLine(painter, first.ladder.left(), first.curtain.right(), floorY, look());
     for (std::size_t s = 0; s < m_sides.size(); ++s) {
         const Side& side = m_sides[s];
         if (side.rungs.empty())
@@ -210,6 +213,8 @@ void SideBySidePlot::paintOverlay(QPainter& painter)
         for (std::size_t i = start; i < side.rungs.size(); i += every)
             paintMark(painter, points[static_cast<qsizetype>(i)], s, 3.4, look());
     }
+    if (m_floor.minor <= 0)
+        return;
     painter.setPen(look().floor);
     painter.setFont(strongFont());
     painter.drawText(QRectF(first.ladder.left(), floorY + 3, first.ladder.width() - 8, QFontMetricsF(strongFont()).height()),

@@ -9,6 +9,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <limits>
 
 namespace rungwright
 {
@@ -66,7 +67,9 @@ QString SideBySidePlot::gapText(const Side& side) const
 void SideBySidePlot::describe()
 {
     QStringList lines;
-    lines << tr("%1 ladders on one price axis. Advertised floor %2.").arg(m_sides.size()).arg(moneyText(m_floor, m_currency));
+    lines << (m_floor.minor > 0
+                  ? tr("%1 ladders on one price axis. Advertised floor %2.").arg(m_sides.size()).arg(moneyText(m_floor, m_currency))
+                  : tr("%1 ladders on one price axis. No advertised floor is known.").arg(m_sides.size()));
     for (const Side& side : m_sides) {
         const GapFigures& gap = side.measurement.gap;
         lines << (gap.gap ? tr("%1: %2, expected cheapest %3.").arg(side.name, gapText(side), moneyText(*gap.expectedCheapest, m_currency))
@@ -78,13 +81,17 @@ void SideBySidePlot::describe()
 void SideBySidePlot::areaChanged()
 {
     const QFontMetricsF metrics(font());
-    double low = static_cast<double>(m_floor.minor);
-    double high = low;
+    double low = std::numeric_limits<double>::max();
+    double high = std::numeric_limits<double>::lowest();
     for (const Side& side : m_sides) {
         if (!side.rungs.empty()) {
             low = std::min(low, static_cast<double>(side.rungs.front().price.minor));
             high = std::max(high, static_cast<double>(side.rungs.back().price.minor));
         }
+    }
+    if (m_floor.minor > 0 || high < low) {
+        low = std::min(low, static_cast<double>(m_floor.minor));
+        high = std::max(high, static_cast<double>(m_floor.minor));
     }
     if (!(high > low)) {
         const double around = std::max(1.0, 0.05 * std::abs(low));

@@ -76,6 +76,14 @@ QString remarks(const Measurement& m, const Currency& currency, const QLocale& l
 
 Reading reading(const Measurement& m, const Currency& currency, const QLocale& locale)
 {
+    if (!m.gap.gap && m.advertisedFloor.minor <= 0 && m.rentable > 0 && m.odds.note != OddsNote::nothingOnOffer) {
+        QString sentence = tr("No advertised floor is known for this tier, so there is no gap to show.");
+        if (m.gap.expectedCheapest)
+            sentence +=
+                QLatin1Char(' ') +
+                tr("The cheapest unit an enquirer finds is expected at %1.").arg(moneyText(*m.gap.expectedCheapest, currency, locale));
+        return {tr("No floor"), {}, sentence};
+    }
     if (!m.gap.gap) {
         const QString headline = m.onOffer == 0 ? tr("Nothing on offer") : tr("Gap undefined");
         return {headline, {}, whyUndefined(m)};

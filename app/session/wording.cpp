@@ -53,6 +53,11 @@ QString percentText(double share, bool fine, const QLocale& locale)
 
 QString numberText(double value, int decimals, const QLocale& locale) { return digits(value, decimals, locale); }
 
+QString floorText(Price advertisedFloor, const Currency& currency, const QLocale& locale)
+{
+    return advertisedFloor.minor > 0 ? moneyText(advertisedFloor, currency, locale) : undefinedText();
+}
+
 QString undefinedText() { return QString(QChar(0x2013)); }
 
 std::optional<Price> moneyFromText(const QString& text, const Currency& currency, const QLocale& locale)
@@ -129,6 +134,8 @@ QString oddsNoteText(OddsNote note)
     case OddsNote::fitNotFeasible:
         return tr("No beta distribution fits these prices (too few, all equal, too spread out, or a price below the floor). Choose the "
                   "perceived range.");
+    case OddsNote::noFloor:
+        return tr("The fitted range begins at the advertised floor, and none is known for this tier.");
     case OddsNote::neverFree:
         return tr("Every unit's chance to be free is zero.");
     }

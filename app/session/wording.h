@@ -25,6 +25,8 @@ QString percentText(double share, bool fine = false, const QLocale& locale = QLo
 QString numberText(double value, int decimals = 2, const QLocale& locale = QLocale());
 /// What stands for a figure that is undefined.
 QString undefinedText();
+/// The advertised floor as money, or undefinedText() when none is known.
+QString floorText(Price advertisedFloor, const Currency& currency, const QLocale& locale = QLocale());
 
 /// Reads an amount typed by the user in their locale, or plainly with a point. Nothing when it is no amount of that currency.
 std::optional<Price> moneyFromText(const QString& text, const Currency& currency, const QLocale& locale = QLocale());

@@ -21,6 +21,7 @@ enum class OddsNote : unsigned char {
     fitNotFeasible,  ///< fitted: variance >= mean (1 - mean) on the unit scale, or the prices do not lie in [floor, highest] with some
                      ///< spread.
     neverFree,       ///< unit: every chance is 0.
+    noFloor,         ///< fitted: the range begins at the advertised floor, and none is known.
 };
 
 /// For each rung of a sorted ladder the probability that it is the cheapest unit found. perRung sums to 1 - none (to

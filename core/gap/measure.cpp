@@ -12,6 +12,16 @@ namespace
 // Enough for a polyline that looks smooth across a wide screen.
 constexpr int kSmoothPoints = 160;
 
+void forgetWhatNeedsTheFloor(Measurement& result)
+{
+    result.figures.width.reset();
+    result.figures.meanStanding.reset();
+    result.belowFloor = result.atFloor = 0;
+    const std::optional<double> cheapest = result.gap.expectedCheapest;
+    result.gap = GapFigures{};
+    result.gap.expectedCheapest = cheapest;
+}
+
 } // namespace
 
 const Measurement& Measurer::measure(const Tier& tier, std::span<const Price> prices, const ModelSettings& settings, MeasureParts parts)
@@ -37,14 +47,18 @@ const Measurement& Measurer::measure(const Tier& tier, std::span<const Price> pr
 
     result.fit.reset();
     if (settings.kind == ModelKind::fitted && result.odds.defined()) {
-        result.fit = fitRange(result.ladder, tier.advertisedFloor);
+        if (tier.hasFloor())
+            result.fit = fitRange(result.ladder, tier.advertisedFloor);
         if (!result.fit) {
             result.odds.perRung.clear();
-            result.odds.note = OddsNote::fitNotFeasible;
+            result.odds.note = tier.hasFloor() ? OddsNote::fitNotFeasible : OddsNote::noFloor;
         }
     }
     result.gap = result.fit ? gapFigures(*result.fit, *result.odds.left, result.ladder.front().price, tier.advertisedFloor)
                             : gapFigures(result.ladder, result.odds, tier.advertisedFloor);
+
+    if (!tier.hasFloor())
+        forgetWhatNeedsTheFloor(result);
 
     result.curtain.clear();
     result.thinning.clear();
@@ -53,7 +67,8 @@ const Measurement& Measurer::measure(const Tier& tier, std::span<const Price> pr
             curtainCurve(*result.fit, *result.odds.left, kSmoothPoints, result.curtain);
         else
             curtainSteps(result.ladder, result.odds, result.curtain);
-        thinningCurve(result.ladder, tier.units, settings, result.fit, tier.advertisedFloor, m_thinning, result.thinning);
+        if (tier.hasFloor())
+            thinningCurve(result.ladder, tier.units, settings, result.fit, tier.advertisedFloor, m_thinning, result.thinning);
     }
     return result;
 }

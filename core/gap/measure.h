@@ -11,7 +11,8 @@
 namespace rungwright
 {
 
-/// Everything the tool says of one ladder under one model.
+/// Everything the tool says of one ladder under one model. Of a tier without a known floor everything that is counted from the floor is
+/// undefined: width, standing, the gap figures but the expected cheapest, the thinning curve; belowFloor and atFloor are 0.
 struct Measurement {
     std::size_t units = 0;
     std::size_t rentable = 0;

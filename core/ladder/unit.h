@@ -39,9 +39,11 @@ struct Unit {
 struct Tier {
     std::string site;
     std::string name;
-    Price advertisedFloor; ///< > 0.
+    Price advertisedFloor; ///< > 0; 0 = no floor is known, see hasFloor().
     std::vector<Unit> units;
 
+    /// Without a floor there is no gap: only what needs none is defined.
+    bool hasFloor() const { return advertisedFloor.minor > 0; }
     bool operator==(const Tier&) const = default;
 };
 

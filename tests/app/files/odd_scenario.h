@@ -42,7 +42,9 @@ inline TierCase oddTier(Dice& dice, std::set<std::string>& taken)
     TierCase made;
     made.tier.site = freshName(dice, taken);
     made.tier.name = freshName(dice, taken);
-    made.tier.advertisedFloor = oddPrice(dice);
+    if (dice.whole(0, 5) > 0)
+        made.tier.advertisedFloor = oddPrice(dice);
+    made.seen = dice.coin();
     made.note = dice.coin() ? oddText(dice, 40) : "";
     made.model.kind = kModels[static_cast<std::size_t>(dice.whole(0, int(kModels.size()) - 1))];
     if (dice.coin())
@@ -61,6 +63,14 @@ inline TierCase oddTier(Dice& dice, std::set<std::string>& taken)
     }
     if (!made.candidates.empty() && dice.coin())
         made.chosen = dice.whole(0, int(made.candidates.size()) - 1);
+    if (dice.coin()) {
+        SignedSheet sheet{freshName(dice, candidates), "2026-12-01T09:30:00Z", {}};
+        for (const Unit& unit : made.tier.units) {
+            if (dice.coin())
+                sheet.prices.push_back({unit.name, unit.asking, oddPrice(dice)});
+        }
+        made.signedOff = std::move(sheet);
+    }
     return made;
 }
 
@@ -85,6 +95,7 @@ inline Scenario oddScenario(Dice& dice)
         rules.greatestChange = oddPrice(dice);
     if (dice.coin())
         rules.ceiling = oddPrice(dice);
+    made.flags = {dice.whole(-300, 300) / 70.0, dice.whole(0, 9), dice.whole(0, 90) / 70.0};
     std::set<std::string> taken;
     for (int i = dice.whole(0, 4); i > 0; --i)
         made.tiers.push_back(oddTier(dice, taken));

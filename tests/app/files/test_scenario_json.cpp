@@ -37,12 +37,17 @@ private slots:
         tierCase.model = {ModelKind::remainder, 3, 2.5};
         tierCase.candidates = {{"One", "why", {{6900}, {8000}}}, {"Two", "", {{7000}, {8250}}}};
         tierCase.chosen = 1;
+        tierCase.seen = true;
+        tierCase.signedOff = SignedSheet{"Two", "2026-11-30T08:15:00Z", {{"A", {6900}, {7000}}}};
+        scenario.flags = {-0.25, 2, 0.125};
         TierCase empty;
         empty.tier = {"Quay", "Empty", {1}, {}};
-        scenario.tiers = {tierCase, empty};
+        TierCase noFloor;
+        noFloor.tier = {"Quay", "No floor", {}, {}};
+        scenario.tiers = {tierCase, empty, noFloor};
         QCOMPARE(scenarioToJson(scenario), QByteArray(R"({
   "format": "rungwright-scenario",
-  "version": 1,
+  "version": 2,
   "title": "Quay \"one\"",
   "currency": "EUR",
   "note": "line\nend",
@@ -55,12 +60,14 @@ private slots:
     "greatest_change": "10.00",
     "ceiling": "500.00"
   },
+  "flags": {"leans_left": -0.25, "last_units": 2, "gap_share": 0.125},
   "tiers": [
     {
       "site": "Quay",
       "tier": "Room 4",
       "advertised_floor": "69.00",
       "note": "n",
+      "seen": true,
       "model": {"kind": "remainder", "left": 3, "load": 2.5},
       "units": [
         {"unit": "A", "price": "69.00", "status": "vacant"},
@@ -83,12 +90,26 @@ private slots:
           ]
         }
       ],
-      "chosen": "Two"
+      "chosen": "Two",
+      "signed_off": {
+        "candidate": "Two",
+        "when": "2026-11-30T08:15:00Z",
+        "prices": [
+          {"unit": "A", "before": "69.00", "after": "70.00"}
+        ]
+      }
     },
     {
       "site": "Quay",
       "tier": "Empty",
       "advertised_floor": "0.01",
+      "model": {"kind": "perceived"},
+      "units": [],
+      "candidates": []
+    },
+    {
+      "site": "Quay",
+      "tier": "No floor",
       "model": {"kind": "perceived"},
       "units": [],
       "candidates": []

@@ -56,10 +56,10 @@ private slots:
         };
         add("\"rungwright-scenario\"", "\"other\"", "F: this is not a scenario");
         add("\"format\"", "\"formart\"", "F: this is not a scenario");
-        add("\"version\": 1", "\"version\": 2",
-            "F: the scenario is of format version 2, and this program knows versions up to 1. Open it with a newer");
+        add("\"version\": 1", "\"version\": 3",
+            "F: the scenario is of format version 3, and this program knows versions up to 2. Open it with a newer");
         add("\"version\": 1", "\"version\": 1e300", "F: the scenario is of format version 1e+300");
-        add("\"version\": 1", "\"version\": 0", "F: version: not a version; found 0; wanted: 1");
+        add("\"version\": 1", "\"version\": 0", "F: version: not a version; found 0; wanted: a whole number from 1 to 2");
         add("\"version\": 1", "\"version\": 0.5", "F: version: not a version; found 0.5");
         add("\"version\": 1", "\"version\": \"1\"", "F: version: not a version; found '1'");
         add("\"version\": 1,", "", "F: version: not a version; found nothing");
@@ -88,7 +88,21 @@ private slots:
         add("\"site\": \"S\", ", "", "F: tiers[0].site: missing");
         add("\"tier\": \"T\"", "\"tier\": [\"T\"]", "F: tiers[0].tier: not a text; found a list");
         add("\"69.00\"", "\"69.001\"", "F: tiers[0].advertised_floor: more decimals than the currency has; found '69.001'");
-        add("\"advertised_floor\": \"69.00\", ", "", "F: tiers[0].advertised_floor: missing");
+        add("\"advertised_floor\": \"69.00\", ", "\"advertised_floor\": null, ", "F: tiers[0].advertised_floor: ");
+        add("\"advertised_floor\": \"69.00\", ", "\"advertised_floor\": \"0.00\", ", "F: tiers[0].advertised_floor: not above 0");
+        add("\"chosen\": \"c1\"", "\"chosen\": \"c1\", \"seen\": 1", "F: tiers[0].seen: neither true nor false; found 1");
+        add("\"chosen\": \"c1\"", "\"chosen\": \"c1\", \"signed_off\": {\"when\": \"now\", \"prices\": []}",
+            "F: tiers[0].signed_off.candidate: missing");
+        add("\"chosen\": \"c1\"",
+            "\"chosen\": \"c1\", \"signed_off\": {\"candidate\": \"c\", \"when\": \"now\", \"prices\": [{\"unit\": \"A\", \"before\": "
+            "\"1\"}]}",
+            "F: tiers[0].signed_off.prices[0].after: missing");
+        add("\"chosen\": \"c1\"",
+            "\"chosen\": \"c1\", \"signed_off\": {\"candidate\": \"c\", \"when\": \"now\", \"prices\": ["
+            "{\"unit\": \"A\", \"before\": \"1\", \"after\": \"2\"}, {\"unit\": \"A\", \"before\": \"1\", \"after\": \"2\"}]}",
+            "F: tiers[0].signed_off.prices[1].unit: a unit that has its price already");
+        add("\"tiers\": [", "\"flags\": {\"last_units\": -1}, \"tiers\": [", "F: flags.last_units: not a whole number in range; found -1");
+        add("\"tiers\": [", "\"flags\": {\"gap_share\": -0.5}, \"tiers\": [", "F: flags.gap_share: not a number in range; found -0.5");
         add("\"perceived\"", "\"guess\"", "F: tiers[0].model.kind: not a model; found 'guess'; wanted: one of perceived, fitted");
         add("\"left\": 3", "\"left\": 0", "F: tiers[0].model.left: not a whole number in range; found 0; wanted: a whole number from 1");
         add("\"left\": 3", "\"left\": 2.5", "F: tiers[0].model.left: not a whole number in range; found 2.5");

@@ -46,7 +46,7 @@ Scenario edgeSample()
     scenario.title = "Edge cases (invented)";
     scenario.note = "Every tier here is invented and odd in its own way: what it shows stands in its name or note. No currency is named.";
 
-    std::vector<TierCase>& tiers = scenario.tiers;
+    TierList& tiers = scenario.tiers;
     tiers.push_back(tierOf("One unit", 5000, {{"only", 6200}}));
     tiers.push_back(tierOf("None on offer", 5000, {{"n1", 5000, occupied}, {"n2", 5600, reserved}, {"n3", 6100, occupied}}));
     tiers.push_back(tierOf("All equal", 5000, {{"e1", 5500}, {"e2", 5500}, {"e3", 5500}, {"e4", 5500, occupied}}));
