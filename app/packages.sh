@@ -10,8 +10,8 @@ rungwright_build_packages=(
     libqcustomplot-dev libeigen3-dev libboost-math-dev libcsv-dev
     fontconfig fonts-dejavu-core
 )
-# Beside these, to run every test: R and two of its packages for the live comparisons, a virtual display for the GUI.
-rungwright_test_packages=(r-base-core r-cran-e1071 r-cran-robustbase xvfb xauth)
+# Beside these, to run every test: R and three of its packages for the live comparisons, a virtual display for the GUI.
+rungwright_test_packages=(r-base-core r-cran-e1071 r-cran-robustbase r-cran-quadprog xvfb xauth)
 # Beside these, for the checks of .ci/run.
 rungwright_check_packages=(
     git clang clang-format clang-tidy libclang-rt-14-dev shellcheck desktop-file-utils appstream

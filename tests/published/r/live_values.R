@@ -51,6 +51,43 @@ fitted <- function(q) {
 # Question: alpha beta floor highest N p. Answer: the p quantile of the least of N draws.
 quantileOfLeast <- function(q) q[3] + (q[4] - q[3]) * qbeta(-expm1(log1p(-q[6]) / q[5]), q[1], q[2])
 
+# Question: n T G, then n each of p, v, lo, hi, c, w; T or G is NaN where there is none. Minimise sum v (x - p)^2 under order, bounds,
+# sum c x = T and sum w x <= G, by quadprog's solve.QP. Answer: 0 and the cost, or 1 when the constraints are inconsistent. Units that cannot
+# move (lo = hi) are put into the constraints as numbers, since a dual method trips over pairs of bounds that leave no room.
+chainProblem <- function(q) {
+    n <- q[1]
+    part <- function(k) q[3 + (k - 1) * n + seq_len(n)]
+    v <- part(2)
+    base <- mean(part(1))
+    p <- part(1) - base
+    lo <- part(3) - base
+    hi <- part(4) - base
+    rows <- rbind(if (n > 1) cbind(-diag(n - 1), 0) + cbind(0, diag(n - 1)), diag(n), -diag(n))
+    least <- c(rep(0, n - 1), lo, -hi)
+    if (!is.nan(q[3])) {
+        rows <- rbind(-part(6), rows)
+        least <- c(-(q[3] - base * sum(part(6))), least)
+    }
+    equal <- !is.nan(q[2])
+    if (equal) {
+        rows <- rbind(part(5), rows)
+        least <- c(q[2] - base * sum(part(5)), least)
+    }
+    free <- lo < hi
+    least <- least - drop(rows[, !free, drop = FALSE] %*% lo[!free])
+    rows <- rows[, free, drop = FALSE]
+    about <- rowSums(abs(rows)) > 0
+    if (any(least[!about] > 1e-7) || (equal && !about[1] && abs(least[1]) > 1e-7)) return(c(1, 0))
+    cost <- sum((v * (lo - p)^2)[!free])
+    if (!any(free)) return(c(0, cost))
+    solved <- tryCatch(
+        quadprog::solve.QP(2 * diag(v[free], sum(free)), 2 * (v * p)[free], t(rows[about, , drop = FALSE]), least[about],
+                           meq = if (equal && about[1]) 1 else 0),
+        error = function(e) if (grepl("inconsistent", conditionMessage(e))) NULL else stop(e))
+    if (is.null(solved)) return(c(1, 0))
+    c(0, cost + sum((v * (replace(lo, free, solved$solution) - p)^2)[free]))
+}
+
 if (topic == "fitted") {
     for (q in questions()) say(fitted(q))
 } else if (topic == "quantile") {
@@ -72,4 +109,7 @@ if (topic == "fitted") {
     for (q in questions()) say(choose(q[1] - seq_len(q[1]), q[2] - 1) / choose(q[1], q[2]))
 } else if (topic == "hypergeometric") { # M k i: none of the i lowest of M among the k left
     for (q in questions()) say(dhyper(0, q[3], q[1] - q[3], q[2]))
+} else if (topic == "chain") {
+    need("quadprog")
+    for (q in questions()) say(chainProblem(q))
 }
