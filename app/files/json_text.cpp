@@ -154,4 +154,26 @@ bool parseJson(const std::string& text, const QString& fileName, QJsonDocument& 
     return true;
 }
 
+std::string quotedJson(std::string_view text)
+{
+    constexpr std::string_view hex = "0123456789abcdef";
+    std::string out = "\"";
+    for (const char c : text) {
+        const auto byte = static_cast<unsigned char>(c);
+        if (c == '"' || c == '\\')
+            (out += '\\') += c;
+        else if (c == '\n')
+            out += "\\n";
+        else if (c == '\r')
+            out += "\\r";
+        else if (c == '\t')
+            out += "\\t";
+        else if (byte < 0x20 || byte == 0x7F)
+            ((out += "\\u00") += hex[byte >> 4]) += hex[byte & 0xF];
+        else
+            out += c;
+    }
+    return out += '"';
+}
+
 } // namespace rungwright

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "scenario_json.h"
 
+#include "json_text.h"
 #include "whole_file.h"
 #include "words.h"
 
@@ -12,29 +13,6 @@ namespace rungwright
 
 namespace
 {
-
-// As JSON (RFC 8259, section 7) asks and no more: names in any script stay readable.
-std::string jsonText(std::string_view text)
-{
-    constexpr std::string_view hex = "0123456789abcdef";
-    std::string out = "\"";
-    for (const char c : text) {
-        const auto byte = static_cast<unsigned char>(c);
-        if (c == '"' || c == '\\')
-            (out += '\\') += c;
-        else if (c == '\n')
-            out += "\\n";
-        else if (c == '\r')
-            out += "\\r";
-        else if (c == '\t')
-            out += "\\t";
-        else if (byte < 0x20 || byte == 0x7F)
-            ((out += "\\u00") += hex[byte >> 4]) += hex[byte & 0xF];
-        else
-            out += c;
-    }
-    return out += '"';
-}
 
 // The shortest decimal that reads back as the same double.
 std::string number(double value)
@@ -84,12 +62,12 @@ public:
     {
         const Tier& tier = tierCase.tier;
         m_out += "    {\n";
-        m_out += "      \"site\": " + jsonText(tier.site) + ",\n";
-        m_out += "      \"tier\": " + jsonText(tier.name) + ",\n";
+        m_out += "      \"site\": " + quotedJson(tier.site) + ",\n";
+        m_out += "      \"tier\": " + quotedJson(tier.name) + ",\n";
         if (tier.hasFloor())
             m_out += "      \"advertised_floor\": " + price(tier.advertisedFloor) + ",\n";
         if (!tierCase.note.empty())
-            m_out += "      \"note\": " + jsonText(tierCase.note) + ",\n";
+            m_out += "      \"note\": " + quotedJson(tierCase.note) + ",\n";
         if (tierCase.seen)
             m_out += "      \"seen\": true,\n";
         model(tierCase.model);
@@ -98,7 +76,7 @@ public:
         m_out += ",\n      \"candidates\": [";
         list(tierCase.candidates.size(), "        ", "      ", [&](std::size_t i) { candidate(tierCase.candidates[i], tier.units); });
         if (tierCase.chosen)
-            m_out += ",\n      \"chosen\": " + jsonText(tierCase.candidates[static_cast<std::size_t>(*tierCase.chosen)].name);
+            m_out += ",\n      \"chosen\": " + quotedJson(tierCase.candidates[static_cast<std::size_t>(*tierCase.chosen)].name);
         if (tierCase.signedOff)
             signedSheet(*tierCase.signedOff);
         m_out += "\n    }";
@@ -133,7 +111,7 @@ private:
 
     void unit(const Unit& unit)
     {
-        m_out += "{\"unit\": " + jsonText(unit.name) + ", \"price\": " + price(unit.asking) + ", \"status\": \"";
+        m_out += "{\"unit\": " + quotedJson(unit.name) + ", \"price\": " + price(unit.asking) + ", \"status\": \"";
         m_out += statusWord(unit.status);
         m_out += "\"";
         if (unit.locked)
@@ -150,22 +128,23 @@ private:
     void candidate(const Candidate& candidate, const std::vector<Unit>& units)
     {
         assert(candidate.prices.size() == units.size());
-        m_out += "{\n          \"name\": " + jsonText(candidate.name) + ",\n";
+        m_out += "{\n          \"name\": " + quotedJson(candidate.name) + ",\n";
         if (!candidate.note.empty())
-            m_out += "          \"note\": " + jsonText(candidate.note) + ",\n";
+            m_out += "          \"note\": " + quotedJson(candidate.note) + ",\n";
         m_out += "          \"prices\": [";
-        list(candidate.prices.size(), "            ", "          ",
-             [&](std::size_t i) { m_out += "{\"unit\": " + jsonText(units[i].name) + ", \"price\": " + price(candidate.prices[i]) + "}"; });
+        list(candidate.prices.size(), "            ", "          ", [&](std::size_t i) {
+            m_out += "{\"unit\": " + quotedJson(units[i].name) + ", \"price\": " + price(candidate.prices[i]) + "}";
+        });
         m_out += "\n        }";
     }
 
     void signedSheet(const SignedSheet& sheet)
     {
-        m_out += ",\n      \"signed_off\": {\n        \"candidate\": " + jsonText(sheet.candidate) +
-                 ",\n        \"when\": " + jsonText(sheet.whenUtc) + ",\n        \"prices\": [";
+        m_out += ",\n      \"signed_off\": {\n        \"candidate\": " + quotedJson(sheet.candidate) +
+                 ",\n        \"when\": " + quotedJson(sheet.whenUtc) + ",\n        \"prices\": [";
         list(sheet.prices.size(), "          ", "        ", [&](std::size_t i) {
             const SignedPrice& one = sheet.prices[i];
-            m_out += "{\"unit\": " + jsonText(one.unit) + ", \"before\": " + price(one.before) + ", \"after\": " + price(one.after) + "}";
+            m_out += "{\"unit\": " + quotedJson(one.unit) + ", \"before\": " + price(one.before) + ", \"after\": " + price(one.after) + "}";
         });
         m_out += "\n      }";
     }
@@ -181,9 +160,9 @@ QByteArray scenarioToJson(const Scenario& scenario)
     std::string& out = writer.m_out;
     out += "{\n  \"format\": \"rungwright-scenario\",\n";
     out += "  \"version\": " + std::to_string(kScenarioVersion) + ",\n";
-    out += "  \"title\": " + jsonText(scenario.title) + ",\n";
-    out += "  \"currency\": " + jsonText(scenario.currency.code) + ",\n";
-    out += "  \"note\": " + jsonText(scenario.note) + ",\n";
+    out += "  \"title\": " + quotedJson(scenario.title) + ",\n";
+    out += "  \"currency\": " + quotedJson(scenario.currency.code) + ",\n";
+    out += "  \"note\": " + quotedJson(scenario.note) + ",\n";
     writer.rules(scenario.rules);
     writer.flags(scenario.flags);
     out += "  \"tiers\": [";
