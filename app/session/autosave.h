@@ -10,8 +10,11 @@
 #include <QThreadPool>
 #include <QTimer>
 
+#include <atomic>
+#include <functional>
 #include <memory>
 #include <optional>
+#include <vector>
 
 namespace rungwright
 {
@@ -33,10 +36,15 @@ public:
     Autosave(Document& document, const QString& stateFolder, QObject* parent = nullptr);
     ~Autosave() override;
 
-    void setDelay(int milliseconds) { m_timer.setInterval(milliseconds); }
+    /// From a change to its copy. A copy that took long lets the next one wait longer, so that writing is a small part of the time.
+    void setDelay(int milliseconds) { m_delay = milliseconds; }
+    /// While the scenario itself is being written, no copy is begun.
+    void hold(bool on);
 
     /// Unsaved work on `path` (empty: on a scenario without a file) that no living window is guarding.
     std::optional<LeftBehind> leftBehind(const QString& path) const;
+    /// All unsaved work on scenarios without a file that no living window is guarding, the newest first.
+    std::vector<LeftBehind> leftBehindUntitled() const;
     /// True when another living window has `path` open.
     bool openElsewhere(const QString& path) const;
     const QString& copyPath() const { return m_copyPath; }
@@ -45,7 +53,7 @@ public:
     void follow();
     /// Writes now, if there is something unsaved, and waits until it is written.
     void flush();
-    /// Saved, closed in good order, or given up: the copy goes.
+    /// Saved, closed in good order, or given up: the copy goes, after what is being written.
     void discardCopy();
 
 signals:
@@ -55,16 +63,26 @@ signals:
 private:
     QString copyFor(const QString& path) const;
     QString lockFor(const QString& path) const;
+    bool takeLock(const QString& path);
     void onSaveState();
+    void wait();
     void write();
+    void written(const QString& trouble, int milliseconds);
+    /// Runs after what is being written, off the GUI thread; at once when nothing is.
+    void inTurn(const std::function<void()>& job);
 
     Document& m_document;
     QString m_stateFolder;
     QString m_guarded;
     QString m_copyPath;
     QTimer m_timer;
-    QThreadPool m_writer; ///< One thread: copies are written in order.
-    std::unique_ptr<QLockFile> m_lock;
+    QThreadPool m_writer;        ///< One thread: copies are written in order.
+    std::atomic<int> m_jobs = 0; ///< Of the writer's, not done yet.
+    std::shared_ptr<QLockFile> m_lock;
+    QString m_lockPath;
+    int m_delay;
+    int m_lastMs = 0; ///< How long the last copy took.
+    bool m_held = false;
     bool m_troubled = false;
 };
 

@@ -5,6 +5,7 @@
 #include "steps.h"
 
 #include <QFileInfo>
+#include <QThreadPool>
 
 #include <algorithm>
 #include <cassert>
@@ -48,7 +49,9 @@ QString Document::displayName() const
 
 void Document::begin(Scenario scenario, const QString& path, bool saved)
 {
-    m_scenario = std::move(scenario);
+    std::swap(m_scenario, scenario);
+    // A million units take a while to let go; nobody waits for that.
+    QThreadPool::globalInstance()->start([former = std::move(scenario)]() mutable { former = {}; });
     m_path = path;
     m_unsavedStart = !saved;
     m_undo.clear();
@@ -59,16 +62,27 @@ void Document::begin(Scenario scenario, const QString& path, bool saved)
 Outcome<bool> Document::saveTo(const QString& path)
 {
     auto saved = saveScenario(m_scenario, path);
-    if (saved.ok()) {
-        m_path = path;
-        m_unsavedStart = false;
-        m_undo.setClean();
-        emit saveStateChanged();
-    }
+    if (saved.ok())
+        writtenTo(path, m_revision);
     return saved;
 }
 
-void Document::announce(const DocumentChange& change) { emit changed(change); }
+void Document::writtenTo(const QString& path, std::uint64_t revision)
+{
+    m_path = path;
+    m_unsavedStart = revision != m_revision;
+    if (m_unsavedStart)
+        m_undo.resetClean();
+    else
+        m_undo.setClean();
+    emit saveStateChanged();
+}
+
+void Document::announce(const DocumentChange& change)
+{
+    ++m_revision;
+    emit changed(change);
+}
 
 int Document::setPrices(int tierIndex, int candidate, std::span<const PriceChange> changes, const QString& stepName)
 {

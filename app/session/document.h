@@ -62,8 +62,13 @@ public:
 
     /// Takes another scenario; forgets all undo steps. `saved` = it is what stands in `path`.
     void begin(Scenario scenario, const QString& path, bool saved);
-    /// Writes whole or not at all; on trouble the document stays modified and the old file stands.
+    /// Writes whole or not at all; on trouble the document stays modified and the old file stands. Waits until it is written: for large
+    /// scenarios on a desk, write a copy elsewhere and call writtenTo().
     Outcome<bool> saveTo(const QString& path);
+    /// Changes with every edit, undone and redone ones too, and with every begin(): while it is the same, so is the scenario.
+    std::uint64_t revision() const { return m_revision; }
+    /// What the scenario was at `revision` now stands in `path`. What was edited since keeps the document modified.
+    void writtenTo(const QString& path, std::uint64_t revision);
 
     // Edits, one undo step each. Indices are asserted. A call that would change nothing makes no step.
 
@@ -101,7 +106,9 @@ private:
     Scenario m_scenario;
     QString m_path;
     QUndoStack m_undo;
-    bool m_unsavedStart = false; ///< Begun from an import or a recovered copy: not in any file yet.
+    std::uint64_t m_revision = 0;
+    bool m_unsavedStart = false; ///< Not in any file, and no number of undo steps leads to what is: begun from an import or a recovered
+                                 ///< copy, or edited while it was written.
 };
 
 } // namespace rungwright
