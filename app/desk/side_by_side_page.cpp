@@ -51,7 +51,7 @@ SideBySidePage::SideBySidePage(Workbench& bench, Questions& questions, QWidget* 
     });
     connect(m_ui->chooseButton, &QPushButton::clicked, this, &SideBySidePage::choose);
     connect(&bench.document(), &Document::changed, this, [this](const DocumentChange& change) {
-        if (change.kind != DocumentChange::Kind::everything)
+        if (change.kind != DocumentChange::Kind::everything && change.kind != DocumentChange::Kind::refreshed)
             return;
         m_picks.clear();
         refresh();

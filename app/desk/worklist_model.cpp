@@ -58,11 +58,11 @@ int WorklistModel::columnCount(const QModelIndex& parent) const { return parent.
 void WorklistModel::onChanged(const DocumentChange& change)
 {
     using Kind = DocumentChange::Kind;
-    if (change.kind == Kind::everything) {
+    if (change.kind == Kind::everything || change.kind == Kind::refreshed) {
         beginResetModel();
         measureAll();
         endResetModel();
-    } else if (change.kind == Kind::model && change.tier >= 0) {
+    } else if ((change.kind == Kind::model || change.kind == Kind::floor) && change.tier >= 0) {
         m_rows[static_cast<std::size_t>(change.tier)] = measureRow(*m_document.tier(change.tier));
         const double before = m_greatestShare;
         findGreatest();
@@ -157,7 +157,8 @@ QVariant WorklistModel::sortValue(int row, int column) const
 
 QVariant WorklistModel::data(const QModelIndex& index, int role) const
 {
-    if (!index.isValid() || index.row() >= rowCount())
+    // The document may have fewer tiers already while a refresh is being announced.
+    if (!index.isValid() || index.row() >= rowCount() || !m_document.tier(index.row()))
         return {};
     const Row& r = m_rows[static_cast<std::size_t>(index.row())];
     const Tier& tier = m_document.tier(index.row())->tier;

@@ -82,6 +82,7 @@ WorklistPanel::WorklistPanel(Workbench& bench, QWidget* parent) :
     connect(table->selectionModel(), &QItemSelectionModel::currentRowChanged, this, &WorklistPanel::onCurrentRow);
     connect(&m_bench, &Workbench::reset, this, &WorklistPanel::onBenchReset);
     connect(&m_model, &QAbstractItemModel::modelReset, this, &WorklistPanel::updateCount);
+    connect(&m_model, &QAbstractItemModel::modelReset, this, &WorklistPanel::onBenchReset); // the row of the tier on the bench is another
     makeCopyable(*table);
     updateCount();
 }

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "document.h"
 
+#include "refresh.h"
 #include "scenario_json.h"
 #include "steps.h"
 
@@ -240,6 +241,69 @@ void Document::setScenarioNote(const QString& note)
         return;
     m_undo.push(new ChangeValue<std::string>(*this, tr("Note on the scenario"), [](Scenario& s) -> std::string& { return s.note; }, wanted,
                                              {DocumentChange::Kind::notes, -1, -1}));
+}
+
+void Document::setFlagThresholds(const FlagThresholds& flags)
+{
+    assert(flags.lastUnits >= 0 && flags.gapShare >= 0);
+    if (m_scenario.flags == flags)
+        return;
+    m_undo.push(new ChangeValue<FlagThresholds>(*this, tr("Change when tiers are flagged"),
+                                                [](Scenario& s) -> FlagThresholds& { return s.flags; }, flags,
+                                                {DocumentChange::Kind::flags, -1, -1}));
+}
+
+void Document::setSeen(std::span<const int> tiers, bool seen)
+{
+    std::vector<int> toSet;
+    for (const int index : tiers) {
+        const TierCase* tc = tier(index);
+        assert(tc);
+        if (tc->seen != seen)
+            toSet.push_back(index);
+    }
+    if (toSet.empty())
+        return;
+    std::sort(toSet.begin(), toSet.end());
+    toSet.erase(std::unique(toSet.begin(), toSet.end()), toSet.end());
+    const QString what = toSet.size() == 1 ? fromUtf8(tier(toSet.front())->tier.name) : tr("%1 tiers").arg(toSet.size());
+    m_undo.push(new SetSeen(*this, seen ? tr("Mark %1 as seen").arg(what) : tr("Mark %1 as not seen").arg(what), std::move(toSet), seen));
+}
+
+void Document::setFloor(int tierIndex, Price floor)
+{
+    const TierCase* tc = tier(tierIndex);
+    assert(tc && floor.minor >= 0);
+    if (tc->tier.advertisedFloor == floor)
+        return;
+    const auto tierAt = static_cast<std::size_t>(tierIndex);
+    m_undo.push(new ChangeValue<Price>(*this, tr("Advertised floor of %1").arg(fromUtf8(tc->tier.name)),
+                                       [tierAt](Scenario& s) -> Price& { return s.tiers[tierAt].tier.advertisedFloor; }, floor,
+                                       {DocumentChange::Kind::floor, tierIndex, -1}));
+}
+
+void Document::recordSignedSheet(int tierIndex, SignedSheet sheet)
+{
+    const TierCase* tc = tier(tierIndex);
+    assert(tc);
+    if (tc->signedOff == sheet)
+        return;
+    const QString name = sheet.candidate == kCurrentName ? tr("the current ladder") : fromUtf8(sheet.candidate);
+    const auto tierAt = static_cast<std::size_t>(tierIndex);
+    m_undo.push(new ChangeValue<std::optional<SignedSheet>>(
+        *this, tr("Hand over the price sheet of %1").arg(name),
+        [tierAt](Scenario& s) -> std::optional<SignedSheet>& { return s.tiers[tierAt].signedOff; }, std::move(sheet),
+        {DocumentChange::Kind::signedOff, tierIndex, -1}));
+}
+
+bool Document::refresh(const RefreshPlan& plan, const QString& listName)
+{
+    if (!(plan.before == m_scenario.tiers))
+        return false;
+    if (!(plan.after == m_scenario.tiers))
+        m_undo.push(new ChangeValue<TierList>(*this, tr("Refresh from %1").arg(listName), [](Scenario& s) -> TierList& { return s.tiers; },
+                                              plan.after, {DocumentChange::Kind::refreshed, -1, -1}));
+    return true;
 }
 
 std::string Document::freeCandidateName(int tierIndex, const QString& wanted) const

@@ -17,6 +17,8 @@
 namespace rungwright
 {
 
+struct RefreshPlan;
+
 /// What an edit touched.
 struct DocumentChange {
     enum class Kind {
@@ -27,6 +29,11 @@ struct DocumentChange {
         model,      ///< The tier's availability model or its settings.
         rules,      ///< The scenario's price rules.
         notes,      ///< Notes of the scenario or of the tier.
+        flags,      ///< The thresholds from where on the worklist flags.
+        seen,       ///< The "seen" mark of the tier, or of several (tier -1).
+        floor,      ///< The tier's advertised floor.
+        signedOff,  ///< The last price sheet of the tier that was handed over.
+        refreshed,  ///< Tiers came, went or changed anything about them: indices of tiers and units mean something else now.
     };
     Kind kind = Kind::everything;
     int tier = -1;      ///< Index into scenario().tiers, or -1 when all are touched.
@@ -90,6 +97,17 @@ public:
     void setRules(const PriceRules& rules);
     void setTierNote(int tier, const QString& note);
     void setScenarioNote(const QString& note);
+    void setFlagThresholds(const FlagThresholds& flags);
+    /// Marks tiers as dealt with, or takes the mark away.
+    void setSeen(std::span<const int> tiers, bool seen);
+    void setSeen(int tier, bool seen) { setSeen(std::span(&tier, 1), seen); }
+    /// A floor of 0 = none is known.
+    void setFloor(int tier, Price floor);
+    /// Keeps what was handed over; the one before is forgotten, and comes back with the undo.
+    void recordSignedSheet(int tier, SignedSheet sheet);
+    /// Takes the tiers of the plan; `listName` names the step: "Refresh from units.csv". False, and nothing done, when the scenario's tiers
+    /// are no longer those the plan was worked out for.
+    bool refresh(const RefreshPlan& plan, const QString& listName);
 
     /// "Candidate 1", "Candidate 2", ...: the first such name not taken, or `wanted` with a number behind it.
     std::string freeCandidateName(int tier, const QString& wanted = {}) const;

@@ -103,4 +103,16 @@ void SetLocks::apply(bool locked)
     announce({DocumentChange::Kind::units, m_tier, -1});
 }
 
+SetSeen::SetSeen(Document& document, const QString& name, std::vector<int> tiers, bool seen) :
+    ScenarioStep(document, name), m_tiers(std::move(tiers)), m_seen(seen)
+{
+}
+
+void SetSeen::apply(bool seen)
+{
+    for (const int tier : m_tiers)
+        tierCase(tier).seen = seen;
+    announce({DocumentChange::Kind::seen, m_tiers.size() == 1 ? m_tiers.front() : -1, -1});
+}
+
 } // namespace rungwright

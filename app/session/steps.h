@@ -114,4 +114,19 @@ private:
     bool m_locked;
 };
 
+/// The "seen" mark of some tiers, none of which has it already.
+class SetSeen : public ScenarioStep
+{
+public:
+    SetSeen(Document& document, const QString& name, std::vector<int> tiers, bool seen);
+    void redo() override { apply(m_seen); }
+    void undo() override { apply(!m_seen); }
+
+private:
+    void apply(bool seen);
+
+    std::vector<int> m_tiers;
+    bool m_seen;
+};
+
 } // namespace rungwright

@@ -38,6 +38,8 @@ void Workbench::showTier(int tier, int candidate)
         m_selection.clear();
     m_tier = tc ? tier : -1;
     m_candidate = tc ? std::clamp(candidate, -1, static_cast<int>(tc->candidates.size()) - 1) : -1;
+    m_site = tc ? tc->tier.site : std::string();
+    m_tierName = tc ? tc->tier.name : std::string();
     m_settings = tc ? tc->model : ModelSettings{};
     remeasure();
     emit reset();
@@ -104,8 +106,8 @@ void Workbench::remeasureWorked() { m_worked = &m_measureWorked.measure(tierCase
 void Workbench::onDocumentChanged(const DocumentChange& change)
 {
     using Kind = DocumentChange::Kind;
-    if (change.kind == Kind::notes)
-        return;
+    if (change.kind == Kind::notes || change.kind == Kind::flags || change.kind == Kind::seen || change.kind == Kind::signedOff)
+        return; // nothing here is measured from these
     // A gesture that was going on ends here without a look back: the candidate it worked on may be gone.
     const bool interrupted = std::exchange(m_gesture, Gesture::none) != Gesture::none;
     if (change.kind == Kind::everything) {
@@ -116,12 +118,32 @@ void Workbench::onDocumentChanged(const DocumentChange& change)
             emit gestureChanged();
         return;
     }
+    if (change.kind == Kind::refreshed) {
+        onRefreshed();
+        if (interrupted)
+            emit gestureChanged();
+        return;
+    }
     // An undo may reach back to another tier or candidate: show where it happened.
     const int tier = change.tier < 0 ? m_tier : change.tier;
     const bool namesCandidate = change.kind == Kind::prices || change.kind == Kind::candidates;
     showTier(tier, namesCandidate || tier != m_tier ? change.candidate : m_candidate);
     if (interrupted)
         emit gestureChanged();
+}
+
+void Workbench::onRefreshed()
+{
+    const TierCase* same = findTier(m_document.scenario(), m_site, m_tierName);
+    const int candidate = same ? m_candidate : -1;
+    int tier = m_document.empty() ? -1 : 0;
+    for (int i = 0; same && i < static_cast<int>(m_document.scenario().tiers.size()); ++i) {
+        if (m_document.tier(i) == same)
+            tier = i;
+    }
+    m_selection.clear(); // its units may stand elsewhere now
+    m_tier = -1;
+    showTier(tier, candidate);
 }
 
 // Gestures -----------------------------------------------------------------------------------------------------------

@@ -10,6 +10,7 @@
 
 #include <cstdint>
 #include <span>
+#include <string>
 #include <vector>
 
 namespace rungwright
@@ -102,6 +103,7 @@ signals:
 
 private:
     void onDocumentChanged(const DocumentChange& change);
+    void onRefreshed();
     void remeasure();
     void remeasureWorked();
     bool startGesture(Gesture gesture, std::vector<std::uint32_t> units);
@@ -114,6 +116,8 @@ private:
     Document& m_document;
     int m_tier = -1;
     int m_candidate = -1;
+    std::string m_site; ///< Of the tier shown: after a refresh it is found again by its names.
+    std::string m_tierName;
     ModelSettings m_settings;
     Measurer m_measureCurrent;
     Measurer m_measureWorked;

@@ -3,6 +3,7 @@
 #include "document.h"
 
 #include "invented_tier.h"
+#include "refresh.h"
 #include "scenario_json.h"
 
 #include <QSignalSpy>
@@ -19,6 +20,8 @@ class DocumentTest : public QObject
 private slots:
     void firstEditOfTheCurrentLadderMakesACandidate();
     void everyEditIsOneStep();
+    void marksFloorsAndSheetsAreSteps();
+    void aRefreshTakesThePlansTiersWhileTheyFit();
     void fortyStepsAreUndoneToTheByte();
     void nudgesOfTheSameUnitsAreOneStep();
     void aNudgeBackDropsItsStep();
@@ -80,6 +83,69 @@ void DocumentTest::everyEditIsOneStep()
     document.setRules(rules);
     document.chooseCandidate(0, 0);
     QCOMPARE(document.undoStack().count(), 9);
+}
+
+void DocumentTest::marksFloorsAndSheetsAreSteps()
+{
+    Document document;
+    document.begin(inventedScenario(), {}, true);
+    QList<QByteArray> states{scenarioToJson(document.scenario())};
+    QList<DocumentChange> changes;
+    connect(&document, &Document::changed, this, [&](const DocumentChange& change) {
+        changes << change;
+        states << scenarioToJson(document.scenario());
+    });
+    const int both[] = {1, 0, 1};
+    const SignedSheet sheet{"Lower", "2026-12-01T09:30:00Z", {{"B-10", Price{6000}, Price{5900}}}};
+    document.setFlagThresholds({-0.25, 5, 0.2});
+    document.setSeen(0, true);
+    document.setSeen(both, true); // only the second is left to mark
+    document.setSeen(both, false);
+    document.setFloor(1, Price{});
+    document.recordSignedSheet(0, sheet);
+    QCOMPARE(document.undoStack().count(), 6);
+    using Kind = DocumentChange::Kind;
+    const std::pair<Kind, int> told[] = {{Kind::flags, -1}, {Kind::seen, 0},  {Kind::seen, 1},
+                                         {Kind::seen, -1},  {Kind::floor, 1}, {Kind::signedOff, 0}};
+    for (int i = 0; i < 6; ++i) {
+        QCOMPARE(changes[i].kind, told[i].first);
+        QCOMPARE(changes[i].tier, told[i].second);
+    }
+    QCOMPARE(document.undoStack().undoText(), QStringLiteral("Hand over the price sheet of Lower"));
+    QVERIFY(!document.tier(1)->tier.hasFloor());
+    QCOMPARE(document.tier(0)->signedOff, sheet);
+    // What changes nothing is no step.
+    document.setFlagThresholds({-0.25, 5, 0.2});
+    document.setSeen(both, false);
+    document.setFloor(1, Price{});
+    document.recordSignedSheet(0, sheet);
+    QCOMPARE(document.undoStack().count(), 6);
+    for (int step = 5; step >= 0; --step) {
+        document.undoStack().undo();
+        QCOMPARE(scenarioToJson(document.scenario()), states.at(step));
+    }
+}
+
+void DocumentTest::aRefreshTakesThePlansTiersWhileTheyFit()
+{
+    Document document;
+    document.begin(inventedScenario(), {}, true);
+    const QByteArray before = scenarioToJson(document.scenario());
+    RefreshPlan plan{document.scenario().tiers, document.scenario().tiers};
+    QVERIFY(document.refresh(plan, QStringLiteral("a.csv")));
+    QCOMPARE(document.undoStack().count(), 0); // nothing would change
+    plan.after[1].tier.units[0].asking = Price{6100};
+    QVERIFY(document.refresh(plan, QStringLiteral("a.csv")));
+    QCOMPARE(document.undoStack().undoText(), QStringLiteral("Refresh from a.csv"));
+    QVERIFY(document.scenario().tiers.shares(1, plan.after, 1));
+    const QByteArray after = scenarioToJson(document.scenario());
+    document.undoStack().undo();
+    QCOMPARE(scenarioToJson(document.scenario()), before);
+    document.undoStack().redo();
+    QCOMPARE(scenarioToJson(document.scenario()), after);
+    // The plan was for what was there before.
+    QVERIFY(!document.refresh(plan, QStringLiteral("a.csv")));
+    QCOMPARE(scenarioToJson(document.scenario()), after);
 }
 
 void DocumentTest::fortyStepsAreUndoneToTheByte()

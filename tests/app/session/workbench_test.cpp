@@ -3,6 +3,7 @@
 #include "workbench.h"
 
 #include "invented_tier.h"
+#include "refresh.h"
 #include "scenario_json.h"
 
 #include <QSignalSpy>
@@ -25,6 +26,9 @@ private slots:
     void nudgesAreOneStepAndSayWhenTheyEnd();
     void undoGoesWhereItHappened();
     void undoInTheMiddleOfADragIsSafe();
+    void aRefreshKeepsTheTierOnTheBench();
+    void marksDoNotInterruptADrag();
+    void aFloorIsMeasuredAnew();
     void emptyDocumentIsHarmless();
     void typedPriceIsHeldInsideTheRules();
 };
@@ -240,6 +244,66 @@ void WorkbenchTest::undoInTheMiddleOfADragIsSafe()
     QVERIFY(document.tier(0)->candidates.empty());
     bench.select({3, 400}); // a unit that is not there
     QCOMPARE(bench.selection().size(), std::size_t(1));
+}
+
+void WorkbenchTest::aRefreshKeepsTheTierOnTheBench()
+{
+    Document document;
+    Workbench bench(document);
+    document.begin(inventedScenario(), {}, true);
+    document.copyCandidate(1, -1);
+    bench.showTier(1, 0);
+    bench.select({3, 4});
+    RefreshPlan plan{document.scenario().tiers, {}};
+    plan.after.push_back(document.scenario().tiers[1]); // the first tier is gone
+    plan.after[0].tier.units[0].asking = Price{5900};
+    plan.after[0].candidates[0].prices[0] = Price{5900};
+    QVERIFY(document.refresh(plan, QStringLiteral("a.csv")));
+    QCOMPARE(bench.tier(), 0);
+    QCOMPARE(bench.tierCase()->tier.name, std::string("Room 3-5"));
+    QCOMPARE(bench.candidate(), 0);
+    QCOMPARE(bench.currentPrices()[0], Price{5900});
+    QVERIFY(bench.selection().empty());
+    document.undoStack().undo();
+    QCOMPARE(bench.tier(), 1);
+    QCOMPARE(bench.candidate(), 0);
+    QCOMPARE(bench.currentPrices()[0], Price{6000});
+    bench.showTier(0);
+    document.undoStack().redo(); // the tier on the bench leaves: another takes its place
+    QCOMPARE(bench.tier(), 0);
+    QCOMPARE(bench.candidate(), -1);
+    QCOMPARE(bench.tierCase()->tier.name, std::string("Room 3-5"));
+}
+
+void WorkbenchTest::marksDoNotInterruptADrag()
+{
+    Document document;
+    Workbench bench(document);
+    document.begin(inventedScenario(), {}, true);
+    QVERIFY(bench.beginMove({0}));
+    bench.moveBy(Price{-200});
+    document.setSeen(1, true);
+    document.setFlagThresholds({0.0, 1, 0.5});
+    document.recordSignedSheet(1, {"current", "2026-12-01T09:30:00Z", {}});
+    QCOMPARE(bench.gesture(), Workbench::Gesture::move);
+    QCOMPARE(bench.workedPrices()[0], Price{5800});
+    bench.finishGesture();
+    QCOMPARE(bench.workedPrices()[0], Price{5800});
+}
+
+void WorkbenchTest::aFloorIsMeasuredAnew()
+{
+    Document document;
+    Workbench bench(document);
+    document.begin(inventedScenario(), {}, true);
+    const double gap = bench.worked().gap.gap.value();
+    document.setFloor(0, Price{5000});
+    QVERIFY(qAbs(bench.worked().gap.gap.value() - (gap + 500)) < 1e-9); // rounding of two differences of amounts near 10^4
+    document.setFloor(0, Price{});
+    QVERIFY(!bench.worked().gap.gap);
+    document.undoStack().undo();
+    document.undoStack().undo();
+    QCOMPARE(bench.worked().gap.gap.value(), gap);
 }
 
 void WorkbenchTest::emptyDocumentIsHarmless()
