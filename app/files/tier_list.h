@@ -106,6 +106,12 @@ public:
     void reserve(std::size_t count) { m_held.reserve(count); }
     void clear() { m_held.clear(); }
     void push_back(T value) { m_held.push_back(QSharedDataPointer<Held>(new Held(std::move(value)))); }
+    /// Takes an element of another list without a copy.
+    void pushShared(const SharedList& other, std::size_t at)
+    {
+        assert(at < other.m_held.size());
+        m_held.push_back(other.m_held[at]);
+    }
     void pop_back() { m_held.pop_back(); }
 
     const T& operator[](std::size_t at) const
