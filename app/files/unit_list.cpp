@@ -2,6 +2,7 @@
 #include "unit_list.h"
 
 #include "csv_records.h"
+#include "fast_unit_list.h"
 #include "unit_rows.h"
 #include "whole_file.h"
 #include "words.h"
@@ -133,6 +134,27 @@ UnitListResult readDevice(QIODevice& device, const QString& fileName, const Unit
     return result;
 }
 
+/// The fast way where it goes, else the careful one, which then starts anew. What progress tells never goes back.
+UnitListResult readEitherWay(QIODevice& device, const QString& fileName, const UnitListOptions& options, const Progress& progress)
+{
+    double most = 0;
+    const Progress forward = [&](double share) { return progress(most = std::max(most, share)); };
+    UnitListResult result;
+    switch (readFastResult(device, options, {}, progress ? forward : Progress(), result)) {
+    case FastEnd::done:
+        return result;
+    case FastEnd::cancelled:
+        result.fileTrouble = cancelled(fileName);
+        return result;
+    case FastEnd::careful:
+        break;
+    }
+    if (device.seek(0))
+        return readDevice(device, fileName, options, progress ? forward : Progress());
+    result.fileTrouble = Words::tr("%1: cannot be read: %2").arg(fileName, device.errorString());
+    return result;
+}
+
 } // namespace
 
 QString RefusedRow::text(const QString& fileName) const
@@ -144,6 +166,15 @@ QString RefusedRow::text(const QString& fileName) const
 }
 
 UnitListResult readUnitList(const QByteArray& bytes, const QString& fileName, const UnitListOptions& options, const Progress& progress)
+{
+    QBuffer buffer;
+    buffer.setData(bytes);
+    buffer.open(QIODevice::ReadOnly);
+    return readEitherWay(buffer, fileName, options, progress);
+}
+
+UnitListResult readUnitListCarefully(const QByteArray& bytes, const QString& fileName, const UnitListOptions& options,
+                                     const Progress& progress)
 {
     QBuffer buffer;
     buffer.setData(bytes);
@@ -161,7 +192,7 @@ UnitListResult loadUnitList(const QString& path, const UnitListOptions& options,
         return result;
     }
     if (!file.isSequential())
-        return readDevice(file, path, options, progress);
+        return readEitherWay(file, path, options, progress);
     // A pipe cannot be read twice, so it is kept, and a device that never ends is not waited for.
     const Outcome<QByteArray> bytes = readRest(file, kLargestPipe);
     if (bytes.ok())

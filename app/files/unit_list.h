@@ -61,6 +61,9 @@ using Progress = std::function<bool(double)>;
 /// differ.
 UnitListResult readUnitList(const QByteArray& bytes, const QString& fileName, const UnitListOptions& options,
                             const Progress& progress = {});
+/// The same result by the one way that knows of every trouble. The others try a faster way first, which reads only what is plainly fine.
+UnitListResult readUnitListCarefully(const QByteArray& bytes, const QString& fileName, const UnitListOptions& options,
+                                     const Progress& progress = {});
 UnitListResult loadUnitList(const QString& path, const UnitListOptions& options, const Progress& progress = {});
 
 } // namespace rungwright

@@ -1,0 +1,106 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+// A clean unit list held column by column, in a few bytes a unit, until it is made into tiers.
+#pragma once
+
+#include "ladder/currency.h"
+#include "ladder/unit.h"
+
+#include <cstdint>
+#include <deque>
+#include <limits>
+#include <string>
+#include <string_view>
+#include <unordered_map>
+#include <vector>
+
+namespace rungwright
+{
+
+/// What of a list is kept. For figures alone a unit needs no name, only to be told from the others of its tier, and no area.
+enum class KeepUnits : unsigned char { whole, forFigures };
+
+/// A tier's key by its texts, wherever they stand.
+struct TierKey {
+    std::string_view site, name;
+    bool operator==(const TierKey&) const = default;
+};
+struct TierKeyHash {
+    std::size_t operator()(const TierKey& key) const
+    {
+        const std::hash<std::string_view> hash;
+        return hash(key.site) * 0x9E3779B97F4A7C15U + hash(key.name);
+    }
+};
+
+/// Rows of one piece of a file, read but not yet gathered. Columns have an entry a row, or none at all where no row has a value.
+struct UnitPart {
+    struct PartTier {
+        std::string_view site, name; ///< In the piece's text.
+        std::uint32_t floor = 0;     ///< Minor units; 0: none on these rows.
+    };
+    static constexpr std::int16_t kNoGrade = std::numeric_limits<std::int16_t>::min();
+
+    std::vector<PartTier> tiers;       ///< In order of first appearance.
+    std::vector<std::uint32_t> tier;   ///< Index into `tiers`.
+    std::vector<std::uint32_t> asking; ///< Minor units.
+    std::vector<std::uint64_t> nameHash;
+    std::vector<std::uint8_t> state;  ///< The status, and kLocked.
+    std::vector<std::int16_t> grade;  ///< kNoGrade: none.
+    std::vector<double> area, chance; ///< NaN: none.
+    std::string names;                ///< One after the other; empty when forFigures.
+    std::vector<std::uint32_t> nameEnds;
+
+    static constexpr std::uint8_t kLocked = 0x80;
+    std::size_t rows() const { return asking.size(); }
+    void clear();
+};
+
+/// Parts put together in file order, and then grouped by tier.
+class UnitColumns
+{
+public:
+    /// False when a tier has two floors. `part` may be cleared and used again.
+    bool append(UnitPart& part);
+    /// After the last part. False when a tier has no floor, or there is no row. Then the tiers can be looked at, from several threads.
+    bool group();
+
+    std::size_t tiers() const { return m_tiers.size(); }
+    std::size_t units() const { return m_rows; }
+    /// False when two units of the tier have the same name or, hardly ever, only names of the same hash. `scratch` is the caller's.
+    bool namesDiffer(std::size_t tier, std::vector<std::uint64_t>& scratch) const;
+    /// Puts the tier into `out`, whose storage is used again. Without names where none were kept.
+    void fill(std::size_t tier, Tier& out) const;
+
+private:
+    // Rows stand in blocks of this many, so that columns grow without being copied and without room to spare.
+    static constexpr std::size_t kRowBits = 15;
+    static constexpr std::size_t kBlockRows = std::size_t(1) << kRowBits;
+    struct Block {
+        std::vector<std::uint32_t> tier;
+        std::vector<std::uint32_t> asking;
+        std::vector<std::uint64_t> nameHash;
+        std::vector<std::uint8_t> state;
+        std::vector<std::int16_t> grade; ///< This and those below: empty, or an entry a row.
+        std::vector<double> area, chance;
+        std::vector<std::string_view> name;
+    };
+    struct HeldTier {
+        std::string site, name;
+        std::uint32_t floor = 0;
+        std::uint32_t units = 0;
+    };
+
+    bool appendTiers(const UnitPart& part);
+    void appendRows(const UnitPart& part, const std::string& names);
+
+    std::deque<HeldTier> m_tiers; ///< A deque: the keys below point into them.
+    std::unordered_map<TierKey, std::uint32_t, TierKeyHash> m_byKey;
+    std::vector<std::uint32_t> m_ofPart; ///< From a part's tiers to ours.
+    std::vector<Block> m_blocks;
+    std::deque<std::string> m_names;
+    std::size_t m_rows = 0;
+    std::vector<std::uint32_t> m_order;  ///< Rows, tier by tier, in file order within each.
+    std::vector<std::uint32_t> m_starts; ///< Of each tier in m_order, and the end.
+};
+
+} // namespace rungwright
