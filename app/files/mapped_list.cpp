@@ -105,7 +105,7 @@ private:
                 trouble = takeHeader(line, gate.headers());
                 return trouble.isEmpty();
             }
-            if (place != HeaderGate::Place::row || isBlankRow(cells) || m_cells->ruleFor(cells) >= 0)
+            if (place != HeaderGate::Place::row || isEmptyRecord(cells) || m_cells->ruleFor(cells) >= 0)
                 return true;
             ++rows;
             if (!m_cells->mayTellCurrency())
@@ -213,7 +213,7 @@ private:
         const CsvEnd end = readCsv(
             m_device, m_fileName, m_layout,
             [&](qint64 line, std::span<const std::string_view> cells) {
-                if (gate.pass(cells) == HeaderGate::Place::row && !isBlankRow(cells))
+                if (gate.pass(cells) == HeaderGate::Place::row && !isEmptyRecord(cells))
                     take(line, cells);
                 return true;
             },
@@ -395,7 +395,7 @@ bool isOwnFormat(const QByteArray& beginning)
     buffer.open(QIODevice::ReadOnly);
     bool own = false;
     readCsv(buffer, {}, [&](qint64, std::span<const std::string_view> cells) {
-        if (isBlankRow(cells))
+        if (isEmptyRecord(cells))
             return true;
         own = readUnitListHeader(cells).ok();
         return false;

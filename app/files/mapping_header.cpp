@@ -8,7 +8,7 @@
 namespace rungwright
 {
 
-bool isBlankRow(std::span<const std::string_view> cells)
+bool isEmptyRecord(std::span<const std::string_view> cells)
 {
     return std::all_of(cells.begin(), cells.end(), [](std::string_view cell) { return trimmedText(cell).empty(); });
 }

@@ -14,7 +14,7 @@ namespace rungwright
 {
 
 /// Is every cell empty?
-bool isBlankRow(std::span<const std::string_view> cells);
+bool isEmptyRecord(std::span<const std::string_view> cells);
 
 /// The cells as texts.
 QStringList cellTexts(std::span<const std::string_view> cells);

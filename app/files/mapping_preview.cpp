@@ -88,7 +88,7 @@ private:
             }
             return;
         }
-        if (isBlankRow(cells))
+        if (isEmptyRecord(cells))
             return;
         ++m_preview.rowsSeen;
         PreviewRow row;
@@ -149,7 +149,7 @@ public:
         const HeaderGate::Place place = m_gate.pass(cells);
         if (place == HeaderGate::Place::headerEnds)
             m_cells.emplace(m_mapping, m_gate.headers());
-        if (place != HeaderGate::Place::row || isBlankRow(cells) || m_cells->ruleFor(cells) >= 0 || m_cells->place(Column::site) < 0)
+        if (place != HeaderGate::Place::row || isEmptyRecord(cells) || m_cells->ruleFor(cells) >= 0 || m_cells->place(Column::site) < 0)
             return;
         const std::string text(m_cells->theirs(Column::site, cells));
         if (const auto known = m_index.find(text); known != m_index.end()) {
