@@ -56,7 +56,10 @@ private:
     /// Behind the last LF that stands outside quotation marks, of a text that begins outside of them; 0 when there is none.
     static std::size_t recordsEnd(std::string_view text)
     {
-        bool inside = std::count(text.begin(), text.end(), '"') % 2 != 0;
+        const std::size_t quote = text.find('"');
+        if (quote == std::string_view::npos)
+            return text.rfind('\n') + 1;
+        bool inside = std::count(text.begin() + static_cast<std::ptrdiff_t>(quote), text.end(), '"') % 2 != 0;
         for (std::size_t end = text.size(); end > 0; --end) {
             if (text[end - 1] == '"')
                 inside = !inside;

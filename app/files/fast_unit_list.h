@@ -13,7 +13,7 @@ namespace rungwright
 
 struct FastSettings {
     unsigned threads = 0;               ///< 0: as many as the machine has.
-    std::size_t pieceSize = 256 * 1024; ///< Bytes read at a time. Tests take few.
+    std::size_t pieceSize = 128 * 1024; ///< Bytes read at a time. Tests take few.
 };
 
 /// A list that was read: what a UnitListResult says of the file as a whole, and the units, grouped by tier.

@@ -108,7 +108,7 @@ bool PieceReaders::putTogether()
             if (!m_jobs.front()->fine)
                 return false;
         }
-        if (!m_out.append(m_jobs.front()->part))
+        if (!m_out.append(std::move(m_jobs.front()->part)))
             return false;
         m_free.push_back(std::move(m_jobs.front()));
         m_jobs.pop_front();

@@ -47,17 +47,25 @@ PlainRows::PlainRows(const UnitListHeader& header, const Currency& currency, Kee
 
 bool PlainRows::read(char* begin, char* end, Begins begins, UnitPart& part)
 {
-    part.clear();
+    part = {};
+    const std::size_t room = m_rowsBefore + m_rowsBefore / 32;
+    part.tier.reserve(room);
+    part.asking.reserve(room);
+    part.nameHash.reserve(room);
+    part.state.reserve(room);
+
     m_byKey.clear();
     if (!isPlainUtf8({begin, static_cast<std::size_t>(end - begin)}))
         return false;
     bool headerAhead = begins == Begins::withHeader;
-    return plainRecords(begin, end, kMostCells, m_cells, [&](std::span<const std::string_view> cells) {
+    const bool fine = plainRecords(begin, end, kMostCells, m_cells, [&](std::span<const std::string_view> cells) {
         if (!headerAhead)
             return take(cells, part);
         headerAhead = isBlankRow(cells);
         return true;
     });
+    m_rowsBefore = part.rows();
+    return fine;
 }
 
 bool PlainRows::take(std::span<const std::string_view> cells, UnitPart& part)

@@ -52,15 +52,19 @@ struct UnitPart {
 
     static constexpr std::uint8_t kLocked = 0x80;
     std::size_t rows() const { return asking.size(); }
-    void clear();
+    std::string_view name(std::size_t row) const
+    {
+        const std::size_t begin = row == 0 ? 0 : nameEnds[row - 1];
+        return std::string_view(names).substr(begin, nameEnds[row] - begin);
+    }
 };
 
 /// Parts put together in file order, and then grouped by tier.
 class UnitColumns
 {
 public:
-    /// False when a tier has two floors. `part` may be cleared and used again.
-    bool append(UnitPart& part);
+    /// Takes the part over. False when a tier has two floors, or there are more rows than can be counted here.
+    bool append(UnitPart part);
     /// After the last part. False when a tier has no floor, or there is no row. Then the tiers can be looked at, from several threads.
     bool group();
 
@@ -72,18 +76,9 @@ public:
     void fill(std::size_t tier, Tier& out) const;
 
 private:
-    // Rows stand in blocks of this many, so that columns grow without being copied and without room to spare.
-    static constexpr std::size_t kRowBits = 15;
-    static constexpr std::size_t kBlockRows = std::size_t(1) << kRowBits;
-    struct Block {
-        std::vector<std::uint32_t> tier;
-        std::vector<std::uint32_t> asking;
-        std::vector<std::uint64_t> nameHash;
-        std::vector<std::uint8_t> state;
-        std::vector<std::int16_t> grade; ///< This and those below: empty, or an entry a row.
-        std::vector<double> area, chance;
-        std::vector<std::string_view> name;
-    };
+    // A row's place is its part and its number in there, 16 bits each. A row has 17 bytes at least, so that a megabyte of them fits.
+    static constexpr unsigned kRowBits = 16;
+    static constexpr std::size_t kMostRows = std::size_t(1) << kRowBits;
     struct HeldTier {
         std::string site, name;
         std::uint32_t floor = 0;
@@ -91,15 +86,13 @@ private:
     };
 
     bool appendTiers(const UnitPart& part);
-    void appendRows(const UnitPart& part, const std::string& names);
 
     std::deque<HeldTier> m_tiers; ///< A deque: the keys below point into them.
     std::unordered_map<TierKey, std::uint32_t, TierKeyHash> m_byKey;
     std::vector<std::uint32_t> m_ofPart; ///< From a part's tiers to ours.
-    std::vector<Block> m_blocks;
-    std::deque<std::string> m_names;
+    std::deque<UnitPart> m_parts;        ///< Their `tier` is ours, and empty once grouped.
     std::size_t m_rows = 0;
-    std::vector<std::uint32_t> m_order;  ///< Rows, tier by tier, in file order within each.
+    std::vector<std::uint32_t> m_order;  ///< Places of rows, tier by tier, in file order within each.
     std::vector<std::uint32_t> m_starts; ///< Of each tier in m_order, and the end.
 };
 
