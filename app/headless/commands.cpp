@@ -10,7 +10,7 @@ namespace
 {
 
 constexpr std::array kMeasureTakes{"site", "tier", "candidate", "model", "left", "load", "currency", "json", "without-bad-rows"};
-constexpr std::array kScanTakes{"model", "currency", "out", "without-bad-rows"};
+constexpr std::array kScanTakes{"model", "currency", "out", "threads", "without-bad-rows"};
 constexpr std::array kOneLadder{"site", "tier", "candidate", "out", "currency", "without-bad-rows"};
 constexpr std::array kSheetNeeds{"site", "tier", "candidate", "out"};
 constexpr std::array kPictureNeeds{"site", "tier", "out"};

@@ -172,7 +172,7 @@ std::string heading(const NamedFigure& figure) { return (*figure.group ? std::st
 
 } // namespace
 
-QByteArray measurementsToCsv(const std::vector<MeasuredLadder>& all, const Currency& currency)
+QByteArray csvHeadings(const Currency& currency)
 {
     // A tier without units has the same figures as any other: its names make the header, for an empty worklist too.
     const TierCase none{};
@@ -180,12 +180,14 @@ QByteArray measurementsToCsv(const std::vector<MeasuredLadder>& all, const Curre
     for (const NamedFigure& figure : namedFigures({{&none, -1, {}}, {}}, currency))
         csv += heading(figure) + ',';
     csv += "currency\r\n";
-    for (const MeasuredLadder& one : all) {
-        for (const NamedFigure& figure : namedFigures(one, currency))
-            csv += cell(figure.value) + ',';
-        csv += csvCell(currency.code) + "\r\n";
-    }
     return QByteArray::fromStdString(csv);
+}
+
+void appendCsvRow(const MeasuredLadder& measured, const Currency& currency, std::string& out)
+{
+    for (const NamedFigure& figure : namedFigures(measured, currency))
+        out += cell(figure.value) + ',';
+    out += csvCell(currency.code) + "\r\n";
 }
 
 } // namespace rungwright

@@ -32,7 +32,9 @@ QByteArray plainNumber(double value);
 /// One object, one tier a line, ending with a newline. Equal input gives equal bytes.
 QByteArray measurementsToJson(const std::vector<MeasuredLadder>& all, const Currency& currency);
 
-/// RFC 4180, CRLF: the same figures flattened ("skew_moment"), the currency behind them. Undefined figures are empty cells.
-QByteArray measurementsToCsv(const std::vector<MeasuredLadder>& all, const Currency& currency);
+/// RFC 4180, CRLF: the same figures flattened ("skew_moment"), the currency behind them. Undefined figures are empty cells. The row of
+/// headings, and one ladder's row.
+QByteArray csvHeadings(const Currency& currency);
+void appendCsvRow(const MeasuredLadder& measured, const Currency& currency, std::string& out);
 
 } // namespace rungwright

@@ -36,8 +36,7 @@ Outcome<Scenario> fromUnitList(const QByteArray& bytes, const Request& request)
     UnitListResult list = readUnitList(bytes, request.file, {request.currency, request.withoutBadRows});
     if (!list.fileTrouble.isEmpty())
         return trouble(list.fileTrouble);
-    if (!list.unknownColumns.isEmpty())
-        say(QStringLiteral("%1: columns not used: %2").arg(request.file, list.unknownColumns.join(QStringLiteral(", "))));
+    sayColumnsNotUsed(request.file, list.unknownColumns);
     if (list.refusedCount > 0 && !request.withoutBadRows)
         return trouble(refusedText(list, request.file) +
                        QStringLiteral("%1: %2 rows refused, so nothing was taken. Mend them, or go on without them by --without-bad-rows.")
@@ -65,6 +64,12 @@ Outcome<Scenario> fromScenario(const QByteArray& bytes, const Request& request)
 }
 
 } // namespace
+
+void sayColumnsNotUsed(const QString& file, const QStringList& columns)
+{
+    if (!columns.isEmpty())
+        say(QStringLiteral("%1: columns not used: %2").arg(file, columns.join(QStringLiteral(", "))));
+}
 
 Outcome<Scenario> openInput(const Request& request)
 {

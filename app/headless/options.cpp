@@ -34,6 +34,7 @@ constexpr std::array kOptions{
     OptionText{"currency", "CUR", "ISO 4217 code of a unit list that does not name its own."},
     OptionText{"json", "", "Print one JSON object instead of a table."},
     OptionText{"out", "FILE", "Where to write; scan without it writes to standard output."},
+    OptionText{"threads", "N", "How many threads work at a time; without it as many as there are processors. The result is the same."},
     OptionText{"without-bad-rows", "", "Take a unit list without its refused rows."},
 };
 
@@ -128,6 +129,13 @@ QString readValues(const Values& values, Request& request)
         request.load = text->toDouble(&number);
         if (!number || !std::isfinite(*request.load) || *request.load <= 0)
             return QStringLiteral("--load wants a number above 0 with a decimal point, found '%1'").arg(*text);
+    }
+    if (const auto text = values.text("threads")) {
+        constexpr int most = 1024;
+        bool number = false;
+        request.threads = text->toInt(&number);
+        if (!number || *request.threads < 1 || *request.threads > most)
+            return QStringLiteral("--threads wants a whole number from 1 to %1, found '%2'").arg(most).arg(*text);
     }
     if (const auto code = values.text("currency")) {
         request.currency = *code;

@@ -30,6 +30,7 @@ struct Request {
     std::optional<int> left;    ///< >= 1.
     std::optional<double> load; ///< Finite, > 0.
     QString currency;           ///< A code findCurrency() knows, or empty.
+    std::optional<int> threads; ///< >= 1; without it as many as the machine has.
     QString out;
     bool json = false;
     bool withoutBadRows = false;

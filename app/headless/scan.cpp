@@ -1,12 +1,16 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "commands.h"
 
-#include "figures_list.h"
+#include "fast_unit_list.h"
+#include "file_kind.h"
+#include "in_parallel.h"
+#include "input.h"
 #include "selection.h"
 #include "streams.h"
+#include "terminal_progress.h"
+#include "worklist.h"
 
-#include <algorithm>
-#include <limits>
+#include <QFile>
 
 namespace rungwright
 {
@@ -14,23 +18,76 @@ namespace rungwright
 namespace
 {
 
-/// Tiers whose gap is undefined come behind every number.
-double rank(const MeasuredLadder& one) { return one.measurement.gap.gapShare.value_or(-std::numeric_limits<double>::infinity()); }
+struct Scanned {
+    QByteArray csv;
+    QStringList unknownColumns;
+};
 
-} // namespace
+/// What is read only to be measured needs no names of units, and little memory. Nothing for a scenario, for a pipe, and for a list that
+/// is not plainly fine: prepare() then finds the words for what is wrong with it.
+std::optional<Scanned> scanPlainList(const Request& request, unsigned threads, TerminalProgress& progress)
+{
+    constexpr qint64 enoughToTell = 8192;
+    QFile file(request.file);
+    if (!file.open(QIODevice::ReadOnly) || file.isSequential() || looksLikeScenario(file.peek(enoughToTell), request.file))
+        return std::nullopt;
+    FastUnitList list;
+    const auto onRead = [&progress](double share) {
+        progress.show("reading", share);
+        return true;
+    };
+    FastSettings settings;
+    settings.threads = threads;
+    if (readFast(file, {request.currency, request.withoutBadRows}, KeepUnits::forFigures, settings, onRead, list) != FastEnd::done)
+        return std::nullopt;
 
-ExitStatus scan(const Request& request)
+    struct Scratch {
+        TierCase tierCase;
+        std::vector<std::uint64_t> names;
+    };
+    std::vector<Scratch> scratch(threads);
+    const auto ladderAt = [&](std::size_t place, unsigned thread) -> std::optional<ChosenLadder> {
+        Scratch& mine = scratch[thread];
+        if (!list.units.namesDiffer(place, mine.names))
+            return std::nullopt;
+        list.units.fill(place, mine.tierCase.tier);
+        return ChosenLadder{&mine.tierCase, -1, {request.model.value_or(ModelKind::perceived), {}, {}}};
+    };
+    auto csv = worklistCsv(list.currency, list.units.tiers(), threads, ladderAt, [&](double share) { progress.show("measuring", share); });
+    if (!csv)
+        return std::nullopt;
+    return Scanned{*std::move(csv), list.unknownColumns};
+}
+
+ExitStatus scanAnything(const Request& request, unsigned threads, TerminalProgress& progress, QByteArray& csv)
 {
     Scenario scenario;
     std::vector<ChosenLadder> ladders;
     if (const ExitStatus status = prepare(request, scenario, ladders); status != ExitStatus::done)
         return status;
+    const auto ladderAt = [&ladders](std::size_t place, unsigned) { return std::optional(ladders[place]); };
+    csv = *worklistCsv(scenario.currency, ladders.size(), threads, ladderAt, [&](double share) { progress.show("measuring", share); });
+    return ExitStatus::done;
+}
 
-    std::vector<MeasuredLadder> all = measureAll(ladders);
-    // Equal shares keep the order of the scenario.
-    std::stable_sort(all.begin(), all.end(), [](const MeasuredLadder& a, const MeasuredLadder& b) { return rank(a) > rank(b); });
+} // namespace
 
-    const QByteArray csv = measurementsToCsv(all, scenario.currency);
+ExitStatus scan(const Request& request)
+{
+    const unsigned threads = threadsFor(static_cast<unsigned>(request.threads.value_or(0)));
+    QByteArray csv;
+    {
+        TerminalProgress progress;
+        if (std::optional<Scanned> scanned = scanPlainList(request, threads, progress)) {
+            sayColumnsNotUsed(request.file, scanned->unknownColumns);
+            if (sameFile(request.file, request.out))
+                return refuseToOverwrite();
+            csv = std::move(scanned->csv);
+        } else if (const ExitStatus status = scanAnything(request, threads, progress, csv); status != ExitStatus::done) {
+            return status;
+        }
+    }
+    const WriteUndisturbed undisturbed(request.out.isEmpty());
     const auto written = request.out.isEmpty() ? writeToStandardOutput(csv) : writeOut(request.out, csv);
     return written ? ExitStatus::done : refuse(ExitStatus::cannotWrite, written.trouble());
 }

@@ -107,6 +107,8 @@ Outcome<std::vector<ChosenLadder>> chooseLadders(const Scenario& scenario, const
     return chosen;
 }
 
+ExitStatus refuseToOverwrite() { return refuse(ExitStatus::wrongUsage, "rungwright: --out would overwrite FILE"); }
+
 ExitStatus prepare(const Request& request, Scenario& scenario, std::vector<ChosenLadder>& ladders)
 {
     Outcome<Scenario> opened = openInput(request);
@@ -118,7 +120,7 @@ ExitStatus prepare(const Request& request, Scenario& scenario, std::vector<Chose
         return refuse(ExitStatus::wrongUsage, chosen.trouble());
     ladders = std::move(chosen).value();
     if (sameFile(request.file, request.out))
-        return refuse(ExitStatus::wrongUsage, "rungwright: --out would overwrite FILE");
+        return refuseToOverwrite();
     return ExitStatus::done;
 }
 

@@ -29,6 +29,9 @@ Outcome<std::vector<ChosenLadder>> chooseLadders(const Scenario& scenario, const
 /// ExitStatus::done, or the status to end with after the reason was told.
 ExitStatus prepare(const Request& request, Scenario& scenario, std::vector<ChosenLadder>& ladders);
 
+/// Tells that --out names FILE itself, and gives the status to end with.
+ExitStatus refuseToOverwrite();
+
 struct MeasuredLadder {
     ChosenLadder ladder;
     Measurement measurement;
