@@ -118,8 +118,10 @@ HeaderGuess guessHeader(const SampleRecords& records)
             first = i;
         }
     }
-    if (guess.fits == 0) {
-        // No word we know: the first full line without figures, or the first full line.
+    constexpr int enough = 2;
+    if (guess.fits < enough) {
+        // One word may stand in a row of units too ("Room 4"). Without words we know: the first full line without figures, or the first
+        // full line.
         const auto end = records.begin() + static_cast<std::ptrdiff_t>(within);
         auto found = std::find_if(records.begin(), end, [width](const QStringList& record) { return looksLikeHeader(record, width); });
         if (found == end)

@@ -194,7 +194,9 @@ QString plainWords(const QString& text)
 {
     QString out;
     bool gap = false;
-    for (const QChar c : text.toCaseFolded().normalized(QString::NormalizationForm_KD)) {
+    // Qt folds letter by letter and leaves the sharp s alone.
+    const QString folded = text.toCaseFolded().replace(QChar(0xDF), QLatin1String("ss"));
+    for (const QChar c : folded.normalized(QString::NormalizationForm_KD)) {
         if (c.isMark())
             continue;
         if (!c.isLetterOrNumber()) {
