@@ -102,6 +102,7 @@ RefusedRowsDialog::RefusedRowsDialog(const UnitListResult& result, const QString
     m_ui->titleLabel->setToolTip(fileName);
     m_ui->countLabel->setText(countText(result));
     m_ui->goOnButton->setEnabled(result.rowsFine > 0);
+    m_ui->mapButton->hide();
 
     QTableView* table = m_ui->rowsTable;
     table->setModel(&m_model);
@@ -120,6 +121,7 @@ RefusedRowsDialog::RefusedRowsDialog(const UnitListResult& result, const QString
             [this](const QModelIndex& at) { showDetail(at.isValid() ? at.row() : -1); });
     connect(m_ui->copyButton, &QPushButton::clicked, this, [table] { copyTable(*table, CopyPart::everything); });
     connect(m_ui->goOnButton, &QPushButton::clicked, this, &QDialog::accept);
+    connect(m_ui->mapButton, &QPushButton::clicked, this, [this] { QDialog::done(mapColumns); });
     connect(m_ui->giveUpButton, &QPushButton::clicked, this, &QDialog::reject);
     table->setFocus();
     if (m_model.rowCount() > 0)
@@ -127,6 +129,12 @@ RefusedRowsDialog::RefusedRowsDialog(const UnitListResult& result, const QString
 }
 
 RefusedRowsDialog::~RefusedRowsDialog() { m_ui->rowsTable->selectionModel()->disconnect(this); }
+
+void RefusedRowsDialog::offerMapping(const QString& text)
+{
+    m_ui->mapButton->setText(text);
+    m_ui->mapButton->show();
+}
 
 void RefusedRowsDialog::showDetail(int row) { m_ui->detailLabel->setText(row < 0 ? QString() : m_model.row(row).text(m_fileName)); }
 

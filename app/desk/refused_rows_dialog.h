@@ -42,9 +42,14 @@ class RefusedRowsDialog : public QDialog
 {
     Q_OBJECT
 public:
+    /// Result beside QDialog's own: the user wants to say how the columns are to be read.
+    static constexpr int mapColumns = 2;
+
     /// `fileName` with or without its folder.
     RefusedRowsDialog(const UnitListResult& result, const QString& fileName, QWidget* parent = nullptr);
     ~RefusedRowsDialog() override;
+    /// Shows a button of that text, which ends the dialog with mapColumns.
+    void offerMapping(const QString& text);
 
 protected:
     void changeEvent(QEvent* event) override;
