@@ -59,7 +59,7 @@ bool ChainSolver::prepare(const ChainProblem& problem)
     assert(problem.odds.empty() || problem.odds.size() == n);
     m_problem = problem;
     m_answer = {ChainStatus::solved, std::move(m_answer.x), 0, 0, 0, 0, 0, {}, 0, 0, {}};
-    m_base = n == 0 ? 0 : problem.lo.front();
+    m_base = n == 0 ? 0 : problem.today.front();
     m_today.resize(n);
     m_lo.resize(n);
     m_hi.resize(n);
@@ -84,24 +84,39 @@ bool ChainSolver::prepare(const ChainProblem& problem)
         m_answer.conflict = *conflict;
         return false;
     }
-    m_range = n == 0 ? 0 : std::max(std::abs(m_lo.front()), std::abs(m_hi.back()));
-    // A sum of n products keeps about sqrt(n) roundings of the largest; the base's product adds its own.
-    const double roundings = 8 * kRounding * std::sqrt(static_cast<double>(n) + 1);
-    m_totalTolerance = roundings * m_range * countedAll + 4 * kRounding * std::abs(m_countedBase);
-    m_expectTolerance = roundings * m_range * oddsAll + 4 * kRounding * std::abs(m_oddsBase);
-    m_muScale = heaviest * std::max(m_range, 1e-3);
+    m_countedAll = countedAll;
+    m_oddsAll = oddsAll;
+    // Against the prices there are; bounds may lie as far as they like.
+    double spread = 1e-3;
+    for (const double today : m_today)
+        spread = std::max(spread, std::abs(today));
+    m_muScale = heaviest * spread;
 
     for (std::size_t i = 0; i < n; ++i) {
         m_answer.leastTotal += problem.counted[i] * m_lo[i];
         m_answer.mostTotal += problem.counted[i] * m_hi[i];
     }
-    const bool reached = m_answer.mostTotal >= problem.totalLeast.value_or(-kInfinity) - m_countedBase - m_totalTolerance &&
-                         m_answer.leastTotal <= problem.totalMost.value_or(kInfinity) - m_countedBase + m_totalTolerance;
+    const auto hair = [&](double total) { return roundings() * std::abs(total) + 4 * kRounding * std::abs(m_countedBase); };
+    const bool reached = m_answer.mostTotal >= problem.totalLeast.value_or(-kInfinity) - m_countedBase - hair(m_answer.mostTotal) &&
+                         m_answer.leastTotal <= problem.totalMost.value_or(kInfinity) - m_countedBase + hair(m_answer.leastTotal);
     m_answer.leastTotal += m_countedBase;
     m_answer.mostTotal += m_countedBase;
     if (!reached)
         m_answer.status = ChainStatus::totalOutOfReach;
     return reached;
+}
+
+/// A sum of n products keeps about sqrt(n) roundings of the largest; the base's product adds its own.
+double ChainSolver::roundings() const { return 8 * kRounding * std::sqrt(static_cast<double>(m_today.size()) + 1); }
+
+double ChainSolver::totalTolerance(const Fit& fit) const
+{
+    return roundings() * fit.largest * m_countedAll + 4 * kRounding * std::abs(m_countedBase);
+}
+
+double ChainSolver::expectTolerance(const Fit& fit) const
+{
+    return roundings() * fit.largest * m_oddsAll + 4 * kRounding * std::abs(m_oddsBase);
 }
 
 const ChainAnswer& ChainSolver::leastExpected(const ChainProblem& problem)
@@ -117,13 +132,13 @@ const ChainAnswer& ChainSolver::solve(const ChainProblem& problem)
         return m_answer;
     const Fit unhurried = fitFor(0, 0);
     const double most = problem.expectedMost.value_or(kInfinity) - m_oddsBase;
-    if (problem.odds.empty() || unhurried.expected <= most + m_expectTolerance) {
+    if (problem.odds.empty() || unhurried.expected <= most + expectTolerance(unhurried)) {
         writeAnswer(unhurried, 0);
         return m_answer;
     }
     const double least = smallestExpected(problem.totalLeast.value_or(-kInfinity) - m_countedBase);
     m_answer.leastExpected = least + m_oddsBase;
-    if (most < least - m_expectTolerance) {
+    if (most < least - expectTolerance(unhurried)) {
         m_answer.status = ChainStatus::expectedOutOfReach;
         return m_answer;
     }
@@ -165,7 +180,8 @@ double ChainSolver::smallestExpected(double totalAtLeast)
         double expected = 0;
         sumsOf(m_blocks, total, expected);
         // Both ends are best at this theta too: so is every mixture of them, and one of those has the total.
-        if (expected - theta * total >= expectedBelow - theta * totalBelow - m_expectTolerance / 4)
+        const double hair = roundings() * (std::abs(expected) + std::abs(theta * total)) + kRounding * std::abs(m_oddsBase);
+        if (expected - theta * total >= expectedBelow - theta * totalBelow - hair)
             break;
         (total <= totalAtLeast ? totalBelow : totalAbove) = total;
         (total <= totalAtLeast ? expectedBelow : expectedAbove) = expected;
@@ -184,6 +200,8 @@ ChainSolver::Fit ChainSolver::fitAt(double mu, double lambda)
     fitIsotonic(m_target, weight, m_lo, m_hi, m_blocks);
     Fit fit;
     fit.mu = mu;
+    if (!m_blocks.empty())
+        fit.largest = std::max(std::abs(m_blocks.front().value), std::abs(m_blocks.back().value));
     for (const IsotonicBlock& block : m_blocks) {
         double c = 0;
         double w = 0;
@@ -211,7 +229,7 @@ ChainSolver::Fit ChainSolver::fitForTotal(double wanted, double lambda, double s
         fit = fitAt(mu, lambda);
         fit.totalBinds = true;
         const double excess = fit.total - wanted;
-        if (std::abs(excess) <= m_totalTolerance)
+        if (std::abs(excess) <= totalTolerance(fit))
             return fit;
         if (excess < 0)
             bracket.raiseLower(mu);
@@ -231,9 +249,9 @@ ChainSolver::Fit ChainSolver::fitFor(double lambda, double start)
     if (least == most)
         return fitForTotal(least, lambda, start);
     const Fit fit = fitAt(0, lambda);
-    if (fit.total < least - m_totalTolerance)
+    if (fit.total < least - totalTolerance(fit))
         return fitForTotal(least, lambda, start);
-    if (fit.total > most + m_totalTolerance)
+    if (fit.total > most + totalTolerance(fit))
         return fitForTotal(most, lambda, start);
     return fit;
 }
@@ -247,7 +265,7 @@ void ChainSolver::findLambda(double expectedMost, Fit fit)
     double lambda = 0;
     for (int step = 0; step < kMostSteps; ++step) {
         const double excess = fit.expected - expectedMost;
-        if (std::abs(excess) <= m_expectTolerance) {
+        if (std::abs(excess) <= expectTolerance(fit)) {
             if (step == 0)
                 fit = fitFor(0, fit.mu); // The blocks are those of another fit.
             break;

@@ -70,10 +70,14 @@ private:
     struct Fit {
         double total = 0, expected = 0;
         double cc = 0, cw = 0, ww = 0; ///< Sums over free blocks of counted^2, counted odds, odds^2, divided by weight.
+        double largest = 0;            ///< Largest price, either way from the base.
         double mu = 0;
         bool totalBinds = false;
     };
 
+    double roundings() const;
+    double totalTolerance(const Fit& fit) const;  ///< What rounding may take from a total ...
+    double expectTolerance(const Fit& fit) const; ///< ... and from an expectation.
     bool prepare(const ChainProblem& problem);
     double smallestExpected(double totalAtLeast);
     Fit fitAt(double mu, double lambda);
@@ -84,12 +88,10 @@ private:
     void sumsOf(std::span<const IsotonicBlock> blocks, double& total, double& expected) const;
 
     ChainProblem m_problem;
-    double m_base = 0;            ///< Subtracted from every price, so that rounding counts against the range and not the price.
-    double m_countedBase = 0;     ///< m_base times the sum of counted.
-    double m_oddsBase = 0;        ///< m_base times the sum of odds.
-    double m_range = 0;           ///< Largest bound less the smallest.
-    double m_totalTolerance = 0;  ///< What rounding may take from a total ...
-    double m_expectTolerance = 0; ///< ... and from an expectation.
+    double m_base = 0;                      ///< Subtracted from every price, so that rounding counts against the range and not the price.
+    double m_countedBase = 0;               ///< m_base times the sum of counted.
+    double m_oddsBase = 0;                  ///< m_base times the sum of odds.
+    double m_countedAll = 0, m_oddsAll = 0; ///< Sums.
     double m_muScale = 0;
     std::vector<double> m_today, m_lo, m_hi, m_target, m_odds;
     std::vector<IsotonicBlock> m_blocks;

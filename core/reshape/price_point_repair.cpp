@@ -70,7 +70,7 @@ bool PricePointRepair::start()
         if (m_hi[i] == kNone || m_hi[i] < m_lo[i])
             return false;
     }
-    m_base = n > 0 ? m_lo.front() : 0;
+    m_base = n > 0 ? m_problem.today.front().minor : 0;
     m_total = 0;
     m_expected = 0;
     for (std::size_t i = 0; i < n; ++i) {
@@ -494,8 +494,9 @@ const RepairAnswer& PricePointRepair::repair(const RepairProblem& problem)
     for (const double w : m_odds)
         oddsAll += w;
     m_expectedMost = problem.expectedMost ? *problem.expectedMost - oddsAll * static_cast<double>(m_base) : 0;
-    // Rounding of the odds' sums, against the range of prices.
-    m_tolerance = n == 0 ? 0 : 1e-9 + 1e-12 * static_cast<double>(m_hi.back() - m_base);
+    // Rounding of the odds' sums, against the prices there are; bounds may lie as far as they like.
+    const auto reach = [&](std::size_t i) { return std::abs(problem.wanted[i] - static_cast<double>(m_base)); };
+    m_tolerance = n == 0 ? 0 : 1e-9 + 1e-12 * std::max(reach(0), reach(n - 1));
     if (problem.expectedMost) {
         meetTarget();
     } else {

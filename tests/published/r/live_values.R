@@ -112,4 +112,12 @@ if (topic == "fitted") {
 } else if (topic == "chain") {
     need("quadprog")
     for (q in questions()) say(chainProblem(q))
+} else if (topic == "lmoments") { # alpha beta: L-moments of the beta distribution from their definition: mean, l2, l3 / l2
+    for (q in questions()) {
+        moment <- function(f) integrate(function(u) qbeta(u, q[1], q[2]) * f(u), 0, 1, rel.tol = 1e-10, subdivisions = 5000L)$value
+        l2 <- moment(function(u) 2 * u - 1)
+        say(moment(function(u) u^0), l2, moment(function(u) 6 * u^2 - 6 * u + 1) / l2)
+    }
+} else if (topic == "betaladder") { # alpha beta floor top m: the rungs of a beta quantile ladder
+    for (q in questions()) say(q[3] + (q[4] - q[3]) * qbeta((seq_len(q[5]) - 1) / (q[5] - 1), q[1], q[2]))
 }
