@@ -70,6 +70,7 @@ void Worklist::takeTiers()
     m_measured = 0;
     m_greatestShare = 0;
     m_names = worklistNames(tiers);
+    m_search.clear();
     if (takesLong(tiers)) {
         m_ranks.site.resize(m_names.sites.size());
         m_ranks.tier.resize(tiers.size());
@@ -88,6 +89,7 @@ void Worklist::measureNow()
 {
     const TierList& tiers = m_document.scenario().tiers;
     m_ranks = nameRanks(tiers);
+    m_search = searchTexts(tiers);
     for (std::size_t i = 0; i < tiers.size(); ++i)
         m_rows[i] = measureRow(m_measurer, tiers[i]);
     m_measured = m_rows.size();
@@ -100,12 +102,13 @@ void Worklist::measureInBackground()
     m_cancel = std::make_shared<std::atomic<bool>>(false);
     // The thread reads a copy of its own: the list may change meanwhile.
     m_worker = std::jthread([this, tiers = m_document.scenario().tiers, cancel = m_cancel, round = m_round] {
-        NameRanks ranks = nameRanks(tiers);
         QMetaObject::invokeMethod(
             this,
-            [this, round, ranks = std::move(ranks)]() mutable {
-                if (round == m_round)
-                    m_ranks = std::move(ranks);
+            [this, round, ranks = nameRanks(tiers), search = searchTexts(tiers)]() mutable {
+                if (round != m_round)
+                    return;
+                m_ranks = std::move(ranks);
+                m_search = std::move(search);
             },
             Qt::QueuedConnection);
         measureRows(tiers, 0, *cancel, [this, round](std::size_t first, std::vector<WorklistRow> rows) {

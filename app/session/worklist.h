@@ -36,6 +36,12 @@ public:
     const WorklistNames& names() const { return m_names; }
     /// In the order of the list until they are known.
     const NameRanks& ranks() const { return m_ranks; }
+    /// Site and name, case folded.
+    QString searchText(int tier) const
+    {
+        const auto at = static_cast<std::size_t>(tier);
+        return at < m_search.size() ? m_search[at] : rungwright::searchText(tierCase(tier).tier);
+    }
 
     /// Figures are still coming in; how many are there.
     bool measuring() const { return m_measured < m_rows.size(); }
@@ -78,6 +84,7 @@ private:
     std::vector<FlagSet> m_flags;
     WorklistNames m_names;
     NameRanks m_ranks;
+    std::vector<QString> m_search; ///< By tier; empty until made.
     std::size_t m_measured = 0;
     double m_greatestShare = 0;
     std::vector<bool> m_picked;

@@ -66,13 +66,21 @@ WorklistNames worklistNames(const TierList& tiers)
     WorklistNames names;
     Numbering sites;
     names.site.reserve(tiers.size());
-    names.search.reserve(tiers.size());
-    for (const TierCase& tierCase : tiers) {
+    for (const TierCase& tierCase : tiers)
         names.site.push_back(sites.of(tierCase.tier.site));
-        names.search.push_back((fromUtf8(tierCase.tier.site) + QLatin1Char(' ') + fromUtf8(tierCase.tier.name)).toCaseFolded());
-    }
     names.sites = std::move(sites.texts);
     return names;
+}
+
+QString searchText(const Tier& tier) { return (fromUtf8(tier.site) + QLatin1Char(' ') + fromUtf8(tier.name)).toCaseFolded(); }
+
+std::vector<QString> searchTexts(const TierList& tiers)
+{
+    std::vector<QString> texts;
+    texts.reserve(tiers.size());
+    for (const TierCase& tierCase : tiers)
+        texts.push_back(searchText(tierCase.tier));
+    return texts;
 }
 
 NameRanks nameRanks(const TierList& tiers)

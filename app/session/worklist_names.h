@@ -15,7 +15,6 @@ namespace rungwright
 struct WorklistNames {
     std::vector<QString> sites;      ///< Each once, in the order they come.
     std::vector<std::uint32_t> site; ///< By tier: index into `sites`.
-    std::vector<QString> search;     ///< By tier: site and name, case folded.
 };
 
 WorklistNames worklistNames(const TierList& tiers);
@@ -28,5 +27,9 @@ struct NameRanks {
 
 /// The slow part: to be called from any thread.
 NameRanks nameRanks(const TierList& tiers);
+
+/// Site and name, case folded, to look for words in.
+QString searchText(const Tier& tier);
+std::vector<QString> searchTexts(const TierList& tiers);
 
 } // namespace rungwright

@@ -46,7 +46,7 @@ public:
             return false;
         if (m_wish.words.isEmpty())
             return true;
-        const QString& names = m_list.names().search[static_cast<std::size_t>(tier)];
+        const QString names = m_list.searchText(tier);
         const QString& flagged = words(flags);
         const QString note = tierCase.note.empty() ? QString() : QString::fromStdString(tierCase.note).toCaseFolded();
         const auto there = [&](const QString& word) { return names.contains(word) || flagged.contains(word) || note.contains(word); };
