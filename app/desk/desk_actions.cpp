@@ -5,7 +5,7 @@
 #include "bench_page.h"
 #include "candidates_panel.h"
 #include "main_window.h"
-#include "worklist_panel.h"
+#include "worklist_menu.h"
 
 #include <QActionGroup>
 #include <QApplication>
@@ -21,6 +21,7 @@ DeskActions::DeskActions(MainWindow& window, AppearanceKeeper* appearance) : QOb
     buildFile();
     buildEdit();
     buildLadder();
+    m_needScenario << (new WorklistMenu(window))->actions();
     buildView(appearance);
     buildHelp();
     connect(&window.bench(), &Workbench::reset, this, &DeskActions::showEnabled);
@@ -108,7 +109,6 @@ void DeskActions::buildEdit()
     m_needScenario << add(menu, QStringLiteral("rulesAction"), tr("&Price rules…"), QKeySequence(tr("Ctrl+R")),
                           [this] { m_window.showRules(); });
     menu->addSeparator();
-    m_needScenario << add(menu, QStringLiteral("tierNoteAction"), tr("&Note on the tier…"), {}, [this] { m_window.editTierNote(); });
     m_needScenario << add(menu, QStringLiteral("scenarioNoteAction"), tr("Note on the &scenario…"), {},
                           [this] { m_window.editScenarioNote(); });
 }
@@ -141,15 +141,8 @@ void DeskActions::buildView(AppearanceKeeper* appearance)
     m_needScenario << add(menu, QStringLiteral("benchAction"), tr("&Bench"), QKeySequence(tr("Ctrl+1")), [this] { m_window.showBench(); });
     m_needScenario << add(menu, QStringLiteral("sideBySideAction"), tr("&Side by side"), QKeySequence(tr("Ctrl+2")),
                           [this] { m_window.showSideBySide(); });
-    menu->addSeparator();
-    m_needScenario << add(menu, QStringLiteral("nextTierAction"), tr("&Next tier of the worklist"), QKeySequence(tr("Alt+Down")),
-                          [this] { m_window.worklist().step(+1); });
-    m_needScenario << add(menu, QStringLiteral("previousTierAction"), tr("&Previous tier of the worklist"), QKeySequence(tr("Alt+Up")),
-                          [this] { m_window.worklist().step(-1); });
-    m_needScenario << add(menu, QStringLiteral("filterAction"), tr("&Filter the worklist"), QKeySequence::Find, [this] {
-        m_window.worklistDock().show();
-        m_window.worklist().focusFilter();
-    });
+    m_needScenario << add(menu, QStringLiteral("portfolioAction"), tr("&Portfolio"), QKeySequence(tr("Ctrl+3")),
+                          [this] { m_window.showPortfolio(); });
     menu->addSeparator();
     menu->addAction(m_window.worklistDock().toggleViewAction());
     menu->addAction(m_window.figuresDock().toggleViewAction());

@@ -19,7 +19,10 @@ QString keysText()
                 "Left, Right: the next rung. L: lock or unlock. Esc: give up a drag.\n"
                 "Drag the handle in the middle, or Ctrl+Up, Ctrl+Down: bend the ladder between its ends.\n\n"
                 "Below it: drag the marker to set the number of units left.\n\n"
-                "Alt+Down, Alt+Up: the next tier of the worklist. Ctrl+F: filter it. Ctrl+1, Ctrl+2: bench, side by side.\n"
+                "Alt+Down, Alt+Up: the next tier of the worklist. Alt+Shift+Down: the next one not yet seen. Ctrl+M: mark the selected\n"
+                "tiers as seen. Ctrl+F: filter. Ctrl+G: group by site; Left, Right: fold and unfold a site.\n"
+                "In the portfolio: click a tier to work on it, drag a box to pick tiers for the worklist, Esc to show all again.\n"
+                "Ctrl+1, Ctrl+2, Ctrl+3: bench, side by side, portfolio.\n"
                 "Every plot: right click to copy or save. Every table: right click or Ctrl+C to copy.");
 }
 

@@ -8,15 +8,18 @@
 #include "desk_actions.h"
 #include "figures_panel.h"
 #include "file_names.h"
+#include "flags_dialog.h"
 #include "help_texts.h"
 #include "picture_file.h"
 #include "questions.h"
+#include "portfolio_page.h"
 #include "rules_dialog.h"
 #include "sheet_dialog.h"
 #include "side_by_side_page.h"
 #include "start_page.h"
 #include "wording.h"
 #include "worklist_panel.h"
+#include "worklist_export_dialog.h"
 
 #include <QCloseEvent>
 #include <QCoreApplication>
@@ -46,7 +49,7 @@ constexpr int kNarrow = 1360;
 } // namespace
 
 MainWindow::MainWindow(Questions& questions, QSettings& settings, const QString& stateFolder, AppearanceKeeper* appearance) :
-    m_questions(questions), m_settings(settings), m_bench(m_document)
+    m_questions(questions), m_settings(settings), m_tiers(m_document), m_bench(m_document)
 {
     setObjectName(QStringLiteral("mainWindow"));
     setAcceptDrops(true);
@@ -97,6 +100,9 @@ void MainWindow::buildPages()
     setCentralWidget(m_stack);
 
     // Side by side has a table of the same figures for every ladder and needs the room.
+    m_portfolio = new PortfolioPage(m_tiers, m_bench, m_questions);
+    m_portfolio->setObjectName(QStringLiteral("portfolioPage"));
+    m_pages->addTab(m_portfolio, tr("Portfolio"));
     connect(m_pages, &QTabWidget::currentChanged, this, [this] {
         const bool beside = m_pages->currentWidget() == m_sideBySide;
         m_figuresDock->setVisible(!beside && m_figuresWanted);
@@ -112,8 +118,20 @@ void MainWindow::buildPages()
 
 void MainWindow::buildDocks()
 {
-    m_worklist = new WorklistPanel(m_bench);
+    m_worklist = new WorklistPanel(m_bench, m_tiers);
+    connect(m_worklist, &WorklistPanel::told, this, &MainWindow::tell);
+    connect(&m_tiers, &Worklist::measured, this, [this] {
+        // Unless the user has gone to work meanwhile.
+        if (std::exchange(m_worstWanted, false) && m_bench.tier() == 0 && !m_document.undoStack().canUndo())
+            showWorst();
+    });
     m_worklistDock = new QDockWidget(tr("Worklist"), this);
+    connect(m_portfolio, &PortfolioPage::told, this, &MainWindow::tell);
+    connect(m_portfolio, &PortfolioPage::thresholdsWanted, this, &MainWindow::showThresholds);
+    connect(m_portfolio, &PortfolioPage::tierChosen, this, [this](int tier) {
+        m_bench.showTier(tier, m_document.tier(tier)->chosen.value_or(-1));
+        showBench();
+    });
     m_worklistDock->setObjectName(QStringLiteral("worklistDock"));
     m_worklistDock->setWidget(m_worklist);
     addDockWidget(Qt::LeftDockWidgetArea, m_worklistDock);
@@ -153,9 +171,8 @@ void MainWindow::onOpened()
     m_pages->setCurrentWidget(m_benchPage);
     m_worklistDock->setVisible(m_worklistWanted);
     m_figuresDock->setVisible(m_figuresWanted);
-    const int worst = m_worklist->model().worstTier();
-    if (worst >= 0)
-        m_bench.showTier(worst, m_document.tier(worst)->chosen.value_or(-1));
+    m_worstWanted = m_tiers.measuring(); // of a large list only then
+    showWorst();
     tell(tr("%1 opened.").arg(m_document.displayName()));
     showSaveState();
 }
@@ -174,6 +191,13 @@ void MainWindow::showSaveState()
         setWindowModified(m_document.modified());
     if (empty)
         m_saveState->clear();
+void MainWindow::showWorst()
+{
+    const int worst = m_tiers.worstTier();
+    if (worst >= 0)
+        m_bench.showTier(worst, m_document.tier(worst)->chosen.value_or(-1));
+}
+
     else if (m_document.modified())
         m_saveState->setText(tr("not saved"));
     else
@@ -289,6 +313,26 @@ void MainWindow::restoreLayout()
         resetLayout();
     }
     m_worklistWanted = m_settings.value(kWorklistWanted, true).toBool();
+void MainWindow::showPortfolio() { m_pages->setCurrentWidget(m_portfolio); }
+
+void MainWindow::showThresholds()
+{
+    if (m_document.empty())
+        return;
+    auto* dialog = new FlagsDialog(m_tiers, this);
+    dialog->setAttribute(Qt::WA_DeleteOnClose);
+    connect(dialog, &QDialog::accepted, this, [this, dialog] { m_document.setFlagThresholds(dialog->thresholds()); });
+    dialog->open();
+}
+
+void MainWindow::showWorklistExport()
+{
+    auto* dialog = new WorklistExportDialog(m_tiers, m_worklist->model().arrangement().tiers, m_questions, this);
+    dialog->setAttribute(Qt::WA_DeleteOnClose);
+    connect(dialog, &WorklistExportDialog::told, this, &MainWindow::tell);
+    dialog->open();
+}
+
     m_figuresWanted = m_settings.value(kFiguresWanted, true).toBool();
     // Nothing is open yet: the start page has the window to itself.
     m_worklistDock->hide();

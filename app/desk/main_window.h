@@ -4,6 +4,7 @@
 
 #include "file_flow.h"
 #include "workbench.h"
+#include "worklist.h"
 
 #include <QLabel>
 #include <QMainWindow>
@@ -22,6 +23,7 @@ class DeskActions;
 class FiguresPanel;
 class Questions;
 class SideBySidePage;
+class PortfolioPage;
 class StartPage;
 class WorklistPanel;
 
@@ -36,6 +38,7 @@ public:
     Document& document() { return m_document; }
     Workbench& bench() { return m_bench; }
     FileFlow& files() { return *m_files; }
+    Worklist& tiers() { return m_tiers; }
     void openFile(const QString& path) { m_files->open(path); }
 
     // What the actions call.
@@ -51,6 +54,9 @@ public:
     void showSideBySide();
     WorklistPanel& worklist() { return *m_worklist; }
     BenchPage& benchPage() { return *m_benchPage; }
+    void showPortfolio();
+    void showThresholds();
+    void showWorklistExport();
     QDockWidget& worklistDock() { return *m_worklistDock; }
     QDockWidget& figuresDock() { return *m_figuresDock; }
 
@@ -66,6 +72,7 @@ private:
     void onOpened();
     void showSaveState();
     void showModelInUse();
+    void showWorst();
     void tell(const QString& sentence);
     void restoreLayout();
 
@@ -74,6 +81,7 @@ private:
     Document m_document;
     Workbench m_bench;
     FileFlow* m_files = nullptr;
+    Worklist m_tiers; ///< Before whatever else listens to the document.
     QStackedWidget* m_stack = nullptr;
     QTabWidget* m_pages = nullptr;
     StartPage* m_start = nullptr;
@@ -81,12 +89,14 @@ private:
     SideBySidePage* m_sideBySide = nullptr;
     WorklistPanel* m_worklist = nullptr;
     FiguresPanel* m_figures = nullptr;
+    PortfolioPage* m_portfolio = nullptr;
     QDockWidget* m_worklistDock = nullptr;
     QDockWidget* m_figuresDock = nullptr;
     DeskActions* m_actions = nullptr;
     int m_undoIndex = 0;
     bool m_worklistWanted = true;
     bool m_figuresWanted = true; ///< Whether the Figures stand beside the bench, which shows them.
+    bool m_worstWanted = false; ///< The worst tier goes onto the bench as soon as it is known.
     QLabel* m_lastAction = nullptr;
     QLabel* m_saveState = nullptr;
     QLabel* m_modelInUse = nullptr;

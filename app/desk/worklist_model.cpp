@@ -1,203 +1,333 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "worklist_model.h"
 
+#include "table_text.h"
 #include "wording.h"
 
 #include <QStringList>
 
-#include <algorithm>
+#include <utility>
 
 namespace rungwright
 {
 
-int TierFlags::count() const
+namespace
 {
-    return int(noneOnOffer) + int(floorNotOnSale) + int(belowFloor) + int(leansLeft) + int(lastUnits) + int(inversions);
+
+QString fromUtf8(const std::string& text) { return QString::fromUtf8(text.data(), static_cast<qsizetype>(text.size())); }
+
+bool isNumeric(int column) { return column >= WorklistModel::onOfferColumn && column <= WorklistModel::leanColumn; }
+
+WorklistKey keyOf(int column)
+{
+    static constexpr WorklistKey kKeys[] = {WorklistKey::tier,     WorklistKey::site, WorklistKey::onOffer, WorklistKey::floor,
+                                            WorklistKey::cheapest, WorklistKey::gap,  WorklistKey::lean,    WorklistKey::flags,
+                                            WorklistKey::seen,     WorklistKey::note};
+    static_assert(std::size(kKeys) == WorklistModel::columnCount_);
+    return kKeys[column];
 }
 
-TierFlags tierFlags(const Measurement& m)
+QString count(std::uint64_t n) { return QLocale().toString(static_cast<qulonglong>(n)); }
+
+} // namespace
+
+WorklistModel::WorklistModel(Worklist& list, QObject* parent) : QAbstractTableModel(parent), m_list(list)
 {
-    TierFlags flags;
-    flags.noneOnOffer = m.onOffer == 0;
-    flags.floorNotOnSale = m.onOffer > 0 && m.atFloor == 0;
-    flags.belowFloor = m.belowFloor > 0;
-    flags.leansLeft = m.figures.skew.moment && *m.figures.skew.moment < kLeansLeft;
-    flags.lastUnits = m.onOffer > 0 && m.onOffer <= kLastUnits;
-    flags.inversions = m.figures.inversions > 0;
-    return flags;
+    connect(&list, &Worklist::reset, this, &WorklistModel::onReset);
+    connect(&list, &Worklist::rowsChanged, this, &WorklistModel::onRowsChanged);
+    connect(&list, &Worklist::marksChanged, this, &WorklistModel::update);
+    connect(&list, &Worklist::pickChanged, this, [this] {
+        m_wish.pickedOnly = m_list.pickedCount() > 0;
+        update();
+    });
+    m_shown = arranged(m_list, m_wish);
+    indexRows();
 }
 
-QString flagWords(const TierFlags& flags)
-{
-    QStringList words;
-    if (flags.noneOnOffer)
-        words << WorklistModel::tr("none on offer");
-    if (flags.floorNotOnSale)
-        words << WorklistModel::tr("floor not on sale");
-    if (flags.belowFloor)
-        words << WorklistModel::tr("below floor");
-    if (flags.leansLeft)
-        words << WorklistModel::tr("leans left");
-    if (flags.lastUnits)
-        words << WorklistModel::tr("last units");
-    if (flags.inversions)
-        words << WorklistModel::tr("inversions");
-    return words.join(QStringLiteral(", "));
-}
-
-WorklistModel::WorklistModel(Document& document, QObject* parent) : QAbstractTableModel(parent), m_document(document)
-{
-    connect(&document, &Document::changed, this, &WorklistModel::onChanged);
-    measureAll();
-}
-
-int WorklistModel::rowCount(const QModelIndex& parent) const { return parent.isValid() ? 0 : static_cast<int>(m_rows.size()); }
+int WorklistModel::rowCount(const QModelIndex& parent) const { return parent.isValid() ? 0 : static_cast<int>(m_shown.rows.size()); }
 
 int WorklistModel::columnCount(const QModelIndex& parent) const { return parent.isValid() ? 0 : columnCount_; }
 
-void WorklistModel::onChanged(const DocumentChange& change)
+int WorklistModel::tierAt(int row) const { return row >= 0 && row < rowCount() ? shown(row).tier : -1; }
+
+int WorklistModel::rowOf(const ShownRow& what) const
 {
-    using Kind = DocumentChange::Kind;
-    if (change.kind == Kind::everything || change.kind == Kind::refreshed) {
-        beginResetModel();
-        measureAll();
-        endResetModel();
-    } else if ((change.kind == Kind::model || change.kind == Kind::floor) && change.tier >= 0) {
-        m_rows[static_cast<std::size_t>(change.tier)] = measureRow(*m_document.tier(change.tier));
-        const double before = m_greatestShare;
-        findGreatest();
-        const bool barsMove = before != m_greatestShare;
-        const int last = static_cast<int>(m_rows.size()) - 1;
-        emit dataChanged(index(barsMove ? 0 : change.tier, 0), index(barsMove ? last : change.tier, columnCount_ - 1));
+    const std::vector<int>& rows = what.isSite() ? m_rowOfSite : m_rowOfTier;
+    const int at = what.isSite() ? what.site : what.tier;
+    return at >= 0 && at < static_cast<int>(rows.size()) ? rows[static_cast<std::size_t>(at)] : -1;
+}
+
+// Arranging ----------------------------------------------------------------------------------------------------------
+
+void WorklistModel::onReset()
+{
+    m_sameTiers = false;
+    m_wish.pickedOnly = m_list.pickedCount() > 0;
+    rearrange();
+    m_sameTiers = true;
+}
+
+void WorklistModel::onRowsChanged()
+{
+    if (m_list.measuring())
+        allDataChanged(); // rows that jumped about while figures come in would be no help
+    else
+        update();
+}
+
+void WorklistModel::update()
+{
+    WorklistArrangement now = arranged(m_list, m_wish);
+    if (now.rows != m_shown.rows) {
+        rearrange();
+        return;
+    }
+    m_shown = std::move(now);
+    allDataChanged();
+}
+
+void WorklistModel::rearrange()
+{
+    beginResetModel();
+    m_shown = arranged(m_list, m_wish);
+    indexRows();
+    endResetModel();
+}
+
+void WorklistModel::indexRows()
+{
+    m_rowOfTier.assign(static_cast<std::size_t>(m_list.count()), -1);
+    m_rowOfSite.assign(m_list.names().sites.size(), -1);
+    for (std::size_t row = 0; row < m_shown.rows.size(); ++row) {
+        const ShownRow& at = m_shown.rows[row];
+        auto& place = at.isSite() ? m_rowOfSite[static_cast<std::size_t>(at.site)] : m_rowOfTier[static_cast<std::size_t>(at.tier)];
+        place = static_cast<int>(row);
     }
 }
 
-void WorklistModel::measureAll()
+void WorklistModel::allDataChanged()
 {
-    m_rows.clear();
-    m_rows.reserve(m_document.scenario().tiers.size());
-    for (const TierCase& tierCase : m_document.scenario().tiers)
-        m_rows.push_back(measureRow(tierCase));
-    findGreatest();
+    if (rowCount() > 0)
+        emit dataChanged(index(0, 0), index(rowCount() - 1, columnCount_ - 1));
 }
 
-WorklistModel::Row WorklistModel::measureRow(const TierCase& tierCase)
+void WorklistModel::sort(int column, Qt::SortOrder order)
 {
-    const Measurement& m = m_measurer.measure(tierCase.tier, askingPrices(tierCase.tier.units), tierCase.model, MeasureParts::figuresOnly);
-    return {m.onOffer, m.rentable, m.gap.expectedCheapest, m.gap.gap, m.gap.gapShare, m.figures.skew.moment, tierFlags(m)};
+    if (column < 0 || column >= columnCount_)
+        return;
+    WorklistWish wish = m_wish;
+    wish.key = keyOf(column);
+    wish.descending = order == Qt::DescendingOrder;
+    setWish(wish);
 }
 
-void WorklistModel::findGreatest()
+void WorklistModel::setWish(const WorklistWish& wish)
 {
-    m_greatestShare = 0;
-    for (const Row& row : m_rows)
-        m_greatestShare = std::max(m_greatestShare, row.share.value_or(0.0));
+    m_wish = wish;
+    rearrange();
 }
 
-int WorklistModel::worstTier() const
+void WorklistModel::fold(int site, bool folded)
 {
-    int worst = -1;
-    for (int i = 0; i < rowCount(); ++i) {
-        const auto& share = m_rows[static_cast<std::size_t>(i)].share;
-        if (share && (worst < 0 || *share > *m_rows[static_cast<std::size_t>(worst)].share))
-            worst = i;
+    if (folded)
+        m_wish.folded.insert(siteName(site));
+    else
+        m_wish.folded.remove(siteName(site));
+    rearrange();
+}
+
+void WorklistModel::foldAll(bool folded)
+{
+    m_wish.folded.clear();
+    for (const QString& site : m_list.names().sites) {
+        if (folded)
+            m_wish.folded.insert(site);
     }
-    return worst;
+    rearrange();
 }
 
-QVariant WorklistModel::text(int row, int column) const
+// Words --------------------------------------------------------------------------------------------------------------
+
+QString WorklistModel::tierText(int tier, int column) const
 {
-    const Row& r = m_rows[static_cast<std::size_t>(row)];
-    const Tier& tier = m_document.tier(row)->tier;
-    const Currency& currency = m_document.scenario().currency;
-    const auto money = [&](const std::optional<double>& v) { return v ? moneyText(*v, currency) : undefinedText(); };
+    const WorklistRow& r = m_list.row(tier);
+    const TierCase& tierCase = m_list.tierCase(tier);
+    const Currency& currency = m_list.document().scenario().currency;
+    const auto pending = QStringLiteral("…");
+    const auto money = [&](const std::optional<double>& v) {
+        if (!r.measured)
+            return pending;
+        return v ? moneyText(*v, currency) : undefinedText();
+    };
     switch (column) {
     case tierColumn:
-        return QString::fromStdString(tier.name);
+        return fromUtf8(tierCase.tier.name);
     case siteColumn:
-        return QString::fromStdString(tier.site);
+        return fromUtf8(tierCase.tier.site);
     case onOfferColumn:
-        return tr("%1 / %2").arg(r.onOffer).arg(r.rentable);
+        return r.measured ? tr("%1 / %2").arg(r.onOffer).arg(r.rentable) : pending;
     case floorColumn:
-        return floorText(tier.advertisedFloor, currency);
+        return floorText(tierCase.tier.advertisedFloor, currency);
     case cheapestColumn:
         return money(r.cheapest);
     case gapColumn:
         return money(r.gap);
     case leanColumn:
+        if (!r.measured)
+            return pending;
         return r.lean ? numberText(*r.lean) : undefinedText();
     case flagsColumn:
-        return flagWords(r.flags);
+        return flagWords(m_list.flags(tier));
+    case seenColumn:
+        return tierCase.seen ? tr("seen") : QString();
+    case noteColumn:
+        return fromUtf8(tierCase.note).simplified();
     default:
         return {};
     }
 }
 
-QVariant WorklistModel::sortValue(int row, int column) const
+QString WorklistModel::siteText(int site, int column) const
 {
-    const Row& r = m_rows[static_cast<std::size_t>(row)];
-    const auto figure = [](const std::optional<double>& v) { return v ? QVariant(*v) : QVariant(); };
+    const SiteSummary& s = summary(site);
     switch (column) {
+    case tierColumn:
+    case siteColumn:
+        return siteName(site);
     case onOfferColumn:
-        return static_cast<qulonglong>(r.onOffer);
-    case floorColumn:
-        return static_cast<qlonglong>(m_document.tier(row)->tier.advertisedFloor.minor);
-    case cheapestColumn:
-        return figure(r.cheapest);
+        return tr("%1 / %2").arg(count(s.onOffer), count(s.rentable));
     case gapColumn:
-        return figure(r.share); // a gap of 10 on 30 is worse than one of 12 on 120
-    case leanColumn:
-        return figure(r.lean);
+        return s.worstShare ? percentText(*s.worstShare, true) : undefinedText();
     case flagsColumn:
-        return r.flags.count();
+        return tr("%1 of %2 flagged").arg(s.flagged).arg(s.tiers);
+    case seenColumn:
+        return tr("%1 of %2 seen").arg(s.tiers - s.unseen).arg(s.tiers);
     default:
-        return text(row, column);
+        return {};
+    }
+}
+
+QVariant WorklistModel::value(int tier, int column) const
+{
+    if (!isNumeric(column))
+        return tierText(tier, column);
+    const auto number = sortNumber(m_list, tier, keyOf(column));
+    return number ? QVariant(*number) : QVariant();
+}
+
+QString WorklistModel::description(int tier) const
+{
+    const WorklistRow& r = m_list.row(tier);
+    const TierCase& tierCase = m_list.tierCase(tier);
+    QString said = tr("%1, %2: ").arg(fromUtf8(tierCase.tier.site), fromUtf8(tierCase.tier.name));
+    said += r.measured ? tr("%1 of %2 rentable units on offer").arg(r.onOffer).arg(r.rentable) : tr("not measured yet");
+    said += tr(", advertised from %1").arg(floorText(tierCase.tier.advertisedFloor, m_list.document().scenario().currency));
+    if (r.gap && r.share)
+        said += tr(", gap %1 (%2)").arg(tierText(tier, gapColumn), percentText(*r.share, true));
+    if (tierCase.seen)
+        said += tr(", seen");
+    const QString flags = flagWords(m_list.flags(tier));
+    if (!flags.isEmpty())
+        said += QLatin1Char('\n') + flags;
+    if (!tierCase.note.empty())
+        said += QLatin1Char('\n') + tr("Note: %1").arg(fromUtf8(tierCase.note));
+    return said;
+}
+
+QString WorklistModel::siteDescription(int site) const
+{
+    const SiteSummary& s = summary(site);
+    QString said = s.tiers == 1 ? tr("%1: 1 tier").arg(siteName(site)) : tr("%1: %2 tiers").arg(siteName(site)).arg(s.tiers);
+    said += tr(", %1 flagged, %2 not yet seen").arg(s.flagged).arg(s.unseen);
+    said += tr("; %1 of %2 rentable units on offer").arg(count(s.onOffer), count(s.rentable));
+    if (s.worstShare)
+        said += tr("; the widest gap is %1 of its floor").arg(percentText(*s.worstShare, true));
+    return said + (m_wish.folded.contains(siteName(site)) ? tr("; folded") : tr("; unfolded"));
+}
+
+QVariant WorklistModel::tierData(int tier, int column, int role) const
+{
+    const TierCase& tierCase = m_list.tierCase(tier);
+    switch (role) {
+    case Qt::DisplayRole:
+        return tierText(tier, column);
+    case Qt::AccessibleTextRole:
+        if (column == tierColumn && tierCase.seen)
+            return tr("%1, seen").arg(tierText(tier, column));
+        return tierText(tier, column);
+    case Qt::ToolTipRole:
+    case Qt::AccessibleDescriptionRole:
+        return description(tier);
+    case kValueRole:
+        return value(tier, column);
+    case shareRole: {
+        const auto& share = m_list.row(tier).share;
+        return share ? QVariant(*share) : QVariant();
+    }
+    case secondLineRole: {
+        QStringList parts;
+        if (!m_wish.grouped)
+            parts << fromUtf8(tierCase.tier.site);
+        const QString flags = flagWords(m_list.flags(tier));
+        if (!flags.isEmpty())
+            parts << flags;
+        return parts.join(QStringLiteral(" · "));
+    }
+    case seenRole:
+        return tierCase.seen;
+    case notedRole:
+        return !tierCase.note.empty();
+    default:
+        return {};
+    }
+}
+
+QVariant WorklistModel::siteData(int site, int column, int role) const
+{
+    const SiteSummary& s = summary(site);
+    switch (role) {
+    case Qt::DisplayRole:
+    case Qt::AccessibleTextRole:
+        return siteText(site, column);
+    case Qt::ToolTipRole:
+    case Qt::AccessibleDescriptionRole:
+        return siteDescription(site);
+    case kValueRole:
+        if (!isNumeric(column))
+            return siteText(site, column);
+        return column == gapColumn && s.worstShare ? QVariant(*s.worstShare) : QVariant();
+    case shareRole:
+        return s.worstShare ? QVariant(*s.worstShare) : QVariant();
+    case secondLineRole: {
+        const QString tiers = s.tiers == 1 ? tr("1 tier") : tr("%1 tiers").arg(s.tiers);
+        const QString offered = tr("%1 on offer").arg(siteText(site, onOfferColumn));
+        return s.flagged ? tr("%1 · %2 flagged · %3").arg(tiers).arg(s.flagged).arg(offered) : tr("%1 · %2").arg(tiers, offered);
+    }
+    case siteRole:
+        return true;
+    case foldedRole:
+        return m_wish.folded.contains(siteName(site));
+    default:
+        return {};
     }
 }
 
 QVariant WorklistModel::data(const QModelIndex& index, int role) const
 {
-    // The document may have fewer tiers already while a refresh is being announced.
-    if (!index.isValid() || index.row() >= rowCount() || !m_document.tier(index.row()))
+    if (!index.isValid() || index.row() >= rowCount())
         return {};
-    const Row& r = m_rows[static_cast<std::size_t>(index.row())];
-    const Tier& tier = m_document.tier(index.row())->tier;
     switch (role) {
-    case Qt::DisplayRole:
-        return text(index.row(), index.column());
     case Qt::TextAlignmentRole:
-        if (index.column() >= onOfferColumn && index.column() <= leanColumn)
-            return QVariant(Qt::AlignRight | Qt::AlignVCenter);
-        return QVariant(Qt::AlignLeft | Qt::AlignVCenter);
-    case Qt::ToolTipRole:
-    case Qt::AccessibleDescriptionRole: {
-        QString said = tr("%1, %2: %3 of %4 rentable units on offer, advertised from %5")
-                           .arg(QString::fromStdString(tier.site), QString::fromStdString(tier.name))
-                           .arg(r.onOffer)
-                           .arg(r.rentable)
-                           .arg(floorText(tier.advertisedFloor, m_document.scenario().currency));
-        if (r.gap)
-            said += tr(", gap %1 (%2)").arg(text(index.row(), gapColumn).toString(), percentText(*r.share, true));
-        const QString flags = flagWords(r.flags);
-        return flags.isEmpty() ? said : said + QLatin1Char('\n') + flags;
-    }
-    case sortRole:
-        return sortValue(index.row(), index.column());
-    case searchRole:
-        return QString(QString::fromStdString(tier.site) + QLatin1Char(' ') + QString::fromStdString(tier.name) + QLatin1Char(' ') +
-                       flagWords(r.flags));
-    case shareRole:
-        return r.share ? QVariant(*r.share) : QVariant();
+        return isNumeric(index.column()) ? QVariant(Qt::AlignRight | Qt::AlignVCenter) : QVariant(Qt::AlignLeft | Qt::AlignVCenter);
     case greatestShareRole:
-        return m_greatestShare;
-    case secondLineRole: {
-        const QString site = QString::fromStdString(tier.site);
-        const QString flags = flagWords(r.flags);
-        return flags.isEmpty() ? site : tr("%1 · %2").arg(site, flags);
-    }
+        return m_list.greatestShare();
+    case groupedRole:
+        return m_wish.grouped;
     default:
-        return {};
+        break;
     }
+    const ShownRow at = shown(index.row());
+    return at.isSite() ? siteData(at.site, index.column(), role) : tierData(at.tier, index.column(), role);
 }
 
 QVariant WorklistModel::headerData(int section, Qt::Orientation orientation, int role) const
@@ -205,7 +335,8 @@ QVariant WorklistModel::headerData(int section, Qt::Orientation orientation, int
     if (orientation != Qt::Horizontal)
         return QAbstractTableModel::headerData(section, orientation, role);
     static const char* const kNames[] = {QT_TR_NOOP("Tier"),     QT_TR_NOOP("Site"), QT_TR_NOOP("On offer"), QT_TR_NOOP("Floor"),
-                                         QT_TR_NOOP("Cheapest"), QT_TR_NOOP("Gap"),  QT_TR_NOOP("Lean"),     QT_TR_NOOP("Flags")};
+                                         QT_TR_NOOP("Cheapest"), QT_TR_NOOP("Gap"),  QT_TR_NOOP("Lean"),     QT_TR_NOOP("Flags"),
+                                         QT_TR_NOOP("Seen"),     QT_TR_NOOP("Note")};
     static const char* const kTips[] = {
         QT_TR_NOOP("Size tier: its units are advertised together"),
         QT_TR_NOOP("Where it is"),
@@ -214,14 +345,15 @@ QVariant WorklistModel::headerData(int section, Qt::Orientation orientation, int
         QT_TR_NOOP("Expected cheapest: what an enquirer can expect as the cheapest unit"),
         QT_TR_NOOP("Expected cheapest minus advertised floor; the bar is its share of the floor, by which it sorts"),
         QT_TR_NOOP("Skewness g1 of the prices on offer; below zero the ladder leans left"),
-        QT_TR_NOOP("What to look at")};
+        QT_TR_NOOP("What to look at"),
+        QT_TR_NOOP("Tiers you have dealt with"),
+        QT_TR_NOOP("Your note on the tier")};
     if (role == Qt::DisplayRole)
         return tr(kNames[section]);
     if (role == Qt::ToolTipRole)
         return tr(kTips[section]);
     if (role == Qt::TextAlignmentRole)
-        return section >= onOfferColumn && section <= leanColumn ? QVariant(Qt::AlignRight | Qt::AlignVCenter)
-                                                                 : QVariant(Qt::AlignLeft | Qt::AlignVCenter);
+        return isNumeric(section) ? QVariant(Qt::AlignRight | Qt::AlignVCenter) : QVariant(Qt::AlignLeft | Qt::AlignVCenter);
     return {};
 }
 

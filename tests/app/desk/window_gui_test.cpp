@@ -120,7 +120,8 @@ void WindowGuiTest::candidatesAreCopiedRenamedDiscarded()
 void WindowGuiTest::modelsAreSound()
 {
     Document& document = desk().window->document();
-    WorklistModel worklistModel(document);
+    Worklist list(document);
+    WorklistModel worklistModel(list);
     FiguresModel figures(desk().bench());
     CandidatesModel candidates(desk().bench());
     const auto mode = QAbstractItemModelTester::FailureReportingMode::QtTest;
