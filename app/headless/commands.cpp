@@ -9,9 +9,10 @@ namespace rungwright
 namespace
 {
 
-constexpr std::array kMeasureTakes{"site", "tier", "candidate", "model", "left", "load", "currency", "json", "without-bad-rows"};
-constexpr std::array kScanTakes{"model", "currency", "out", "threads", "without-bad-rows"};
-constexpr std::array kOneLadder{"site", "tier", "candidate", "out", "currency", "without-bad-rows"};
+constexpr std::array kMeasureTakes{"site",     "tier", "candidate",        "model",   "left",  "load",
+                                   "currency", "json", "without-bad-rows", "mapping", "floors"};
+constexpr std::array kScanTakes{"model", "currency", "out", "threads", "without-bad-rows", "mapping", "floors"};
+constexpr std::array kOneLadder{"site", "tier", "candidate", "out", "currency", "without-bad-rows", "mapping", "floors"};
 constexpr std::array kSheetNeeds{"site", "tier", "candidate", "out"};
 constexpr std::array kPictureNeeds{"site", "tier", "out"};
 

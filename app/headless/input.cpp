@@ -2,10 +2,14 @@
 #include "input.h"
 
 #include "file_kind.h"
+#include "mapped_list.h"
+#include "mapping_profile.h"
 #include "scenario_json.h"
 #include "streams.h"
 #include "unit_list.h"
 #include "whole_file.h"
+
+#include <QFile>
 
 namespace rungwright
 {
@@ -31,9 +35,8 @@ QString refusedText(const UnitListResult& list, const QString& fileName)
     return text;
 }
 
-Outcome<Scenario> fromUnitList(const QByteArray& bytes, const Request& request)
+Outcome<Scenario> taken(UnitListResult list, const Request& request)
 {
-    UnitListResult list = readUnitList(bytes, request.file, {request.currency, request.withoutBadRows});
     if (!list.fileTrouble.isEmpty())
         return trouble(list.fileTrouble);
     sayColumnsNotUsed(request.file, list.unknownColumns);
@@ -52,6 +55,29 @@ Outcome<Scenario> fromUnitList(const QByteArray& bytes, const Request& request)
     scenario.currency = list.currency;
     scenario.tiers = std::move(list.tiers);
     return scenario;
+}
+
+Outcome<Scenario> fromUnitList(const QByteArray& bytes, const Request& request)
+{
+    return taken(readUnitList(bytes, request.file, {request.currency, request.withoutBadRows}), request);
+}
+
+Outcome<Scenario> fromMappedList(const Request& request)
+{
+    const Outcome<MappingProfile> profile = loadMapping(request.mapping);
+    if (!profile)
+        return Trouble{profile.trouble()};
+    QFile file(request.file);
+    constexpr qint64 enoughToTell = 8192;
+    if (file.open(QIODevice::ReadOnly) && !file.isSequential() && looksLikeScenario(file.peek(enoughToTell), request.file))
+        return trouble(
+            QStringLiteral("%1: is a scenario, which is read as it is; --mapping is for a list of another system").arg(request.file));
+    file.close();
+    MappedListResult mapped =
+        loadMappedList(request.file, profile.value().mapping, request.floors, {request.currency, request.withoutBadRows});
+    for (const QString& note : mapped.notes)
+        say(QStringLiteral("%1: %2").arg(request.file, note));
+    return taken(std::move(mapped.list), request);
 }
 
 Outcome<Scenario> fromScenario(const QByteArray& bytes, const Request& request)
@@ -73,6 +99,8 @@ void sayColumnsNotUsed(const QString& file, const QStringList& columns)
 
 Outcome<Scenario> openInput(const Request& request)
 {
+    if (!request.mapping.isEmpty())
+        return fromMappedList(request);
     const Outcome<QByteArray> bytes = readWhole(request.file, kLargestInput);
     if (!bytes)
         return Trouble{bytes.trouble()};

@@ -36,6 +36,8 @@ constexpr std::array kOptions{
     OptionText{"out", "FILE", "Where to write; scan without it writes to standard output."},
     OptionText{"threads", "N", "How many threads work at a time; without it as many as there are processors. The result is the same."},
     OptionText{"without-bad-rows", "", "Take a unit list without its refused rows."},
+    OptionText{"mapping", "PROFILE", "Read FILE, a list of another system, as the saved import mapping PROFILE (*.mapping.json) says."},
+    OptionText{"floors", "FLOORS", "The floors of a mapped list, where its mapping takes them from a file (site, tier, advertised_floor)."},
 };
 
 void addOptions(QCommandLineParser& parser, const Command& command)
@@ -175,10 +177,18 @@ Outcome<Request> readRequest(const Command& command, const QStringList& argument
     request.tier = values.text("tier");
     request.candidate = values.text("candidate");
     request.out = values.text("out").value_or(QString());
+    request.mapping = values.text("mapping").value_or(QString());
+    request.floors = values.text("floors").value_or(QString());
     request.json = values.flag("json");
     request.withoutBadRows = values.flag("without-bad-rows");
     if (values.text("out") && request.out.isEmpty())
         return trouble(command, QStringLiteral("--out names no file"));
+    for (const char* name : {"mapping", "floors"}) {
+        if (values.text(name) == QString())
+            return trouble(command, QStringLiteral("--%1 names no file").arg(QLatin1String(name)));
+    }
+    if (values.text("floors") && !values.text("mapping"))
+        return trouble(command, QStringLiteral("--floors is for a mapped list: --mapping is missing"));
     if (const QString wrong = readValues(values, request); !wrong.isEmpty())
         return trouble(command, wrong);
     return request;

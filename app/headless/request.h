@@ -32,6 +32,8 @@ struct Request {
     QString currency;           ///< A code findCurrency() knows, or empty.
     std::optional<int> threads; ///< >= 1; without it as many as the machine has.
     QString out;
+    QString mapping; ///< Path of the profile FILE is read through; empty for a list of our own format.
+    QString floors;  ///< Path of a file of floors beside a mapped list; empty for none.
     bool json = false;
     bool withoutBadRows = false;
     bool help = false; ///< Only help was asked for; the rest is empty.

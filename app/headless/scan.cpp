@@ -29,7 +29,8 @@ std::optional<Scanned> scanPlainList(const Request& request, unsigned threads, T
 {
     constexpr qint64 enoughToTell = 8192;
     QFile file(request.file);
-    if (!file.open(QIODevice::ReadOnly) || file.isSequential() || looksLikeScenario(file.peek(enoughToTell), request.file))
+    if (!request.mapping.isEmpty() || !file.open(QIODevice::ReadOnly) || file.isSequential() ||
+        looksLikeScenario(file.peek(enoughToTell), request.file))
         return std::nullopt;
     FastUnitList list;
     const auto onRead = [&progress](double share) {
