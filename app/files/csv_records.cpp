@@ -43,11 +43,14 @@ CsvEnd readCsv(QIODevice& device, const QString& fileName, const CsvLayout& layo
     TextDecoder decoder(layout.encoding);
     CsvLexer lexer(sink, layout.delimiter);
     std::string text;
-    QByteArray piece(kPiece, Qt::Uninitialized);
+    // Small files are read often and from memory, while a form is filled in: they get a small buffer.
+    constexpr qint64 least = 4096;
+    const qint64 size = device.isSequential() ? kPiece : std::clamp(device.size() - device.pos(), least, kPiece);
+    QByteArray piece(size, Qt::Uninitialized);
     const qint64 whole = std::max<qint64>(1, device.size());
     qint64 soFar = 0;
     for (bool more = true; more;) {
-        const qint64 got = device.read(piece.data(), kPiece);
+        const qint64 got = device.read(piece.data(), size);
         if (got < 0) {
             end.trouble = Words::tr("%1: cannot be read: %2").arg(fileName, device.errorString());
             break;
