@@ -13,8 +13,11 @@ namespace rungwright
 /// trimmedText(), quick about a text that begins and ends with ASCII.
 inline std::string_view plainTrimmed(std::string_view text)
 {
+    // No white space of Unicode ends in a byte from B0 on; what begins beyond ASCII is looked at the slow way.
     const auto isDark = [](char c) { return c > ' ' && c <= '~'; };
-    return text.empty() || (isDark(text.front()) && isDark(text.back())) ? text : trimmedText(text);
+    return text.empty() || (isDark(text.front()) && (isDark(text.back()) || static_cast<unsigned char>(text.back()) >= 0xB0))
+               ? text
+               : trimmedText(text);
 }
 
 /// Digits, or digits, a point and digits: `value` without the point, and the number of digits behind it. False for anything else and for

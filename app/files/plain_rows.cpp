@@ -51,7 +51,8 @@ bool PlainRows::read(char* begin, char* end, Begins begins, UnitPart& part)
     const std::size_t room = m_rowsBefore + m_rowsBefore / 32;
     part.tier.reserve(room);
     part.asking.reserve(room);
-    part.nameHash.reserve(room);
+    part.hashLow.reserve(room);
+    part.hashHigh.reserve(room);
     part.state.reserve(room);
 
     m_byKey.clear();
@@ -82,7 +83,9 @@ bool PlainRows::take(std::span<const std::string_view> cells, UnitPart& part)
         return false;
     part.asking.push_back(asking);
     part.tier.push_back(m_lastTier);
-    part.nameHash.push_back(std::hash<std::string_view>()(name));
+    const std::uint64_t hash = std::hash<std::string_view>()(name);
+    part.hashLow.push_back(static_cast<std::uint32_t>(hash));
+    part.hashHigh.push_back(static_cast<std::uint16_t>(hash >> 32));
     if (m_keep == KeepUnits::whole) {
         part.names.append(name);
         part.nameEnds.push_back(static_cast<std::uint32_t>(part.names.size()));
@@ -104,9 +107,9 @@ bool PlainRows::takeValues(std::span<const std::string_view> cells, UnitPart& pa
     }
     if (const auto text = cell(cells, Column::grade); !text.empty()) {
         int grade = 0;
-        if (readGrade(text, grade) || grade <= UnitPart::kNoGrade || grade > std::numeric_limits<std::int16_t>::max())
+        if (readGrade(text, grade) || grade <= UnitPart::kNoGrade || grade > std::numeric_limits<std::int8_t>::max())
             return false;
-        putOptional(part.grade, row, static_cast<std::int16_t>(grade), UnitPart::kNoGrade);
+        putOptional(part.grade, row, static_cast<std::int8_t>(grade), UnitPart::kNoGrade);
     } else if (!part.grade.empty()) {
         part.grade.push_back(UnitPart::kNoGrade);
     }
@@ -145,15 +148,18 @@ bool PlainRows::tierOf(TierKey key, std::string_view floorText, UnitPart& part)
         return false;
     const auto isLast = [&] { return part.tiers[m_lastTier].name == key.name && part.tiers[m_lastTier].site == key.site; };
     if (part.tiers.empty() || !isLast()) {
-        const auto [place, fresh] = m_byKey.try_emplace(key, static_cast<std::uint32_t>(part.tiers.size()));
+        const auto [place, fresh] = m_byKey.try_emplace(key, static_cast<std::uint16_t>(part.tiers.size()));
         m_lastTier = place->second;
+        if (fresh && part.tiers.size() == UnitPart::kMostTiers)
+            return false;
         if (fresh)
-            part.tiers.push_back({key.site, key.name, 0});
+            part.tiers.push_back({key.site, key.name, 0, 0});
     }
     UnitPart::PartTier& tier = part.tiers[m_lastTier];
     if (floor != 0 && tier.floor != 0 && floor != tier.floor)
         return false;
     tier.floor = std::max(tier.floor, floor);
+    ++tier.units;
     return true;
 }
 

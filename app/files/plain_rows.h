@@ -37,8 +37,8 @@ private:
     Currency m_currency;
     KeepUnits m_keep;
     std::vector<std::string_view> m_cells;
-    std::unordered_map<TierKey, std::uint32_t, TierKeyHash> m_byKey; ///< Of the part.
-    std::uint32_t m_lastTier = 0;
+    std::unordered_map<TierKey, std::uint16_t, TierKeyHash> m_byKey; ///< Of the part.
+    std::uint16_t m_lastTier = 0;
     std::size_t m_rowsBefore = 0; ///< Of the part before: about as many will come again.
 };
 

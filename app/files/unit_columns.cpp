@@ -2,6 +2,7 @@
 #include "unit_columns.h"
 
 #include <algorithm>
+#include <bit>
 #include <cmath>
 
 namespace rungwright
@@ -9,37 +10,33 @@ namespace rungwright
 
 bool UnitColumns::append(UnitPart part)
 {
-    if (part.rows() > kMostRows || m_parts.size() == std::numeric_limits<std::uint32_t>::max() >> kRowBits || !appendTiers(part))
+    if (part.rows() > kMostRows || m_parts.size() == std::numeric_limits<std::uint32_t>::max() >> kRowBits)
         return false;
-    m_rows += part.rows();
-    part.tiers = {};
-    for (std::uint32_t& tier : part.tier) {
-        tier = m_ofPart[tier];
-        ++m_tiers[tier].units;
-    }
-    if (part.rows() > 0)
-        m_parts.push_back(std::move(part));
-    return true;
+    HeldPart& held = m_parts.emplace_back(HeldPart{std::move(part), {}});
+    m_rows += held.part.rows();
+    return appendTiers(held);
 }
 
-bool UnitColumns::appendTiers(const UnitPart& part)
+bool UnitColumns::appendTiers(HeldPart& held)
 {
-    m_ofPart.clear();
-    for (const UnitPart::PartTier& tier : part.tiers) {
+    held.tiers.reserve(held.part.tiers.size());
+    for (const UnitPart::PartTier& tier : held.part.tiers) {
         std::uint32_t place = 0;
         if (const auto known = m_byKey.find({tier.site, tier.name}); known != m_byKey.end()) {
             place = known->second;
-            HeldTier& held = m_tiers[place];
-            if (held.floor != 0 && tier.floor != 0 && held.floor != tier.floor)
+            std::uint32_t& floor = m_tiers[place].floor;
+            if (floor != 0 && tier.floor != 0 && floor != tier.floor)
                 return false;
-            held.floor = std::max(held.floor, tier.floor);
+            floor = std::max(floor, tier.floor);
         } else {
             place = static_cast<std::uint32_t>(m_tiers.size());
-            const HeldTier& held = m_tiers.emplace_back(HeldTier{std::string(tier.site), std::string(tier.name), tier.floor, 0});
-            m_byKey.emplace(TierKey{held.site, held.name}, place);
+            const HeldTier& fresh = m_tiers.emplace_back(HeldTier{std::string(tier.site), std::string(tier.name), tier.floor, 0});
+            m_byKey.emplace(TierKey{fresh.site, fresh.name}, place);
         }
-        m_ofPart.push_back(place);
+        m_tiers[place].units += tier.units;
+        held.tiers.push_back(place);
     }
+    held.part.tiers = {};
     return true;
 }
 
@@ -58,11 +55,12 @@ bool UnitColumns::group()
     m_starts.push_back(rows);
     m_order.resize(m_rows);
     std::uint32_t place = 0;
-    for (UnitPart& part : m_parts) {
+    for (HeldPart& held : m_parts) {
         std::uint32_t row = place;
-        for (const std::uint32_t tier : part.tier)
-            m_order[next[tier]++] = row++;
-        part.tier = {};
+        for (const std::uint16_t tier : held.part.tier)
+            m_order[next[held.tiers[tier]]++] = row++;
+        held.part.tier = {};
+        held.tiers = {};
         place += kMostRows;
     }
     return m_rows > 0;
@@ -70,11 +68,22 @@ bool UnitColumns::group()
 
 bool UnitColumns::namesDiffer(std::size_t tier, std::vector<std::uint64_t>& scratch) const
 {
-    scratch.clear();
-    for (std::uint32_t i = m_starts[tier]; i < m_starts[tier + 1]; ++i)
-        scratch.push_back(m_parts[m_order[i] >> kRowBits].nameHash[m_order[i] % kMostRows]);
-    std::sort(scratch.begin(), scratch.end());
-    return std::adjacent_find(scratch.begin(), scratch.end()) == scratch.end();
+    // A table of hashes, never more than half full; a place holds 0 as long as it is free.
+    const std::size_t units = m_starts[tier + 1] - m_starts[tier];
+    const std::size_t mask = std::bit_ceil(2 * units) - 1;
+    scratch.assign(mask + 1, 0);
+    for (std::uint32_t i = m_starts[tier]; i < m_starts[tier + 1]; ++i) {
+        const UnitPart& part = m_parts[m_order[i] >> kRowBits].part;
+        const std::size_t row = m_order[i] % kMostRows;
+        const std::uint64_t hash = (std::uint64_t(part.hashHigh[row]) << 32 | part.hashLow[row]) + 1;
+        std::size_t at = hash & mask;
+        for (; scratch[at] != 0; at = (at + 1) & mask) {
+            if (scratch[at] == hash)
+                return false;
+        }
+        scratch[at] = hash;
+    }
+    return true;
 }
 
 void UnitColumns::fill(std::size_t tier, Tier& out) const
@@ -87,7 +96,7 @@ void UnitColumns::fill(std::size_t tier, Tier& out) const
     const auto known = [](double value) { return std::isnan(value) ? std::nullopt : std::optional(value); };
     for (std::uint32_t i = 0; i < held.units; ++i) {
         const std::uint32_t place = m_order[m_starts[tier] + i];
-        const UnitPart& part = m_parts[place >> kRowBits];
+        const UnitPart& part = m_parts[place >> kRowBits].part;
         const std::size_t at = place % kMostRows;
         Unit& unit = out.units[i];
         if (!part.nameEnds.empty())

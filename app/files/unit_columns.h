@@ -37,15 +37,19 @@ struct UnitPart {
     struct PartTier {
         std::string_view site, name; ///< In the piece's text.
         std::uint32_t floor = 0;     ///< Minor units; 0: none on these rows.
+        std::uint32_t units = 0;
     };
-    static constexpr std::int16_t kNoGrade = std::numeric_limits<std::int16_t>::min();
+    static constexpr std::int8_t kNoGrade = std::numeric_limits<std::int8_t>::min();
+    static constexpr std::size_t kMostTiers = std::numeric_limits<std::uint16_t>::max();
 
-    std::vector<PartTier> tiers;       ///< In order of first appearance.
-    std::vector<std::uint32_t> tier;   ///< Index into `tiers`.
+    std::vector<PartTier> tiers;       ///< In order of first appearance, at most kMostTiers.
+    std::vector<std::uint16_t> tier;   ///< Index into `tiers`.
     std::vector<std::uint32_t> asking; ///< Minor units.
-    std::vector<std::uint64_t> nameHash;
+    /// 48 bits of each name's hash: among a thousand tiers of a thousand units two names of a tier share one once in half a million lists.
+    std::vector<std::uint32_t> hashLow;
+    std::vector<std::uint16_t> hashHigh;
     std::vector<std::uint8_t> state;  ///< The status, and kLocked.
-    std::vector<std::int16_t> grade;  ///< kNoGrade: none.
+    std::vector<std::int8_t> grade;   ///< kNoGrade: none.
     std::vector<double> area, chance; ///< NaN: none.
     std::string names;                ///< One after the other; empty when forFigures.
     std::vector<std::uint32_t> nameEnds;
@@ -85,12 +89,16 @@ private:
         std::uint32_t units = 0;
     };
 
-    bool appendTiers(const UnitPart& part);
+    struct HeldPart {
+        UnitPart part;                    ///< Its `tier` is empty once grouped.
+        std::vector<std::uint32_t> tiers; ///< From the part's tiers to ours; empty once grouped.
+    };
+
+    bool appendTiers(HeldPart& held);
 
     std::deque<HeldTier> m_tiers; ///< A deque: the keys below point into them.
     std::unordered_map<TierKey, std::uint32_t, TierKeyHash> m_byKey;
-    std::vector<std::uint32_t> m_ofPart; ///< From a part's tiers to ours.
-    std::deque<UnitPart> m_parts;        ///< Their `tier` is ours, and empty once grouped.
+    std::deque<HeldPart> m_parts;
     std::size_t m_rows = 0;
     std::vector<std::uint32_t> m_order;  ///< Places of rows, tier by tier, in file order within each.
     std::vector<std::uint32_t> m_starts; ///< Of each tier in m_order, and the end.

@@ -6,6 +6,9 @@
 #include <QFileInfo>
 #include <QSaveFile>
 
+#include <algorithm>
+#include <utility>
+
 namespace rungwright
 {
 
@@ -38,6 +41,12 @@ Outcome<QByteArray> readRest(QFile& file, qint64 most)
 
 Outcome<bool> writeWhole(const QString& path, const QByteArray& bytes)
 {
+    bool given = false;
+    return writeWhole(path, [&bytes, &given] { return std::exchange(given, true) ? QByteArrayView() : QByteArrayView(bytes); });
+}
+
+Outcome<bool> writeWhole(const QString& path, const NextPiece& next)
+{
     const QFileInfo there(path);
     const bool existed = there.exists();
     // Replacing a device, a pipe or a terminal would take it away from everyone else.
@@ -48,10 +57,10 @@ Outcome<bool> writeWhole(const QString& path, const QByteArray& bytes)
     // place.
     bool done = file.open(QIODevice::WriteOnly | QIODevice::Unbuffered);
     // A disk that fills up takes a part without a word; only writing the rest brings the reason.
-    for (qsizetype at = 0; done && at < bytes.size();) {
-        const qint64 taken = file.write(bytes.constData() + at, bytes.size() - at);
+    for (QByteArrayView piece = done ? next() : QByteArrayView(); done && !piece.isEmpty();) {
+        const qint64 taken = file.write(piece.data(), piece.size());
         done = taken > 0;
-        at += taken;
+        piece = taken < piece.size() ? piece.sliced(std::max<qint64>(taken, 0)) : next();
     }
     if (done && file.commit())
         return true;

@@ -5,8 +5,11 @@
 #include "outcome.h"
 
 #include <QByteArray>
+#include <QByteArrayView>
 #include <QFile>
 #include <QString>
+
+#include <functional>
 
 namespace rungwright
 {
@@ -19,5 +22,8 @@ Outcome<QByteArray> readRest(QFile& file, qint64 most);
 /// Replaces the file in one step (QSaveFile: written beside it, synced, renamed). On any error the old file stands, and the message says
 /// so and gives the system's reason. What is there and is no regular file is never replaced.
 Outcome<bool> writeWhole(const QString& path, const QByteArray& bytes);
+/// The same for bytes that come piece by piece; an empty piece is the end.
+using NextPiece = std::function<QByteArrayView()>;
+Outcome<bool> writeWhole(const QString& path, const NextPiece& next);
 
 } // namespace rungwright

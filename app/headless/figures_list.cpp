@@ -90,14 +90,26 @@ std::vector<NamedFigure> namedFigures(const MeasuredLadder& measured, const Curr
     };
 }
 
-QByteArray plainNumber(double value)
+namespace
+{
+
+/// The text of plainNumber(), written to `text`.
+std::string_view numberText(double value, std::array<char, 64>& text)
 {
     // Plain digits where they stay short: a price of 1400000 is not to read 1.4e+06.
     const double size = std::abs(value);
     const auto format = value == 0 || (size >= 1e-5 && size < 1e16) ? std::chars_format::fixed : std::chars_format::scientific;
-    std::array<char, 64> text{};
     const auto end = std::to_chars(text.data(), text.data() + text.size(), value, format);
-    return {text.data(), end.ptr - text.data()};
+    return {text.data(), static_cast<std::size_t>(end.ptr - text.data())};
+}
+
+} // namespace
+
+QByteArray plainNumber(double value)
+{
+    std::array<char, 64> text{};
+    const std::string_view number = numberText(value, text);
+    return {number.data(), qsizetype(number.size())};
 }
 
 namespace
@@ -157,36 +169,37 @@ namespace
 {
 
 /// Numbers are numbers to a spreadsheet, a minus sign included; texts are guarded against being taken for formulas.
-std::string cell(const Value& value)
+void appendCell(const Value& value, std::string& out)
 {
-    if (const auto* text = std::get_if<std::string>(&value))
-        return csvCell(guarded(*text));
-    if (const auto* whole = std::get_if<std::int64_t>(&value))
-        return std::to_string(*whole);
-    if (const auto* real = std::get_if<double>(&value))
-        return plainNumber(*real).toStdString();
-    return {};
+    std::array<char, 64> text{};
+    if (const auto* words = std::get_if<std::string>(&value))
+        out += csvCell(guarded(*words));
+    else if (const auto* whole = std::get_if<std::int64_t>(&value))
+        out.append(text.data(), std::to_chars(text.data(), text.data() + text.size(), *whole).ptr);
+    else if (const auto* real = std::get_if<double>(&value))
+        out += numberText(*real, text);
 }
 
 std::string heading(const NamedFigure& figure) { return (*figure.group ? std::string(figure.group) + '_' : std::string()) + figure.key; }
 
 } // namespace
 
-QByteArray csvHeadings(const Currency& currency)
+std::string csvHeadings(const Currency& currency)
 {
     // A tier without units has the same figures as any other: its names make the header, for an empty worklist too.
     const TierCase none{};
     std::string csv;
     for (const NamedFigure& figure : namedFigures({{&none, -1, {}}, {}}, currency))
         csv += heading(figure) + ',';
-    csv += "currency\r\n";
-    return QByteArray::fromStdString(csv);
+    return csv + "currency\r\n";
 }
 
 void appendCsvRow(const MeasuredLadder& measured, const Currency& currency, std::string& out)
 {
-    for (const NamedFigure& figure : namedFigures(measured, currency))
-        out += cell(figure.value) + ',';
+    for (const NamedFigure& figure : namedFigures(measured, currency)) {
+        appendCell(figure.value, out);
+        out += ',';
+    }
     out += csvCell(currency.code) + "\r\n";
 }
 

@@ -34,7 +34,7 @@ QByteArray measurementsToJson(const std::vector<MeasuredLadder>& all, const Curr
 
 /// RFC 4180, CRLF: the same figures flattened ("skew_moment"), the currency behind them. Undefined figures are empty cells. The row of
 /// headings, and one ladder's row.
-QByteArray csvHeadings(const Currency& currency);
+std::string csvHeadings(const Currency& currency);
 void appendCsvRow(const MeasuredLadder& measured, const Currency& currency, std::string& out);
 
 } // namespace rungwright

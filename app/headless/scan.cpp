@@ -8,7 +8,7 @@
 #include "selection.h"
 #include "streams.h"
 #include "terminal_progress.h"
-#include "worklist.h"
+#include "worklist_csv.h"
 
 #include <QFile>
 
@@ -19,7 +19,7 @@ namespace
 {
 
 struct Scanned {
-    QByteArray csv;
+    WorklistCsv list;
     QStringList unknownColumns;
 };
 
@@ -54,20 +54,22 @@ std::optional<Scanned> scanPlainList(const Request& request, unsigned threads, T
         list.units.fill(place, mine.tierCase.tier);
         return ChosenLadder{&mine.tierCase, -1, {request.model.value_or(ModelKind::perceived), {}, {}}};
     };
-    auto csv = worklistCsv(list.currency, list.units.tiers(), threads, ladderAt, [&](double share) { progress.show("measuring", share); });
-    if (!csv)
+    auto worklist =
+        WorklistCsv::of(list.currency, list.units.tiers(), threads, ladderAt, [&](double share) { progress.show("measuring", share); });
+    if (!worklist)
         return std::nullopt;
-    return Scanned{*std::move(csv), list.unknownColumns};
+    return Scanned{*std::move(worklist), list.unknownColumns};
 }
 
-ExitStatus scanAnything(const Request& request, unsigned threads, TerminalProgress& progress, QByteArray& csv)
+ExitStatus scanAnything(const Request& request, unsigned threads, TerminalProgress& progress, std::optional<WorklistCsv>& worklist)
 {
     Scenario scenario;
     std::vector<ChosenLadder> ladders;
     if (const ExitStatus status = prepare(request, scenario, ladders); status != ExitStatus::done)
         return status;
     const auto ladderAt = [&ladders](std::size_t place, unsigned) { return std::optional(ladders[place]); };
-    csv = *worklistCsv(scenario.currency, ladders.size(), threads, ladderAt, [&](double share) { progress.show("measuring", share); });
+    worklist =
+        WorklistCsv::of(scenario.currency, ladders.size(), threads, ladderAt, [&](double share) { progress.show("measuring", share); });
     return ExitStatus::done;
 }
 
@@ -76,20 +78,20 @@ ExitStatus scanAnything(const Request& request, unsigned threads, TerminalProgre
 ExitStatus scan(const Request& request)
 {
     const unsigned threads = threadsFor(static_cast<unsigned>(request.threads.value_or(0)));
-    QByteArray csv;
+    std::optional<WorklistCsv> worklist;
     {
         TerminalProgress progress;
         if (std::optional<Scanned> scanned = scanPlainList(request, threads, progress)) {
             sayColumnsNotUsed(request.file, scanned->unknownColumns);
             if (sameFile(request.file, request.out))
                 return refuseToOverwrite();
-            csv = std::move(scanned->csv);
-        } else if (const ExitStatus status = scanAnything(request, threads, progress, csv); status != ExitStatus::done) {
+            worklist = std::move(scanned->list);
+        } else if (const ExitStatus status = scanAnything(request, threads, progress, worklist); status != ExitStatus::done) {
             return status;
         }
     }
     const WriteUndisturbed undisturbed(request.out.isEmpty());
-    const auto written = request.out.isEmpty() ? writeToStandardOutput(csv) : writeOut(request.out, csv);
+    const auto written = request.out.isEmpty() ? writeToStandardOutput(worklist->pieces()) : writeOut(request.out, worklist->pieces());
     return written ? ExitStatus::done : refuse(ExitStatus::cannotWrite, written.trouble());
 }
 

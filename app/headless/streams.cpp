@@ -1,14 +1,13 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "streams.h"
 
-#include "whole_file.h"
-
 #include <QFile>
 #include <QFileInfo>
 
 #include <cerrno>
 #include <fcntl.h>
 #include <unistd.h>
+#include <utility>
 
 namespace rungwright
 {
@@ -17,18 +16,31 @@ namespace
 {
 
 /// 0, or the errno of what went wrong.
-int writeAll(int descriptor, const QByteArray& bytes)
+int writeAll(int descriptor, QByteArrayView bytes)
 {
-    qsizetype done = 0;
-    while (done < bytes.size()) {
-        const ssize_t written = ::write(descriptor, bytes.constData() + done, std::size_t(bytes.size() - done));
+    while (!bytes.isEmpty()) {
+        const ssize_t written = ::write(descriptor, bytes.data(), std::size_t(bytes.size()));
         if (written < 0 && errno == EINTR)
             continue;
         if (written < 0)
             return errno;
-        done += written;
+        bytes = bytes.sliced(written);
     }
     return 0;
+}
+
+int writeAll(int descriptor, const NextPiece& next)
+{
+    int error = 0;
+    for (QByteArrayView piece = next(); error == 0 && !piece.isEmpty(); piece = next())
+        error = writeAll(descriptor, piece);
+    return error;
+}
+
+/// All of it as one piece.
+NextPiece onePiece(const QByteArray& bytes)
+{
+    return [&bytes, given = false]() mutable { return std::exchange(given, true) ? QByteArrayView() : QByteArrayView(bytes); };
 }
 
 Trouble cannotWrite(const QString& what, const QString& why)
@@ -36,12 +48,12 @@ Trouble cannotWrite(const QString& what, const QString& why)
     return {QStringLiteral("%1: cannot be written: %2").arg(what, why).toStdString()};
 }
 
-Outcome<bool> writeThrough(const QString& path, const QByteArray& bytes)
+Outcome<bool> writeThrough(const QString& path, const NextPiece& next)
 {
     QFile file(path);
     if (!file.open(QIODevice::WriteOnly | QIODevice::Unbuffered))
         return cannotWrite(path, file.errorString());
-    if (const int error = writeAll(file.handle(), bytes))
+    if (const int error = writeAll(file.handle(), next))
         return cannotWrite(path, qt_error_string(error));
     return true;
 }
@@ -68,7 +80,7 @@ void say(const QString& message)
     QByteArray text = harmless.toUtf8();
     if (!text.endsWith('\n'))
         text += '\n';
-    writeAll(STDERR_FILENO, text);
+    writeAll(STDERR_FILENO, QByteArrayView(text));
 }
 
 ExitStatus refuse(ExitStatus status, const std::string& message)
@@ -77,9 +89,11 @@ ExitStatus refuse(ExitStatus status, const std::string& message)
     return status;
 }
 
-Outcome<bool> writeToStandardOutput(const QByteArray& bytes)
+Outcome<bool> writeToStandardOutput(const QByteArray& bytes) { return writeToStandardOutput(onePiece(bytes)); }
+
+Outcome<bool> writeToStandardOutput(const NextPiece& next)
 {
-    if (const int error = writeAll(STDOUT_FILENO, bytes))
+    if (const int error = writeAll(STDOUT_FILENO, next))
         return cannotWrite(QStringLiteral("standard output"), qt_error_string(error));
     // Some file systems report a full disk or a lost server only on close.
     const int copy = ::dup(STDOUT_FILENO);
@@ -88,10 +102,12 @@ Outcome<bool> writeToStandardOutput(const QByteArray& bytes)
     return true;
 }
 
-Outcome<bool> writeOut(const QString& path, const QByteArray& bytes)
+Outcome<bool> writeOut(const QString& path, const QByteArray& bytes) { return writeOut(path, onePiece(bytes)); }
+
+Outcome<bool> writeOut(const QString& path, const NextPiece& next)
 {
     const QFileInfo there(path);
-    return there.exists() && !there.isFile() && !there.isDir() ? writeThrough(path, bytes) : writeWhole(path, bytes);
+    return there.exists() && !there.isFile() && !there.isDir() ? writeThrough(path, next) : writeWhole(path, next);
 }
 
 bool sameFile(const QString& a, const QString& b)

@@ -4,6 +4,7 @@
 
 #include "outcome.h"
 #include "request.h"
+#include "whole_file.h"
 
 #include <QByteArray>
 #include <QString>
@@ -23,9 +24,11 @@ ExitStatus refuse(ExitStatus status, const std::string& message);
 
 /// Writes all of it, or says why not.
 Outcome<bool> writeToStandardOutput(const QByteArray& bytes);
+Outcome<bool> writeToStandardOutput(const NextPiece& next);
 
 /// Writes a file whole or not at all. What is there and is no regular file (a pipe, a terminal, a device) is written to, not replaced.
 Outcome<bool> writeOut(const QString& path, const QByteArray& bytes);
+Outcome<bool> writeOut(const QString& path, const NextPiece& next);
 
 /// True when both name the same existing file, by whatever way.
 bool sameFile(const QString& a, const QString& b);

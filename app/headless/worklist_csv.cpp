@@ -1,14 +1,12 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-#include "worklist.h"
+#include "worklist_csv.h"
 
 #include "figures_list.h"
 #include "in_parallel.h"
 
 #include <algorithm>
-#include <deque>
 #include <limits>
-#include <string>
-#include <string_view>
+#include <utility>
 
 namespace rungwright
 {
@@ -39,6 +37,8 @@ public:
     /// Undefined gap shares come behind every number.
     double rank() const { return m_measured.measurement.gap.gapShare.value_or(-std::numeric_limits<double>::infinity()); }
 
+    std::deque<std::string> takeTexts() { return std::move(m_texts); }
+
 private:
     static constexpr std::size_t kTextSize = 65'536;
     Measurer m_measurer;
@@ -54,8 +54,8 @@ struct Row {
 
 } // namespace
 
-std::optional<QByteArray> worklistCsv(const Currency& currency, std::size_t ladders, unsigned threads, const LadderAt& ladderAt,
-                                      const std::function<void(double)>& measured)
+std::optional<WorklistCsv> WorklistCsv::of(const Currency& currency, std::size_t ladders, unsigned threads, const LadderAt& ladderAt,
+                                           const std::function<void(double)>& measured)
 {
     std::vector<RowWriter> writers(threads);
     std::vector<Row> rows(ladders);
@@ -72,14 +72,26 @@ std::optional<QByteArray> worklistCsv(const Currency& currency, std::size_t ladd
     if (!whole)
         return std::nullopt;
     std::stable_sort(rows.begin(), rows.end(), [](const Row& a, const Row& b) { return a.rank > b.rank; });
-    QByteArray csv = csvHeadings(currency);
-    qsizetype size = csv.size();
+    WorklistCsv list;
+    list.m_headings = csvHeadings(currency);
+    for (RowWriter& writer : writers)
+        list.m_texts.push_back(writer.takeTexts());
+    list.m_rows.reserve(rows.size());
     for (const Row& row : rows)
-        size += qsizetype(row.text.size());
-    csv.reserve(size);
-    for (const Row& row : rows)
-        csv.append(row.text.data(), qsizetype(row.text.size()));
-    return csv;
+        list.m_rows.push_back(row.text);
+    return list;
+}
+
+NextPiece WorklistCsv::pieces() const
+{
+    constexpr std::size_t pieceSize = 65'536;
+    return [this, row = std::size_t(0), piece = m_headings, first = true]() mutable {
+        if (!std::exchange(first, false))
+            piece.clear();
+        for (; row < m_rows.size() && piece.size() < pieceSize; ++row)
+            piece += m_rows[row];
+        return QByteArrayView(piece.data(), qsizetype(piece.size()));
+    };
 }
 
 } // namespace rungwright
