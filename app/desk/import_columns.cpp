@@ -6,6 +6,7 @@
 #include "look.h"
 #include "questions.h"
 #include "wording.h"
+#include "words.h"
 
 #include <QComboBox>
 #include <QGridLayout>
@@ -30,6 +31,17 @@ QString exampleText(const QString& example)
 {
     const QString text = example.simplified();
     return text.size() > kLongestExample ? text.left(kLongestExample - 1) + QStringLiteral("…") : text;
+}
+
+/// The header stands in the field beside it already.
+QString whyText(const ColumnNote& note, const QString& header)
+{
+    QString why = note.note;
+    if (!header.isEmpty()) {
+        why.replace(ImportColumns::tr("the header '%1'").arg(shownText(header)), ImportColumns::tr("its header"));
+        why.replace(ImportColumns::tr("the values under '%1'").arg(shownText(header)), ImportColumns::tr("its values"));
+    }
+    return note.confidence == Confidence::guess ? ImportColumns::tr("a guess: %1").arg(why) : why;
 }
 
 QString constantHint(std::size_t column)
@@ -166,7 +178,7 @@ void ImportColumns::setMapping(const ImportMapping& mapping, const std::array<Co
         else if (i == kFloor && mapping.floorsMayBeMissing)
             choice = noFloors;
         m_rows[i].constant->setText(source.kind == ColumnSource::Kind::constant ? source.constant : QString());
-        m_rows[i].why = notes[i].note;
+        m_rows[i].why = whyText(notes[i], source.column.header);
         choose(i, choice);
         showRow(i);
     }
@@ -228,9 +240,9 @@ void ImportColumns::showRow(std::size_t at)
     }
     QString note = row.why;
     if (choice == absent && at < kColumnsNeeded)
-        note = tr("needed: choose a column");
+        note = tr("✕ needed");
     else if (choice == absent && at == static_cast<std::size_t>(Column::currency))
-        note = tr("amounts without a currency");
+        note = tr("none is said");
     row.note->setText(note);
     row.note->setToolTip(row.why);
     row.note->setForegroundRole(QPalette::PlaceholderText);

@@ -284,7 +284,10 @@ void ImportDialog::use(const ImportMapping& mapping, const Notes& notes, const Q
         m_columns->setTheirs(preview.headers, preview.rows.empty() ? QStringList() : preview.rows.front().raw);
         m_columns->setMapping(mapping, notes);
         m_skips->show(preview.headers, mapping.skip);
-        m_ui->notesLabel->setText(onScreen(remarks.join(QLatin1Char('\n'))));
+        QStringList shown;
+        for (const QString& remark : remarks)
+            shown << onScreen(remark) + (remark.endsWith(QLatin1Char('.')) ? QString() : QStringLiteral("."));
+        m_ui->notesLabel->setText(shown.join(QLatin1Char('\n')));
         m_ui->notesLabel->setVisible(!remarks.isEmpty());
     }
     showStatuses();

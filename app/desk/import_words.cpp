@@ -52,9 +52,12 @@ QString onScreen(QString text)
 {
     for (std::size_t i = 0; i < kColumnNames.size(); ++i) {
         const QString name = QString::fromUtf8(kColumnNames[i].data(), qsizetype(kColumnNames[i].size()));
-        text.replace(QStringLiteral("'%1'").arg(name), QStringLiteral("“%1”").arg(columnTitle(static_cast<Column>(i))));
+        const QString title = QStringLiteral("“%1”").arg(columnTitle(static_cast<Column>(i)));
+        text.replace(QStringLiteral("'%1'").arg(name), title);
+        if (text.startsWith(name + QLatin1Char(':')))
+            text.replace(0, name.size(), title);
     }
-    return text;
+    return text.left(1).toUpper() + text.mid(1);
 }
 
 qsizetype placeOf(const QStringList& headers, const TheirColumn& column)
