@@ -62,6 +62,8 @@ void DeskActions::buildFile()
     QMenu* menu = m_window.menuBar()->addMenu(tr("&File"));
     add(menu, QStringLiteral("openAction"), tr("&Open a scenario…"), QKeySequence::Open, [&files] { files.askOpen(); });
     add(menu, QStringLiteral("importAction"), tr("&Import a unit list…"), QKeySequence(tr("Ctrl+I")), [&files] { files.askImport(); });
+    m_needScenario << add(menu, QStringLiteral("refreshAction"), tr("Re&fresh from a new list…"), QKeySequence(tr("Ctrl+R")),
+                          [&files] { files.askRefresh(); });
     QMenu* samplesMenu = menu->addMenu(tr("Open a &sample"));
     for (const QString& path : samples()) {
         const QString name = QFileInfo(path).fileName().section(QLatin1Char('.'), 0, 0).replace(QLatin1Char('-'), QLatin1Char(' '));
@@ -106,7 +108,7 @@ void DeskActions::buildEdit()
     menu->addAction(undoAction);
     menu->addAction(redoAction);
     menu->addSeparator();
-    m_needScenario << add(menu, QStringLiteral("rulesAction"), tr("&Price rules…"), QKeySequence(tr("Ctrl+R")),
+    m_needScenario << add(menu, QStringLiteral("rulesAction"), tr("&Price rules…"), QKeySequence(tr("Ctrl+Shift+R")),
                           [this] { m_window.showRules(); });
     menu->addSeparator();
     m_needScenario << add(menu, QStringLiteral("scenarioNoteAction"), tr("Note on the &scenario…"), {},

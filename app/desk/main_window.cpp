@@ -11,21 +11,22 @@
 #include "flags_dialog.h"
 #include "help_texts.h"
 #include "picture_file.h"
-#include "questions.h"
 #include "portfolio_page.h"
+#include "questions.h"
 #include "rules_dialog.h"
 #include "sheet_dialog.h"
 #include "side_by_side_page.h"
 #include "start_page.h"
 #include "wording.h"
-#include "worklist_panel.h"
 #include "worklist_export_dialog.h"
+#include "worklist_panel.h"
 
 #include <QCloseEvent>
 #include <QCoreApplication>
 #include <QDockWidget>
 #include <QFileInfo>
 #include <QMimeData>
+#include <QProgressBar>
 #include <QScreen>
 #include <QStackedWidget>
 #include <QStatusBar>
@@ -61,6 +62,10 @@ MainWindow::MainWindow(Questions& questions, QSettings& settings, const QString&
 
     connect(m_files, &FileFlow::opened, this, &MainWindow::onOpened);
     connect(m_files, &FileFlow::told, this, &MainWindow::tell);
+    connect(&m_files->saving(), &SaveFlow::writingChanged, this, [this](bool writing) {
+        m_savingBar->setVisible(writing);
+        showSaveState();
+    });
     connect(m_files, &FileFlow::recentChanged, this, [this] { m_start->setRecent(m_files->recent().list()); });
     connect(&m_bench, &Workbench::told, this, &MainWindow::tell);
     connect(&m_bench, &Workbench::reset, this, &MainWindow::showModelInUse);
@@ -94,15 +99,15 @@ void MainWindow::buildPages()
     m_sideBySide->setObjectName(QStringLiteral("sideBySidePage"));
     m_pages->addTab(m_benchPage, tr("Bench"));
     m_pages->addTab(m_sideBySide, tr("Side by side"));
+    m_portfolio = new PortfolioPage(m_tiers, m_bench, m_questions);
+    m_portfolio->setObjectName(QStringLiteral("portfolioPage"));
+    m_pages->addTab(m_portfolio, tr("Portfolio"));
     m_stack = new QStackedWidget;
     m_stack->addWidget(m_start);
     m_stack->addWidget(m_pages);
     setCentralWidget(m_stack);
 
     // Side by side has a table of the same figures for every ladder and needs the room.
-    m_portfolio = new PortfolioPage(m_tiers, m_bench, m_questions);
-    m_portfolio->setObjectName(QStringLiteral("portfolioPage"));
-    m_pages->addTab(m_portfolio, tr("Portfolio"));
     connect(m_pages, &QTabWidget::currentChanged, this, [this] {
         const bool beside = m_pages->currentWidget() == m_sideBySide;
         m_figuresDock->setVisible(!beside && m_figuresWanted);
@@ -114,6 +119,12 @@ void MainWindow::buildPages()
     connect(m_start, &StartPage::recentWanted, m_files, &FileFlow::open);
     connect(&m_benchPage->candidates(), &CandidatesPanel::sheetWanted, this, &MainWindow::showSheet);
     connect(m_sideBySide, &SideBySidePage::chosen, this, &MainWindow::showSheet);
+    connect(m_portfolio, &PortfolioPage::told, this, &MainWindow::tell);
+    connect(m_portfolio, &PortfolioPage::thresholdsWanted, this, &MainWindow::showThresholds);
+    connect(m_portfolio, &PortfolioPage::tierChosen, this, [this](int tier) {
+        m_bench.showTier(tier, m_document.tier(tier)->chosen.value_or(-1));
+        showBench();
+    });
 }
 
 void MainWindow::buildDocks()
@@ -126,12 +137,6 @@ void MainWindow::buildDocks()
             showWorst();
     });
     m_worklistDock = new QDockWidget(tr("Worklist"), this);
-    connect(m_portfolio, &PortfolioPage::told, this, &MainWindow::tell);
-    connect(m_portfolio, &PortfolioPage::thresholdsWanted, this, &MainWindow::showThresholds);
-    connect(m_portfolio, &PortfolioPage::tierChosen, this, [this](int tier) {
-        m_bench.showTier(tier, m_document.tier(tier)->chosen.value_or(-1));
-        showBench();
-    });
     m_worklistDock->setObjectName(QStringLiteral("worklistDock"));
     m_worklistDock->setWidget(m_worklist);
     addDockWidget(Qt::LeftDockWidgetArea, m_worklistDock);
@@ -157,12 +162,20 @@ void MainWindow::buildStatus()
     m_modelInUse = new QLabel;
     m_modelInUse->setObjectName(QStringLiteral("modelInUse"));
     m_modelInUse->setAccessibleName(tr("Availability model in use"));
+    m_savingBar = new QProgressBar;
+    m_savingBar->setObjectName(QStringLiteral("savingBar"));
+    m_savingBar->setAccessibleName(tr("Saving"));
+    m_savingBar->setRange(0, 0); // how much is left is not known
+    m_savingBar->setTextVisible(false);
+    m_savingBar->setFixedSize(96, 12);
     for (QLabel* label : {m_lastAction, m_saveState, m_modelInUse})
         label->setContentsMargins(8, 0, 8, 0);
     statusBar()->setSizeGripEnabled(false);
     statusBar()->addWidget(m_lastAction, 1);
     statusBar()->addPermanentWidget(m_modelInUse);
+    statusBar()->addPermanentWidget(m_savingBar);
     statusBar()->addPermanentWidget(m_saveState);
+    m_savingBar->hide();
 }
 
 void MainWindow::onOpened()
@@ -175,6 +188,13 @@ void MainWindow::onOpened()
     showWorst();
     tell(tr("%1 opened.").arg(m_document.displayName()));
     showSaveState();
+}
+
+void MainWindow::showWorst()
+{
+    const int worst = m_tiers.worstTier();
+    if (worst >= 0)
+        m_bench.showTier(worst, m_document.tier(worst)->chosen.value_or(-1));
 }
 
 void MainWindow::tell(const QString& sentence)
@@ -191,13 +211,8 @@ void MainWindow::showSaveState()
         setWindowModified(m_document.modified());
     if (empty)
         m_saveState->clear();
-void MainWindow::showWorst()
-{
-    const int worst = m_tiers.worstTier();
-    if (worst >= 0)
-        m_bench.showTier(worst, m_document.tier(worst)->chosen.value_or(-1));
-}
-
+    else if (m_files->saving().writing())
+        m_saveState->setText(tr("saving …"));
     else if (m_document.modified())
         m_saveState->setText(tr("not saved"));
     else
@@ -289,6 +304,26 @@ void MainWindow::showBench() { m_pages->setCurrentWidget(m_benchPage); }
 
 void MainWindow::showSideBySide() { m_pages->setCurrentWidget(m_sideBySide); }
 
+void MainWindow::showPortfolio() { m_pages->setCurrentWidget(m_portfolio); }
+
+void MainWindow::showThresholds()
+{
+    if (m_document.empty())
+        return;
+    auto* dialog = new FlagsDialog(m_tiers, this);
+    dialog->setAttribute(Qt::WA_DeleteOnClose);
+    connect(dialog, &QDialog::accepted, this, [this, dialog] { m_document.setFlagThresholds(dialog->thresholds()); });
+    dialog->open();
+}
+
+void MainWindow::showWorklistExport()
+{
+    auto* dialog = new WorklistExportDialog(m_tiers, m_worklist->model().arrangement().tiers, m_questions, this);
+    dialog->setAttribute(Qt::WA_DeleteOnClose);
+    connect(dialog, &WorklistExportDialog::told, this, &MainWindow::tell);
+    dialog->open();
+}
+
 // Window -------------------------------------------------------------------------------------------------------------
 
 void MainWindow::resetLayout()
@@ -313,26 +348,6 @@ void MainWindow::restoreLayout()
         resetLayout();
     }
     m_worklistWanted = m_settings.value(kWorklistWanted, true).toBool();
-void MainWindow::showPortfolio() { m_pages->setCurrentWidget(m_portfolio); }
-
-void MainWindow::showThresholds()
-{
-    if (m_document.empty())
-        return;
-    auto* dialog = new FlagsDialog(m_tiers, this);
-    dialog->setAttribute(Qt::WA_DeleteOnClose);
-    connect(dialog, &QDialog::accepted, this, [this, dialog] { m_document.setFlagThresholds(dialog->thresholds()); });
-    dialog->open();
-}
-
-void MainWindow::showWorklistExport()
-{
-    auto* dialog = new WorklistExportDialog(m_tiers, m_worklist->model().arrangement().tiers, m_questions, this);
-    dialog->setAttribute(Qt::WA_DeleteOnClose);
-    connect(dialog, &WorklistExportDialog::told, this, &MainWindow::tell);
-    dialog->open();
-}
-
     m_figuresWanted = m_settings.value(kFiguresWanted, true).toBool();
     // Nothing is open yet: the start page has the window to itself.
     m_worklistDock->hide();

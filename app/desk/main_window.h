@@ -11,6 +11,7 @@
 #include <QSettings>
 
 class QDockWidget;
+class QProgressBar;
 class QStackedWidget;
 class QTabWidget;
 
@@ -22,8 +23,8 @@ class BenchPage;
 class DeskActions;
 class FiguresPanel;
 class Questions;
-class SideBySidePage;
 class PortfolioPage;
+class SideBySidePage;
 class StartPage;
 class WorklistPanel;
 
@@ -37,8 +38,8 @@ public:
 
     Document& document() { return m_document; }
     Workbench& bench() { return m_bench; }
-    FileFlow& files() { return *m_files; }
     Worklist& tiers() { return m_tiers; }
+    FileFlow& files() { return *m_files; }
     void openFile(const QString& path) { m_files->open(path); }
 
     // What the actions call.
@@ -52,11 +53,11 @@ public:
     void resetLayout();
     void showBench();
     void showSideBySide();
-    WorklistPanel& worklist() { return *m_worklist; }
-    BenchPage& benchPage() { return *m_benchPage; }
     void showPortfolio();
     void showThresholds();
     void showWorklistExport();
+    WorklistPanel& worklist() { return *m_worklist; }
+    BenchPage& benchPage() { return *m_benchPage; }
     QDockWidget& worklistDock() { return *m_worklistDock; }
     QDockWidget& figuresDock() { return *m_figuresDock; }
 
@@ -70,35 +71,36 @@ private:
     void buildPages();
     void buildStatus();
     void onOpened();
+    void showWorst();
     void showSaveState();
     void showModelInUse();
-    void showWorst();
     void tell(const QString& sentence);
     void restoreLayout();
 
     Questions& m_questions;
     QSettings& m_settings;
     Document m_document;
+    Worklist m_tiers; ///< Before whatever else listens to the document.
     Workbench m_bench;
     FileFlow* m_files = nullptr;
-    Worklist m_tiers; ///< Before whatever else listens to the document.
     QStackedWidget* m_stack = nullptr;
     QTabWidget* m_pages = nullptr;
     StartPage* m_start = nullptr;
     BenchPage* m_benchPage = nullptr;
     SideBySidePage* m_sideBySide = nullptr;
+    PortfolioPage* m_portfolio = nullptr;
     WorklistPanel* m_worklist = nullptr;
     FiguresPanel* m_figures = nullptr;
-    PortfolioPage* m_portfolio = nullptr;
     QDockWidget* m_worklistDock = nullptr;
     QDockWidget* m_figuresDock = nullptr;
     DeskActions* m_actions = nullptr;
     int m_undoIndex = 0;
+    bool m_worstWanted = false; ///< The worst tier goes onto the bench as soon as it is known.
     bool m_worklistWanted = true;
     bool m_figuresWanted = true; ///< Whether the Figures stand beside the bench, which shows them.
-    bool m_worstWanted = false; ///< The worst tier goes onto the bench as soon as it is known.
     QLabel* m_lastAction = nullptr;
     QLabel* m_saveState = nullptr;
+    QProgressBar* m_savingBar = nullptr; ///< Seen while a scenario is being written.
     QLabel* m_modelInUse = nullptr;
 };
 
