@@ -10,6 +10,7 @@
 #include "whole_file.h"
 
 #include <QFile>
+#include <QFileInfo>
 
 namespace rungwright
 {
@@ -69,7 +70,8 @@ Outcome<Scenario> fromMappedList(const Request& request)
         return Trouble{profile.trouble()};
     QFile file(request.file);
     constexpr qint64 enoughToTell = 8192;
-    if (file.open(QIODevice::ReadOnly) && !file.isSequential() && looksLikeScenario(file.peek(enoughToTell), request.file))
+    // A pipe is opened once only, by who reads it.
+    if (QFileInfo(request.file).isFile() && file.open(QIODevice::ReadOnly) && looksLikeScenario(file.peek(enoughToTell), request.file))
         return trouble(
             QStringLiteral("%1: is a scenario, which is read as it is; --mapping is for a list of another system").arg(request.file));
     file.close();
