@@ -1,0 +1,177 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include "refresh_dialog.h"
+
+#include "file_names.h"
+#include "plot_words.h"
+#include "questions.h"
+#include "table_text.h"
+#include "ui_refresh_dialog.h"
+#include "whole_file.h"
+#include "wording.h"
+#include "words.h"
+
+#include <QAccessible>
+#include <QEvent>
+#include <QFileInfo>
+#include <QHeaderView>
+
+namespace rungwright
+{
+
+RefreshDialog::RefreshDialog(const RefreshPlan& plan, const Currency& currency, const QString& listName, QWidget* parent,
+                             Questions* questions) :
+    QDialog(parent),
+    m_ownQuestions(questions ? nullptr : std::make_unique<Questions>()),
+    m_questions(questions ? questions : m_ownQuestions.get()),
+    m_listName(QFileInfo(listName).fileName()),
+    m_table(plan, currency),
+    m_topics(refreshTopics(plan, currency)),
+    m_ui(std::make_unique<Ui::RefreshDialog>())
+{
+    m_ui->setupUi(this);
+    m_ui->titleLabel->setText(tr("Refresh from %1").arg(isolated(shownText(m_listName))));
+    m_ui->titleLabel->setToolTip(listName);
+    showSummary(plan);
+    m_ui->resultLabel->hide();
+
+    QTableView* table = m_ui->linesTable;
+    table->setModel(&m_table);
+    table->horizontalHeader()->setHighlightSections(false);
+    table->horizontalHeader()->setResizeContentsPrecision(200); // of a hundred thousand lines the first tell how wide they are
+    makeCopyable(*table);
+    dress();
+    fillTopics();
+
+    connect(m_ui->topicsList, &QListWidget::currentRowChanged, this, &RefreshDialog::showTopic);
+    connect(m_ui->copyButton, &QPushButton::clicked, this, [this] {
+        const int rows = copyTable(*m_ui->linesTable, CopyPart::everything);
+        showResult(rows == 1 ? tr("1 row copied.") : tr("%1 rows copied.").arg(numberText(rows, 0)));
+    });
+    connect(m_ui->saveButton, &QPushButton::clicked, this, &RefreshDialog::save);
+    connect(m_ui->refreshButton, &QPushButton::clicked, this, &QDialog::accept);
+    connect(m_ui->leaveButton, &QPushButton::clicked, this, &QDialog::reject);
+
+    const bool anything = !m_topics.empty();
+    for (QWidget* widget : std::initializer_list<QWidget*>{m_ui->topicsList, table, m_ui->copyButton, m_ui->saveButton, m_ui->keptLabel})
+        widget->setVisible(anything);
+    // With nothing to take there is nothing to refresh; marks of the week before are reason enough.
+    const bool useful = !plan.changesNothing() || plan.seenCleared > 0;
+    m_ui->refreshButton->setEnabled(useful);
+    (useful ? m_ui->refreshButton : m_ui->leaveButton)->setDefault(true);
+    if (anything) {
+        m_ui->topicsList->setCurrentRow(1); // the first is a heading
+        m_ui->topicsList->setFocus();
+    } else {
+        adjustSize();
+        m_ui->leaveButton->setFocus();
+    }
+}
+
+RefreshDialog::~RefreshDialog() = default;
+
+void RefreshDialog::showSummary(const RefreshPlan& plan)
+{
+    const auto show = [](QLabel* label, const QString& sentence) {
+        label->setText(sentence);
+        label->setVisible(!sentence.isEmpty());
+    };
+    show(m_ui->sentenceLabel, refreshSentence(plan));
+    show(m_ui->candidatesLabel, candidatesSentence(plan));
+    show(m_ui->signedLabel, signedSentence(plan.signedTiers));
+}
+
+void RefreshDialog::fillTopics()
+{
+    QFont strong = font();
+    strong.setWeight(QFont::DemiBold);
+    for (const RefreshTopic& topic : m_topics) {
+        auto* item = new QListWidgetItem(topic.text, m_ui->topicsList);
+        if (topic.what == RefreshTopic::What::heading) {
+            item->setFlags(Qt::NoItemFlags);
+            item->setFont(strong);
+            item->setForeground(palette().color(QPalette::PlaceholderText));
+        } else {
+            item->setFlags(Qt::ItemIsEnabled | Qt::ItemIsSelectable);
+        }
+    }
+    // As wide as its longest line: what is counted there is never cut.
+    int width = 0;
+    for (int row = 0; row < m_ui->topicsList->count(); ++row)
+        width = qMax(width, m_ui->topicsList->sizeHintForIndex(m_ui->topicsList->model()->index(row, 0)).width());
+    m_ui->topicsList->setFixedWidth(qMin(width + 32, 380));
+}
+
+void RefreshDialog::showTopic(int row)
+{
+    if (row < 0)
+        return;
+    const RefreshTopic& topic = m_topics[static_cast<std::size_t>(row)];
+    if (topic.what == RefreshTopic::What::heading)
+        return;
+    m_table.show(topic);
+    m_ui->linesTable->setAccessibleName(topic.text);
+    m_ui->linesTable->scrollToTop();
+    fitColumns();
+    const auto counted = [](std::int64_t count) { return numberText(static_cast<double>(count), 0); };
+    m_ui->keptLabel->setText(
+        topic.kept < topic.count
+            ? tr("%1 of %2 lines shown: the first %3 of each kind. All are counted, and all are taken.")
+                  .arg(counted(topic.kept), counted(topic.count), counted(static_cast<std::int64_t>(kRefreshLinesKept)))
+            : QString());
+}
+
+void RefreshDialog::fitColumns()
+{
+    QTableView* table = m_ui->linesTable;
+    QHeaderView* header = table->horizontalHeader();
+    header->setStretchLastSection(false);
+    table->resizeColumnsToContents();
+    const int most = fontMetrics().averageCharWidth() * 30;
+    int room = table->viewport()->width();
+    for (int column = 0; column < m_table.columnCount(); ++column) {
+        header->resizeSection(column, qMin(header->sectionSize(column) + 16, most));
+        room -= header->sectionSize(column);
+    }
+    // What is over goes evenly to all columns, so that figures stay near the names they belong to.
+    for (int column = 0; room > 0 && column < m_table.columnCount(); ++column)
+        header->resizeSection(column, header->sectionSize(column) + room / m_table.columnCount());
+}
+
+void RefreshDialog::dress()
+{
+    QFont title = font();
+    title.setPointSizeF(title.pointSizeF() * 1.4);
+    title.setWeight(QFont::DemiBold);
+    m_ui->titleLabel->setFont(title);
+    m_ui->linesTable->verticalHeader()->setDefaultSectionSize(fontMetrics().height() + 8);
+}
+
+void RefreshDialog::changeEvent(QEvent* event)
+{
+    QDialog::changeEvent(event);
+    if (event->type() == QEvent::FontChange)
+        dress();
+}
+
+void RefreshDialog::save()
+{
+    const int row = m_ui->topicsList->currentRow();
+    const QString topic = row < 0 ? QString() : m_topics[static_cast<std::size_t>(row)].text;
+    const QString suggestion = fileNameFrom({QFileInfo(m_listName).completeBaseName(), tr("refresh"), topic}, QStringLiteral("csv"));
+    const QString path = m_questions->savePath(this, tr("Save the table"), suggestion, tr("Comma-separated table (*.csv)"));
+    if (path.isEmpty())
+        return;
+    const QString target = withSuffix(path, QStringLiteral("csv"));
+    const Outcome<bool> written = writeWhole(target, m_table.csv());
+    showResult(written.ok() ? tr("✓ Table saved: %1").arg(target) : tr("⚠ Not saved: %1").arg(QString::fromStdString(written.trouble())));
+}
+
+void RefreshDialog::showResult(const QString& sentence)
+{
+    m_ui->resultLabel->setText(sentence);
+    m_ui->resultLabel->show();
+    QAccessibleEvent alert(m_ui->resultLabel, QAccessible::Alert);
+    QAccessible::updateAccessibility(&alert);
+}
+
+} // namespace rungwright
