@@ -90,7 +90,8 @@ struct LeastChangeAnswer {
     double mu = 0, lambda = 0;           ///< The multipliers of total and expected cheapest.
 };
 
-/// Keeps its storage: solving again with as many units allocates nothing (a slider under the hand).
+/// Keeps its storage: solving again with as many units allocates nothing (a slider under the hand), but for the order of grades, the fitted
+/// range and the explanation of an obstacle.
 ///
 /// Minimises sum weight_i (x_i - today_i)^2 over ladders in the order kept, within every unit's room (roomOf()), with the total as wished
 /// and the target met. Changes count from Unit::asking; other candidates play no part.

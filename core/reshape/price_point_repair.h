@@ -89,6 +89,7 @@ private:
 
     void fillHeaps();
     void offer(std::size_t i);
+    static void putBack(Heap& heap, const Step& step);
     bool takeBest(Heap& heap, Step& step);
     void move(std::size_t i, std::int64_t to);
     void meetTotal();
