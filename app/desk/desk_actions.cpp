@@ -111,6 +111,8 @@ void DeskActions::buildEdit()
     m_needScenario << add(menu, QStringLiteral("rulesAction"), tr("&Price rules…"), QKeySequence(tr("Ctrl+Shift+R")),
                           [this] { m_window.showRules(); });
     menu->addSeparator();
+    m_needScenario << add(menu, QStringLiteral("tierFloorAction"), tr("&Advertised floor of the tier…"), {},
+                          [this] { m_window.editTierFloor(); });
     m_needScenario << add(menu, QStringLiteral("scenarioNoteAction"), tr("Note on the &scenario…"), {},
                           [this] { m_window.editScenarioNote(); });
 }

@@ -9,6 +9,7 @@
 #include "figures_panel.h"
 #include "file_names.h"
 #include "flags_dialog.h"
+#include "floor_question.h"
 #include "help_texts.h"
 #include "picture_file.h"
 #include "portfolio_page.h"
@@ -244,6 +245,8 @@ void MainWindow::showSheet(int candidate)
     auto* dialog = new SheetDialog(m_document, m_bench.tier(), candidate, m_questions, this);
     dialog->setAttribute(Qt::WA_DeleteOnClose);
     connect(dialog, &SheetDialog::told, this, &MainWindow::tell);
+    connect(dialog, &SheetDialog::leftTheTool, this,
+            [this, dialog, tier = m_bench.tier()] { m_document.recordSignedSheet(tier, dialog->handedOver()); });
     dialog->open();
 }
 
@@ -284,6 +287,12 @@ void MainWindow::editTierNote()
                                               QString::fromStdString(tc->note));
     if (!note.isNull())
         m_document.setTierNote(m_bench.tier(), note);
+}
+
+void MainWindow::editTierFloor()
+{
+    if (m_bench.tierCase())
+        askFloor(m_document, m_bench.tier(), m_questions, this);
 }
 
 void MainWindow::editScenarioNote()

@@ -47,6 +47,7 @@ public:
     void showRules();
     void savePicture();
     void editTierNote();
+    void editTierFloor();
     void editScenarioNote();
     void showKeys();
     void showAbout();

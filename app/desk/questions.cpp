@@ -54,7 +54,7 @@ QString Questions::text(QWidget* parent, const QString& title, const QString& la
 {
     bool ok = false;
     const QString answer = QInputDialog::getText(parent, title, label, QLineEdit::Normal, start, &ok);
-    return ok ? answer : QString();
+    return !ok ? QString() : answer.isNull() ? QStringLiteral("") : answer; // an empty answer is one
 }
 
 QString Questions::longText(QWidget* parent, const QString& title, const QString& label, const QString& start)

@@ -14,6 +14,7 @@
 #include "words.h"
 
 #include <QAccessible>
+#include <QDateTime>
 #include <QEvent>
 #include <QHeaderView>
 
@@ -26,6 +27,16 @@ namespace
 QString nameOf(const TierCase& tierCase, int candidate)
 {
     return candidate < 0 ? QString() : QString::fromStdString(tierCase.candidates[static_cast<std::size_t>(candidate)].name);
+}
+
+/// What the sheet changes, in unit order.
+SignedSheet signedSheet(const TierCase& tierCase, int candidate)
+{
+    SignedSheet sheet;
+    sheet.candidate = candidate < 0 ? std::string(kCurrentName) : tierCase.candidates[static_cast<std::size_t>(candidate)].name;
+    for (const PriceChange& change : priceChanges(askingPrices(tierCase.tier.units), pricesOf(tierCase, candidate)))
+        sheet.prices.push_back({tierCase.tier.units[change.unit].name, change.before, change.after});
+    return sheet;
 }
 
 /// A name as a title can bear it.
@@ -47,6 +58,7 @@ SheetDialog::SheetDialog(const Document& document, int tier, int candidate, Ques
     m_currency(document.scenario().currency),
     m_rules(document.scenario().rules),
     m_rows(sheetRows(document.scenario(), *document.tier(tier), candidate)),
+    m_signed(signedSheet(*document.tier(tier), candidate)),
     m_model(m_rows, m_currency),
     m_filter(m_model),
     m_ui(std::make_unique<Ui::SheetDialog>())
@@ -166,6 +178,10 @@ void SheetDialog::save()
     const QString agree = m_rows.size() == 1 ? tr("1 row agrees") : tr("%1 rows agree").arg(numberText(rows, 0));
     showResult(tr("Written and read back: %1. %2").arg(agree, target), true);
     emit saved(target);
+    if (m_signed.whenUtc.empty()) {
+        m_signed.whenUtc = QDateTime::currentDateTimeUtc().toString(Qt::ISODate).toStdString();
+        emit leftTheTool();
+    }
 }
 
 void SheetDialog::showResult(const QString& sentence, bool good)

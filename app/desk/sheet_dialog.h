@@ -29,7 +29,12 @@ public:
     SheetDialog(const Document& document, int tier, int candidate, Questions& questions, QWidget* parent = nullptr);
     ~SheetDialog() override;
 
+    /// What was handed over, once it was: for Document::recordSignedSheet().
+    const SignedSheet& handedOver() const { return m_signed; }
+
 signals:
+    /// The sheet has left for the first time; once more, to another file, says nothing new.
+    void leftTheTool();
     /// Written, read again and found equal.
     void saved(const QString& path);
     /// The same, or why not, in one sentence for the status bar.
@@ -49,6 +54,7 @@ private:
     Currency m_currency;
     PriceRules m_rules;
     std::vector<SheetRow> m_rows; ///< In the order of the file.
+    SignedSheet m_signed;         ///< Without a time until it is handed over.
     QString m_suggestion;
     SheetModel m_model;
     SheetFilter m_filter;
