@@ -11,6 +11,7 @@
 #include "worklist_csv.h"
 
 #include <QFile>
+#include <QFileInfo>
 
 namespace rungwright
 {
@@ -29,7 +30,8 @@ std::optional<Scanned> scanPlainList(const Request& request, unsigned threads, T
 {
     constexpr qint64 enoughToTell = 8192;
     QFile file(request.file);
-    if (!request.mapping.isEmpty() || !file.open(QIODevice::ReadOnly) || file.isSequential() ||
+    // A pipe is opened once only, by who reads it.
+    if (!request.mapping.isEmpty() || !QFileInfo(request.file).isFile() || !file.open(QIODevice::ReadOnly) ||
         looksLikeScenario(file.peek(enoughToTell), request.file))
         return std::nullopt;
     FastUnitList list;

@@ -65,6 +65,18 @@ private slots:
         }
     }
 
+    // A pipe can be read once only.
+    void sameBytesOutOfAPipe()
+    {
+        const Ran named =
+            runInShell(QStringLiteral("mkfifo \"$2\" && { cat \"$1\" >\"$2\" & } && timeout 60 \"$0\" scan \"$2\""), {m_list, at("pipe")});
+        QCOMPARE(named.message, QByteArray());
+        QCOMPARE(named.out, m_wanted);
+        const Ran substituted = runInShell(QStringLiteral("timeout 60 \"$0\" scan <(cat \"$1\")"), {m_list});
+        QCOMPARE(substituted.message, QByteArray());
+        QCOMPARE(substituted.out, m_wanted);
+    }
+
     void worstFirst()
     {
         const QList<QByteArray> lines = m_wanted.split('\n');
