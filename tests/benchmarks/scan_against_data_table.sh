@@ -2,7 +2,7 @@
 # SPDX-License-Identifier: GPL-3.0-or-later
 # The worklist of an invented list of 1,000,000 units in 20,000 tiers by `rungwright scan` and by R's data.table, both with two threads,
 # taking turns on a file that is in memory. First the two must agree in every tier; then medians of five are printed as lines of JSON, and
-# what scan costs a unit at 10,000, 100,000 and 1,000,000 units. Ends with status 1 when scan needs more than half of R's time or more
+# what scan costs a unit at 10,000, 100,000 and 1,000,000 units (scan_speed). Ends with status 1 when scan needs more than half of R's time or more
 # than a third of R's memory. R's time is its stricter one: without the start of R and of the package, while scan's has its own start.
 # usage: bash tests/benchmarks/scan_against_data_table.sh [ROUNDS]      (builds the preset "swift" first, or takes the build in the folder
 #                                                                       that RUNGWRIGHT_BUILD names)
@@ -22,10 +22,8 @@ work=$(mktemp -d)
 trap 'rm -rf "$work"' EXIT
 cd "$work"
 
-for units in 500 10000 100000 1000000; do
-    "$build/tests/benchmarks/scan_speed" write "list$units.csv" "$units"
-    cat "list$units.csv" >/dev/null
-done
+"$build/tests/benchmarks/scan_speed" write list.csv 1000000
+cat list.csv >/dev/null
 
 # timed FILE OUT COMMAND...: appends "wall user sys KB" to FILE; what the command writes goes to OUT.
 timed() {
@@ -37,18 +35,10 @@ timed() {
     echo "$((${ended/[.,]/} - ${began/[.,]/})) $(cat spent)" >>"$into"
 }
 for ((round = 0; round < rounds; ++round)); do
-    timed scan1000000.times scan.csv "$build/app/rungwright" scan list1000000.csv --threads 2
-    timed r.times inner Rscript "$here/scan_against_data_table.R" list1000000.csv r.csv
+    timed scan.times scan.csv "$build/app/rungwright" scan list.csv --threads 2
+    timed r.times inner Rscript "$here/scan_against_data_table.R" list.csv r.csv
     cat inner >>r.inner
 done
 Rscript "$here/scan_compared.R" scan.csv r.csv 20000
-for units in 10000 100000; do
-    for ((round = 0; round < rounds; ++round)); do
-        timed "scan$units.times" small.csv "$build/app/rungwright" scan "list$units.csv" --threads 2
-    done
-done
-# What one unit more costs, the program's start left out.
-for ((round = 0; round < rounds; ++round)); do
-    timed start.times small.csv "$build/app/rungwright" scan list500.csv --threads 2
-done
+"$build/tests/benchmarks/scan_speed"
 Rscript "$here/scan_summary.R"

@@ -6,8 +6,7 @@ times <- function(file) {
     t
 }
 spread <- function(x) sprintf('{"median": %.3f, "least": %.3f, "greatest": %.3f}', median(x), min(x), max(x))
-scan <- times("scan1000000.times")
-start <- times("start.times")
+scan <- times("scan.times")
 r <- times("r.times")
 inner <- read.table("r.inner")[[1]]
 cat(sprintf('{"benchmark": "scan_against_data_table", "units": 1000000, "threads": 2, "rounds": %d,\n "scan": {"wall_s": %s, "cpu_s": %s, "peak_mb": %.1f},\n',
@@ -18,12 +17,6 @@ stricter <- min(median(r$wall), median(inner))
 time <- median(scan$wall) / stricter
 memory <- median(scan$kb) / median(r$kb)
 cat(sprintf(' "time_ratio": %.3f, "time_ratio_with_start": %.3f, "memory_ratio": %.3f}\n', time, median(scan$wall) / median(r$wall), memory))
-for (units in c(10000, 100000, 1000000)) {
-    t <- times(sprintf("scan%d.times", units))
-    wall <- median(t$wall) - median(start$wall)
-    cat(sprintf('{"benchmark": "scan_cost", "units": %d, "wall_ms": %.1f, "wall_ns_per_unit_without_start": %.0f}\n', units,
-                1000 * median(t$wall), 1e9 * wall / units))
-}
 if (time > 0.5 || memory > 1 / 3) {
     cat("scan needs more than half of the time or a third of the memory\n", file = stderr())
     quit(status = 1)
