@@ -84,8 +84,12 @@ void RefreshDialog::fillTopics()
 {
     QFont strong = font();
     strong.setWeight(QFont::DemiBold);
+    const int line = fontMetrics().height() + 6;
     for (const RefreshTopic& topic : m_topics) {
+        const bool laterHeading = topic.what == RefreshTopic::What::heading && m_ui->topicsList->count() > 0;
         auto* item = new QListWidgetItem(topic.text, m_ui->topicsList);
+        item->setSizeHint({fontMetrics().horizontalAdvance(topic.text), laterHeading ? line + 12 : line});
+        item->setTextAlignment(Qt::AlignLeft | (laterHeading ? Qt::AlignBottom : Qt::AlignVCenter));
         if (topic.what == RefreshTopic::What::heading) {
             item->setFlags(Qt::NoItemFlags);
             item->setFont(strong);
@@ -94,11 +98,11 @@ void RefreshDialog::fillTopics()
             item->setFlags(Qt::ItemIsEnabled | Qt::ItemIsSelectable);
         }
     }
-    // As wide as its longest line: what is counted there is never cut.
+    // As wide as its longest line: what is counted there is not cut, and headings are bold.
     int width = 0;
-    for (int row = 0; row < m_ui->topicsList->count(); ++row)
-        width = qMax(width, m_ui->topicsList->sizeHintForIndex(m_ui->topicsList->model()->index(row, 0)).width());
-    m_ui->topicsList->setFixedWidth(qMin(width + 32, 380));
+    for (const RefreshTopic& topic : m_topics)
+        width = qMax(width, QFontMetrics(strong).horizontalAdvance(topic.text));
+    m_ui->topicsList->setFixedWidth(qMin(width + 40, 400));
 }
 
 void RefreshDialog::showTopic(int row)
@@ -118,6 +122,7 @@ void RefreshDialog::showTopic(int row)
             ? tr("%1 of %2 lines shown: the first %3 of each kind. All are counted, and all are taken.")
                   .arg(counted(topic.kept), counted(topic.count), counted(static_cast<std::int64_t>(kRefreshLinesKept)))
             : QString());
+    m_ui->keptLabel->setVisible(topic.kept < topic.count);
 }
 
 void RefreshDialog::fitColumns()

@@ -35,7 +35,7 @@ std::vector<RefreshTopic> refreshTopics(const RefreshPlan& plan, const Currency&
     std::vector<RefreshTopic> topics;
     const auto tr = [](const char* text) { return RefreshTable::tr(text); };
     if (!plan.changesNothing()) {
-        RefreshTopic all{What::changes, -1, tr("All changes"), 0, 0};
+        RefreshTopic all{What::changes, -1, QString(), 0, 0};
         topics.push_back({What::heading, -1, tr("What the list changes"), 0, 0});
         const std::size_t first = topics.size();
         for (std::size_t k = 0; k < kRefreshKinds; ++k) {
@@ -46,6 +46,8 @@ std::vector<RefreshTopic> refreshTopics(const RefreshPlan& plan, const Currency&
                 topics.push_back({What::changes, static_cast<int>(k), refreshCountText(plan, static_cast<RefreshKind>(k), currency),
                                   plan.counts[k], kept});
         }
+        all.text = all.count == 1 ? RefreshTable::tr("The one change")
+                                  : RefreshTable::tr("All %1 changes").arg(numberText(static_cast<double>(all.count), 0));
         topics.insert(topics.begin() + static_cast<std::ptrdiff_t>(first), all);
     }
     if (!plan.candidates.empty()) {
