@@ -20,7 +20,12 @@ namespace
 class Pieces
 {
 public:
-    Pieces(QIODevice& device, std::size_t size) : m_device(device), m_size(std::clamp<std::size_t>(size, 1, kLongestCell / 2)) {}
+    Pieces(QIODevice& device, std::size_t size) : m_device(device), m_size(std::clamp<std::size_t>(size, 1, kLongestCell / 2))
+    {
+        // A small list needs no great buffer.
+        if (!device.isSequential())
+            m_size = std::min(m_size, static_cast<std::size_t>(std::max<qint64>(1, device.size() - device.pos())));
+    }
 
     /// The next piece, with kPadding zeros behind it. False when the device fails, or when a record is longer than fast ways are for.
     bool read(std::vector<char>& buffer, std::size_t& length)
