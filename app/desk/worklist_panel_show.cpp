@@ -154,7 +154,7 @@ void WorklistPanel::fitColumns()
         return;
     QHeaderView* header = m_ui->worklistTable->horizontalHeader();
     const auto needs = [&](std::initializer_list<int> columns) {
-        int room = fontMetrics().averageCharWidth() * (m_model.wish().grouped ? 19 : 16); // of the tier's name
+        int room = fontMetrics().averageCharWidth() * (m_model.wish().grouped ? 23 : 20); // of the tier's name and its marks
         for (const int column : columns)
             room += m_columnWidths[static_cast<std::size_t>(column)];
         return room;
