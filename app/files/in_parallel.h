@@ -5,6 +5,7 @@
 #include <algorithm>
 #include <atomic>
 #include <cstddef>
+#include <system_error>
 #include <thread>
 #include <vector>
 
@@ -12,7 +13,11 @@ namespace rungwright
 {
 
 /// As many threads as the machine gives this process, unless told; at least one.
-inline unsigned threadsFor(unsigned asked) { return std::max(1U, asked > 0 ? asked : std::thread::hardware_concurrency()); }
+inline unsigned threadsFor(unsigned asked)
+{
+    constexpr unsigned most = 64; // Each has buffers of its own.
+    return std::clamp(asked > 0 ? asked : std::thread::hardware_concurrency(), 1U, most);
+}
 
 /// Calls `work(i, thread)` once for every i below `count`, in no order, and returns when all are done; `thread` is below `threads`. The
 /// calling thread is thread 0 and takes its share. Work that returns false ends everything early, and false is returned.
@@ -32,8 +37,12 @@ bool inParallel(std::size_t count, unsigned threads, Work work)
     };
     std::vector<std::jthread> others;
     const std::size_t useful = std::min<std::size_t>(threads, (count + slice - 1) / slice);
-    for (unsigned thread = 1; thread < useful; ++thread)
-        others.emplace_back(run, thread);
+    try {
+        for (unsigned thread = 1; thread < useful; ++thread)
+            others.emplace_back(run, thread);
+    } catch (const std::system_error&) {
+        // The machine gives no more: those there are do it.
+    }
     run(0);
     others.clear();
     return goOn;

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "piece_readers.h"
 
+#include <system_error>
 namespace rungwright
 {
 
@@ -21,6 +22,15 @@ PieceReaders::~PieceReaders()
     m_waiting.notify_all();
     for (std::thread& thread : m_threads)
         thread.join();
+}
+
+void PieceReaders::startThread()
+{
+    try {
+        m_threads.emplace_back([this, &rows = m_rows[m_threads.size() + 1]] { work(rows); });
+    } catch (const std::system_error&) {
+        // The machine gives no more: those there are do it.
+    }
 }
 
 bool PieceReaders::add(std::vector<char>& buffer, std::size_t from, std::size_t to, PlainRows::Begins begins)
@@ -44,7 +54,7 @@ bool PieceReaders::add(std::vector<char>& buffer, std::size_t from, std::size_t 
     m_waiting.notify_one();
     // A list of one piece needs no thread beside this one.
     if (m_threads.size() + 1 < m_rows.size() && m_threads.size() + 1 < m_jobs.size())
-        m_threads.emplace_back([this, &rows = m_rows[m_threads.size() + 1]] { work(rows); });
+        startThread();
     while (m_jobs.size() >= m_mostJobs) {
         if (!helpOrWait() || !putTogether())
             return false;

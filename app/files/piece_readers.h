@@ -41,6 +41,7 @@ private:
         bool done = false, fine = false;
     };
 
+    void startThread();
     void work(PlainRows& rows);
     bool helpOrWait();
     bool putTogether();

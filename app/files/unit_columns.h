@@ -80,7 +80,7 @@ public:
     void fill(std::size_t tier, Tier& out) const;
 
 private:
-    // A row's place is its part and its number in there, 16 bits each. A row has 17 bytes at least, so that a megabyte of them fits.
+    // A row's place is its part and its number in there, 16 bits each. A row has 16 bytes at least, so that a megabyte of them fits.
     static constexpr unsigned kRowBits = 16;
     static constexpr std::size_t kMostRows = std::size_t(1) << kRowBits;
     struct HeldTier {

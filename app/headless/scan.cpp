@@ -85,14 +85,14 @@ ExitStatus scan(const Request& request)
         TerminalProgress progress;
         if (std::optional<Scanned> scanned = scanPlainList(request, threads, progress)) {
             sayColumnsNotUsed(request.file, scanned->unknownColumns);
-            if (sameFile(request.file, request.out))
-                return refuseToOverwrite();
+            if (const ExitStatus status = refuseToOverwriteInput(request); status != ExitStatus::done)
+                return status;
             worklist = std::move(scanned->list);
         } else if (const ExitStatus status = scanAnything(request, threads, progress, worklist); status != ExitStatus::done) {
             return status;
         }
     }
-    const WriteUndisturbed undisturbed(request.out.isEmpty());
+    const WriteUndisturbed undisturbed(QFile::encodeName(request.out).toStdString());
     const auto written = request.out.isEmpty() ? writeToStandardOutput(worklist->pieces()) : writeOut(request.out, worklist->pieces());
     return written ? ExitStatus::done : refuse(ExitStatus::cannotWrite, written.trouble());
 }

@@ -4,6 +4,8 @@
 #include "input.h"
 #include "streams.h"
 
+#include <utility>
+
 namespace rungwright
 {
 
@@ -107,7 +109,15 @@ Outcome<std::vector<ChosenLadder>> chooseLadders(const Scenario& scenario, const
     return chosen;
 }
 
-ExitStatus refuseToOverwrite() { return refuse(ExitStatus::wrongUsage, "rungwright: --out would overwrite FILE"); }
+ExitStatus refuseToOverwriteInput(const Request& request)
+{
+    for (const auto& [input, name] :
+         {std::pair{request.file, "FILE"}, {request.mapping, "the --mapping file"}, {request.floors, "the --floors file"}}) {
+        if (!input.isEmpty() && sameFile(input, request.out))
+            return refuse(ExitStatus::wrongUsage, std::string("rungwright: --out would overwrite ") + name);
+    }
+    return ExitStatus::done;
+}
 
 ExitStatus prepare(const Request& request, Scenario& scenario, std::vector<ChosenLadder>& ladders)
 {
@@ -119,9 +129,7 @@ ExitStatus prepare(const Request& request, Scenario& scenario, std::vector<Chose
     if (!chosen)
         return refuse(ExitStatus::wrongUsage, chosen.trouble());
     ladders = std::move(chosen).value();
-    if (sameFile(request.file, request.out))
-        return refuseToOverwrite();
-    return ExitStatus::done;
+    return refuseToOverwriteInput(request);
 }
 
 std::vector<MeasuredLadder> measureAll(const std::vector<ChosenLadder>& ladders)

@@ -29,8 +29,8 @@ Outcome<std::vector<ChosenLadder>> chooseLadders(const Scenario& scenario, const
 /// ExitStatus::done, or the status to end with after the reason was told.
 ExitStatus prepare(const Request& request, Scenario& scenario, std::vector<ChosenLadder>& ladders);
 
-/// Tells that --out names FILE itself, and gives the status to end with.
-ExitStatus refuseToOverwrite();
+/// ExitStatus::done, unless --out names a file that is read: then it says so, and gives the status to end with.
+ExitStatus refuseToOverwriteInput(const Request& request);
 
 struct MeasuredLadder {
     ChosenLadder ladder;

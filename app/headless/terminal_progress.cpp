@@ -73,11 +73,14 @@ void TerminalProgress::show(const char* what, double share)
     [[maybe_unused]] const ssize_t written = ::write(STDERR_FILENO, line.data(), static_cast<std::size_t>(length));
 }
 
-WriteUndisturbed::WriteUndisturbed(bool toStandardOutput)
+WriteUndisturbed::WriteUndisturbed(const std::string& out)
 {
-    struct stat out {
+    struct stat there {
     };
-    m_held = !toStandardOutput || (::fstat(STDOUT_FILENO, &out) == 0 && S_ISREG(out.st_mode));
+    if (out.empty())
+        m_held = ::fstat(STDOUT_FILENO, &there) == 0 && S_ISREG(there.st_mode);
+    else
+        m_held = ::stat(out.c_str(), &there) != 0 || S_ISREG(there.st_mode);
     const sigset_t set = endings();
     if (m_held)
         pthread_sigmask(SIG_BLOCK, &set, nullptr);

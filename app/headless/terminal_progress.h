@@ -4,6 +4,8 @@
 
 #include <QElapsedTimer>
 
+#include <string>
+
 namespace rungwright
 {
 
@@ -31,8 +33,8 @@ private:
 class WriteUndisturbed
 {
 public:
-    /// `toStandardOutput`: the result goes there, which may be a file or not.
-    explicit WriteUndisturbed(bool toStandardOutput);
+    /// `out` is where the result goes; empty for standard output, which may be a file or not.
+    explicit WriteUndisturbed(const std::string& out);
     ~WriteUndisturbed();
     WriteUndisturbed(const WriteUndisturbed&) = delete;
     WriteUndisturbed& operator=(const WriteUndisturbed&) = delete;

@@ -74,6 +74,7 @@ std::optional<WorklistCsv> WorklistCsv::of(const Currency& currency, std::size_t
     std::stable_sort(rows.begin(), rows.end(), [](const Row& a, const Row& b) { return a.rank > b.rank; });
     WorklistCsv list;
     list.m_headings = csvHeadings(currency);
+    list.m_texts.reserve(writers.size()); // the rows look into them, so they must not move
     for (RowWriter& writer : writers)
         list.m_texts.push_back(writer.takeTexts());
     list.m_rows.reserve(rows.size());
