@@ -2,6 +2,7 @@
 #include "import_dialog.h"
 
 #include "import_columns.h"
+#include "import_said.h"
 #include "import_skips.h"
 #include "import_statuses.h"
 #include "import_words.h"
@@ -71,8 +72,11 @@ ImportDialog::ImportDialog(ImportStart start, const MappingShelf& shelf, Questio
     m_soon.setInterval(kSoonMs);
     connect(&m_soon, &QTimer::timeout, this, &ImportDialog::showPreview);
     connect(&m_counting, &QFutureWatcherBase::finished, this, [this] {
+        if (m_mapping.from(Column::status).kind != ColumnSource::Kind::column)
+            return;
         m_words = m_counting.result();
-        m_statuses->show(m_words, m_mapping, true);
+        learnTradeWords();
+        m_statuses->showMore(m_words, m_mapping);
         showWhatIsMissing();
     });
 
@@ -168,6 +172,7 @@ void ImportDialog::connectFields()
 {
     for (QComboBox* combo : {m_ui->encodingCombo, m_ui->delimiterCombo, m_ui->headerLinesCombo})
         connect(combo, &QComboBox::currentIndexChanged, this, &ImportDialog::onLayout);
+    m_ui->headerRowSpin->setKeyboardTracking(false);
     connect(m_ui->headerRowSpin, &QSpinBox::valueChanged, this, &ImportDialog::onLayout);
     connect(m_ui->topLines, &QListWidget::itemDoubleClicked, this,
             [this](const QListWidgetItem* item) { m_ui->headerRowSpin->setValue(m_ui->topLines->row(item) + 1); });
@@ -303,7 +308,13 @@ void ImportDialog::onLayout()
     layout.delimiter = static_cast<char>(m_ui->delimiterCombo->currentData().toInt());
     layout.headerRow = m_ui->headerRowSpin->value();
     layout.headerLines = m_ui->headerLinesCombo->currentData().toInt();
-    useProposal(proposeColumns(m_start.sample, layout));
+    {
+        // What the form holds from here on is nobody's saved mapping.
+        const QScopedValueRollback filling(m_filling, true);
+        m_ui->profileCombo->setCurrentIndex(0);
+        m_ui->removeProfileButton->setEnabled(false);
+    }
+    useProposal(keepWhatWasSaid(m_mapping, proposeColumns(m_start.sample, layout)));
 }
 
 void ImportDialog::onColumns()
@@ -315,6 +326,7 @@ void ImportDialog::onColumns()
     if (m_mapping.from(Column::status) != before) {
         showStatuses();
         learnTradeWords();
+        m_statuses->show(m_words, m_mapping, m_start.sample.whole);
     }
     m_soon.start();
     showWhatIsMissing();
@@ -365,7 +377,6 @@ void ImportDialog::learnTradeWords()
         if (status && std::none_of(m_mapping.statuses.begin(), m_mapping.statuses.end(), known))
             m_mapping.statuses.push_back({value.text, *status});
     }
-    m_statuses->show(m_words, m_mapping, m_start.sample.whole);
 }
 
 // What comes of it ---------------------------------------------------------------------------------------------------

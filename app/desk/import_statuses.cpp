@@ -36,6 +36,11 @@ QString statusWords(Status status)
     return {};
 }
 
+QString rowsText(qint64 count)
+{
+    return count == 1 ? ImportStatuses::tr("1 row") : ImportStatuses::tr("%1 rows").arg(numberText(static_cast<double>(count), 0));
+}
+
 const StatusWord* knownWord(const ImportMapping& mapping, const QString& word)
 {
     const QString folded = foldedText(word);
@@ -81,31 +86,47 @@ void ImportStatuses::show(const std::vector<DistinctValue>& words, const ImportM
     m_head->setText(words.empty() ? tr("The status comes from no column: there are no words to say anything about.")
                     : wholeFile   ? tr("What the list's words stand for.")
                                   : tr("What the list's words stand for. Counted in its first rows."));
+    for (const DistinctValue& value : words)
+        add(value, mapping);
+}
+
+void ImportStatuses::showMore(const std::vector<DistinctValue>& words, const ImportMapping& mapping)
+{
+    m_head->setText(tr("What the list's words stand for."));
     for (const DistinctValue& value : words) {
-        const int line = static_cast<int>(m_rows.size());
-        const QString shown = value.text.isEmpty() ? tr("(an empty cell)") : value.text;
-        auto* word = new QLabel(shown);
-        word->setTextFormat(Qt::PlainText);
-        auto* count = new QLabel(value.count == 1 ? tr("1 row") : tr("%1 rows").arg(numberText(static_cast<double>(value.count), 0)));
-        count->setTextFormat(Qt::PlainText);
-        count->setForegroundRole(QPalette::PlaceholderText);
-        count->setAlignment(Qt::AlignRight | Qt::AlignVCenter);
-        auto* status = new QComboBox;
-        status->setObjectName(QStringLiteral("statusOf%1").arg(line));
-        status->setAccessibleName(tr("%1 stands for").arg(shown));
-        word->setBuddy(status);
-        status->addItem(tr("not said: refused"), kUnsaid);
-        for (const Status one : kStatuses)
-            status->addItem(statusWords(one), static_cast<int>(one));
-        const StatusWord* known = knownWord(mapping, value.text);
-        if (known != nullptr)
-            status->setCurrentIndex(status->findData(static_cast<int>(known->status)));
-        m_grid->addWidget(word, line, 0);
-        m_grid->addWidget(count, line, 1);
-        m_grid->addWidget(status, line, 2);
-        m_rows.push_back({value.text, status});
-        connect(status, &QComboBox::currentIndexChanged, this, &ImportStatuses::changed);
+        const auto there = std::find_if(m_rows.begin(), m_rows.end(), [&value](const Row& row) { return row.word == value.text; });
+        if (there == m_rows.end())
+            add(value, mapping);
+        else
+            there->count->setText(rowsText(value.count));
     }
+}
+
+void ImportStatuses::add(const DistinctValue& value, const ImportMapping& mapping)
+{
+    const int line = static_cast<int>(m_rows.size());
+    const QString shown = value.text.isEmpty() ? tr("(an empty cell)") : value.text;
+    auto* word = new QLabel(shown);
+    word->setTextFormat(Qt::PlainText);
+    auto* count = new QLabel(rowsText(value.count));
+    count->setTextFormat(Qt::PlainText);
+    count->setForegroundRole(QPalette::PlaceholderText);
+    count->setAlignment(Qt::AlignRight | Qt::AlignVCenter);
+    auto* status = new QComboBox;
+    status->setObjectName(QStringLiteral("statusOf%1").arg(line));
+    status->setAccessibleName(tr("%1 stands for").arg(shown));
+    word->setBuddy(status);
+    status->addItem(tr("not said: refused"), kUnsaid);
+    for (const Status one : kStatuses)
+        status->addItem(statusWords(one), static_cast<int>(one));
+    const StatusWord* known = knownWord(mapping, value.text);
+    if (known != nullptr)
+        status->setCurrentIndex(status->findData(static_cast<int>(known->status)));
+    m_grid->addWidget(word, line, 0);
+    m_grid->addWidget(count, line, 1);
+    m_grid->addWidget(status, line, 2);
+    m_rows.push_back({value.text, count, status});
+    connect(status, &QComboBox::currentIndexChanged, this, &ImportStatuses::changed);
 }
 
 void ImportStatuses::writeTo(ImportMapping& mapping) const

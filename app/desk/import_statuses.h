@@ -24,6 +24,8 @@ public:
     /// The words of the list's status column, with how often each stands there; empty when the status comes from no column. Words that the
     /// mapping does not know stand for nothing yet.
     void show(const std::vector<DistinctValue>& words, const ImportMapping& mapping, bool wholeFile);
+    /// The same words and more of them, counted in the whole list: rows that are there keep what was said in them.
+    void showMore(const std::vector<DistinctValue>& words, const ImportMapping& mapping);
     void writeTo(ImportMapping& mapping) const;
     /// Words seen that stand for no status yet.
     int unsaid() const;
@@ -34,10 +36,12 @@ signals:
 private:
     struct Row {
         QString word;
+        QLabel* count;
         QComboBox* status;
     };
 
     void clear();
+    void add(const DistinctValue& value, const ImportMapping& mapping);
 
     QLabel* m_head;
     QGridLayout* m_grid;

@@ -306,6 +306,11 @@ void ImportGuiTest::whatIsMissingIsSaid()
     auto& constant = in<QLineEdit>(form(), "tierConstant");
     QTRY_COMPARE(QApplication::focusWidget(), &constant);
     QTest::keyClicks(&constant, QStringLiteral("Box"));
+    // What was said stays when the encoding is corrected.
+    pickByMouse(in<QComboBox>(form(), "encodingCombo"), QStringLiteral("ISO 8859-15"));
+    QCOMPARE(form()->mapping().encoding, TextEncoding::iso8859_15);
+    QCOMPARE(form()->mapping().from(Column::tier), ColumnSource::always(QStringLiteral("Box")));
+    QCOMPARE(constant.text(), QStringLiteral("Box"));
     pickByMouse(in<QComboBox>(form(), "advertised_floorSource"), QStringLiteral("none"));
     QTRY_VERIFY2(import.isEnabled(), qPrintable(reason.text()));
     // The file of floors has to be there.
