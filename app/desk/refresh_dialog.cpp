@@ -158,6 +158,12 @@ void RefreshDialog::changeEvent(QEvent* event)
         dress();
 }
 
+void RefreshDialog::showEvent(QShowEvent* event)
+{
+    QDialog::showEvent(event);
+    fitColumns(); // only now is it known how wide the table is
+}
+
 void RefreshDialog::save()
 {
     const int row = m_ui->topicsList->currentRow();

@@ -33,6 +33,7 @@ public:
 
 protected:
     void changeEvent(QEvent* event) override;
+    void showEvent(QShowEvent* event) override;
 
 private:
     void showSummary(const RefreshPlan& plan);
