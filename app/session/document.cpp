@@ -298,11 +298,10 @@ void Document::recordSignedSheet(int tierIndex, SignedSheet sheet)
 
 bool Document::refresh(const RefreshPlan& plan, const QString& listName)
 {
-    if (!(plan.before == m_scenario.tiers))
+    if (!(plan.before == m_scenario.tiers) || !(plan.takesCurrency || plan.currency == m_scenario.currency))
         return false;
-    if (!(plan.after == m_scenario.tiers))
-        m_undo.push(new ChangeValue<TierList>(*this, tr("Refresh from %1").arg(listName), [](Scenario& s) -> TierList& { return s.tiers; },
-                                              plan.after, {DocumentChange::Kind::refreshed, -1, -1}));
+    if (!(plan.after == m_scenario.tiers) || plan.takesCurrency)
+        m_undo.push(new TakeRefresh(*this, tr("Refresh from %1").arg(listName), plan.after, plan.currency));
     return true;
 }
 

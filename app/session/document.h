@@ -105,8 +105,8 @@ public:
     void setFloor(int tier, Price floor);
     /// Keeps what was handed over; the one before is forgotten, and comes back with the undo.
     void recordSignedSheet(int tier, SignedSheet sheet);
-    /// Takes the tiers of the plan; `listName` names the step: "Refresh from units.csv". False, and nothing done, when the scenario's tiers
-    /// are no longer those the plan was worked out for.
+    /// Takes the tiers of the plan, and its currency where the scenario names none; `listName` names the step: "Refresh from units.csv".
+    /// False, and nothing done, when the scenario's tiers are no longer those the plan was worked out for.
     bool refresh(const RefreshPlan& plan, const QString& listName);
 
     /// "Candidate 1", "Candidate 2", ...: the first such name not taken, or `wanted` with a number behind it.

@@ -50,13 +50,14 @@ std::optional<RefreshKind> statusChange(Status before, Status after)
 }
 
 /// The fate of a candidate's price of a unit that stays; nothing when the candidate had not changed it.
-std::optional<ChangeFate> fateOf(Price asked, Price wanted, Price asksNow)
+std::optional<ChangeFate> fateOf(const Unit& before, Price wanted, const Unit& now)
 {
-    if (wanted == asked)
+    if (wanted == before.asking)
         return {};
-    if (asksNow == asked)
-        return ChangeFate::kept;
-    return asksNow == wanted ? ChangeFate::nowAsked : ChangeFate::clash;
+    if (now.asking == wanted)
+        return ChangeFate::nowAsked;
+    const bool newlyLocked = now.locked && !before.locked;
+    return now.asking == before.asking && !newlyLocked ? ChangeFate::kept : ChangeFate::clash;
 }
 
 class Planner
@@ -245,7 +246,7 @@ private:
         for (std::size_t u = 0; u < m_cameFrom.size(); ++u) {
             const auto from = static_cast<std::size_t>(m_cameFrom[u]);
             const Price wanted = candidate.prices[from];
-            const auto fate = fateOf(was.tier.units[from].asking, wanted, units[u].asking);
+            const auto fate = fateOf(was.tier.units[from], wanted, units[u]);
             if (!fate)
                 continue;
             carried.prices[u] = wanted;
@@ -363,21 +364,37 @@ private:
     bool m_tierTouched = false;
 };
 
+QString otherCurrency(const Currency& has, const Currency& listed)
+{
+    const auto code = [](const Currency& currency) { return QString::fromStdString(currency.code); };
+    const auto decimals = [](const Currency& currency) { return QString::number(currency.decimals); };
+    if (has.code == "XXX")
+        return Words::tr("The scenario names no currency and its amounts have %1 decimals; the list is in %2, whose amounts have %3. "
+                         "Import the list as a scenario of its own.")
+            .arg(decimals(has), code(listed), decimals(listed));
+    if (listed.code == "XXX")
+        return Words::tr("The scenario is in %1; the list names no currency. Say in the list or its mapping that it is in %1.")
+            .arg(code(has));
+    return Words::tr("The scenario is in %1, the list in %2. Import the list as a scenario of its own.").arg(code(has), code(listed));
+}
+
 } // namespace
 
 Outcome<RefreshPlan> planRefresh(const Scenario& now, const Currency& currency, std::vector<TierCase> list, const Progress& progress)
 {
     const auto refused = [](const QString& message) { return Trouble{message.toStdString()}; };
-    if (!(currency == now.currency))
-        return refused(Words::tr("The list is in %1 and the scenario in %2. A refresh needs the same currency: export the list in %2, say "
-                                 "at the import that its amounts are %2, or import it as a scenario of its own.")
-                           .arg(QString::fromStdString(currency.code), QString::fromStdString(now.currency.code)));
+    const bool takesCurrency = now.currency.code == "XXX" && currency.code != "XXX" && currency.decimals == now.currency.decimals;
+    if (!(currency == now.currency) && !takesCurrency)
+        return refused(otherCurrency(now.currency, currency));
     if (list.empty())
         return refused(Words::tr("The list holds no unit. A refresh from it would empty the scenario."));
     Planner planner(now.tiers, std::move(list), progress);
     if (!planner.work())
         return refused(Words::tr("The refresh was cancelled; nothing has changed."));
-    return planner.takePlan();
+    RefreshPlan plan = planner.takePlan();
+    plan.currency = currency;
+    plan.takesCurrency = takesCurrency;
+    return plan;
 }
 
 std::vector<SignedTier> checkSigned(const TierList& tiers)

@@ -59,7 +59,8 @@ struct RefreshLine {
 /// What becomes of a price that a candidate had changed.
 enum class ChangeFate : unsigned char {
     kept,        ///< The list asks what was asked before.
-    clash,       ///< The list asks something else by now, and not what the candidate wants. The candidate's price is kept.
+    clash,       ///< The list asks something else by now, and not what the candidate wants, or it newly locks the unit. The candidate's
+                 ///< price is kept.
     nowAsked,    ///< The list asks what the candidate wants.
     unitGone,    ///< Dropped.
     unitMoved,   ///< Dropped: the unit is in another tier now.
@@ -100,8 +101,10 @@ inline constexpr std::size_t kRefreshLinesKept = 100'000;
 
 /// A refresh, worked out and not yet done: Document::refresh() does it.
 struct RefreshPlan {
-    TierList before; ///< The scenario's tiers it was worked out for.
-    TierList after;  ///< What they become. Tiers in which nothing changes are one and the same element in both.
+    Currency currency;          ///< The scenario's from then on.
+    bool takesCurrency = false; ///< The scenario names none so far; its amounts have as many decimals.
+    TierList before;            ///< The scenario's tiers it was worked out for.
+    TierList after;             ///< What they become. Tiers in which nothing changes are one and the same element in both.
 
     std::array<std::int64_t, kRefreshKinds> counts{};
     std::array<std::vector<RefreshLine>, kRefreshKinds> lines; ///< By kind; tier by tier.
@@ -121,11 +124,13 @@ struct RefreshPlan {
     std::int64_t count(RefreshKind kind) const { return counts[static_cast<std::size_t>(kind)]; }
     std::int64_t count(ChangeFate fate) const { return changeCounts[static_cast<std::size_t>(fate)]; }
     /// The list says what the scenario says ("seen" marks apart).
-    bool changesNothing() const { return std::accumulate(counts.begin(), counts.end(), std::int64_t{0}) == 0; }
+    bool changesNothing() const { return !takesCurrency && changesInAll() == 0; }
+    std::int64_t changesInAll() const { return std::accumulate(counts.begin(), counts.end(), std::int64_t{0}); }
 };
 
 /// Works out what `list` (of that currency, tiers and units each once, as the readers give it) makes of the scenario. For a thread of its
-/// own. Trouble: another currency, an empty list, or `progress` said to stop.
+/// own. A scenario that names no currency takes the list's when their decimals agree. Trouble: another currency, an empty list, or
+/// `progress` said to stop.
 Outcome<RefreshPlan> planRefresh(const Scenario& now, const Currency& currency, std::vector<TierCase> list, const Progress& progress = {});
 
 /// The same comparison without a refresh: every tier from which a sheet had been handed over, against what its scenario asks now.

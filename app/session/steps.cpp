@@ -2,9 +2,22 @@
 #include "steps.h"
 
 #include <algorithm>
+#include <utility>
 
 namespace rungwright
 {
+
+TakeRefresh::TakeRefresh(Document& document, const QString& name, TierList tiers, Currency currency) :
+    ScenarioStep(document, name), m_tiers(std::move(tiers)), m_currency(std::move(currency))
+{
+}
+
+void TakeRefresh::swap()
+{
+    std::swap(scenario().tiers, m_tiers);
+    std::swap(scenario().currency, m_currency);
+    announce({DocumentChange::Kind::refreshed, -1, -1});
+}
 
 EditPrices::EditPrices(Document& document, const QString& name, int tier, int candidate, std::vector<PriceChange> changes, bool mergeable) :
     ScenarioStep(document, name), m_tier(tier), m_candidate(candidate), m_changes(std::move(changes)), m_mergeable(mergeable)

@@ -53,6 +53,21 @@ private:
     DocumentChange m_change;
 };
 
+/// The tiers that a list makes of a scenario's, and its currency where none was known.
+class TakeRefresh : public ScenarioStep
+{
+public:
+    TakeRefresh(Document& document, const QString& name, TierList tiers, Currency currency);
+    void redo() override { swap(); }
+    void undo() override { swap(); }
+
+private:
+    void swap();
+
+    TierList m_tiers;
+    Currency m_currency;
+};
+
 /// Prices of one candidate. Nudges of the same units in a row are one step, which drops itself when it ends where it began.
 class EditPrices : public ScenarioStep
 {

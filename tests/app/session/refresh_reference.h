@@ -165,10 +165,12 @@ private:
                     continue;
                 if (!now)
                     ++m_result.fates[movedFrom(was.tier.site, unit.name) ? ChangeFate::unitMoved : ChangeFate::unitGone];
-                else if (now->asking == unit.asking)
-                    ++m_result.fates[ChangeFate::kept];
+                else if (now->asking == wanted)
+                    ++m_result.fates[ChangeFate::nowAsked];
+                else if (now->asking != unit.asking || (now->locked && !unit.locked))
+                    ++m_result.fates[ChangeFate::clash];
                 else
-                    ++m_result.fates[now->asking == wanted ? ChangeFate::nowAsked : ChangeFate::clash];
+                    ++m_result.fates[ChangeFate::kept];
             }
             if (now) {
                 made.tier.units.push_back(completed(*now, unit));

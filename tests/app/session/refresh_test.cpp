@@ -28,6 +28,8 @@ private slots:
     void whatTheListDoesNotSayStays();
     void goneTiersLeaveWithTheirCandidates();
     void anotherCurrencyIsRefused();
+    void aCurrencyNotYetKnownIsTaken();
+    void aLockSetByTheListClashes();
     void stoppingChangesNothing();
     void signedSheetsAreCompared();
     void linesAreCappedAndAllCounted();
@@ -450,6 +452,48 @@ void RefreshTest::anotherCurrencyIsRefused()
     QVERIFY(!plan.ok());
     QVERIFY(plan.trouble().find("GBP") != std::string::npos && plan.trouble().find("EUR") != std::string::npos);
     QVERIFY(!planRefresh(scenario, scenario.currency, {}).ok());
+}
+
+void RefreshTest::aCurrencyNotYetKnownIsTaken()
+{
+    Scenario scenario = inventedScenario();
+    scenario.currency = Currency{"XXX", 2};
+    Document document;
+    document.begin(scenario, {}, true);
+    const auto plan = planRefresh(document.scenario(), Currency{"EUR", 2}, listOf(scenario));
+    QVERIFY(plan.ok());
+    QVERIFY(plan.value().takesCurrency);
+    QVERIFY(!plan.value().changesNothing());
+    QVERIFY(document.refresh(plan.value(), QStringLiteral("week.csv")));
+    QCOMPARE(document.scenario().currency.code, std::string("EUR"));
+    QCOMPARE(document.undoStack().count(), 1);
+    document.undoStack().undo();
+    QVERIFY(document.scenario() == scenario);
+    document.undoStack().redo();
+    QCOMPARE(document.scenario().currency.code, std::string("EUR"));
+    // The yen has no decimals (ISO 4217): amounts with two cannot become amounts in it.
+    const auto yen = planRefresh(scenario, Currency{"JPY", 0}, listOf(scenario));
+    QVERIFY(!yen.ok());
+    QVERIFY(yen.trouble().find("JPY") != std::string::npos && yen.trouble().find("2 decimals") != std::string::npos);
+}
+
+void RefreshTest::aLockSetByTheListClashes()
+{
+    Scenario scenario = inventedScenario();
+    Tier& tier = scenario.tiers[0].tier;
+    tier.units[0].locked = false;
+    tier.units[1].locked = true;
+    scenario.tiers[0].candidates = {{"Lower", "", askingPrices(tier.units)}};
+    scenario.tiers[0].candidates[0].prices[0] -= Price{100};
+    scenario.tiers[0].candidates[0].prices[1] -= Price{100};
+    std::vector<TierCase> list = listOf(scenario);
+    list[0].tier.units[0].locked = true;
+    list[0].tier.units[1].locked = true;
+    const RefreshPlan plan = planned(scenario, list);
+    QCOMPARE(plan.count(ChangeFate::clash), 1);
+    QCOMPARE(plan.count(ChangeFate::kept), 1); // that one was locked before
+    QCOMPARE(plan.changes[static_cast<std::size_t>(ChangeFate::clash)][0].unitBefore, 0);
+    QVERIFY(plan.after[0].candidates[0].prices == scenario.tiers[0].candidates[0].prices);
 }
 
 void RefreshTest::stoppingChangesNothing()
