@@ -22,7 +22,9 @@ QString keysText()
                 "Alt+Down, Alt+Up: the next tier of the worklist. Alt+Shift+Down: the next one not yet seen. Ctrl+M: mark the selected\n"
                 "tiers as seen. Ctrl+F: filter. Ctrl+G: group by site; Left, Right: fold and unfold a site.\n"
                 "In the portfolio: click a tier to work on it, drag a box to pick tiers for the worklist, Esc to show all again.\n"
+                "Arrows: the next tier by gap share or lean. Space: pick it or let it go. Shift with an arrow: pick on the way.\n"
                 "Ctrl+1, Ctrl+2, Ctrl+3: bench, side by side, portfolio. Ctrl+R: refresh from a new list.\n"
+                "Ctrl+Shift+R: price rules.\n"
                 "Every plot: right click to copy or save. Every table: right click or Ctrl+C to copy.");
 }
 

@@ -47,19 +47,25 @@ void remarkOnFloor(const Measurement& m, const Currency& currency, QStringList& 
 
 void remarkOnRules(const Tier& tier, std::span<const Price> prices, const PriceRules& rules, QStringList& said)
 {
-    QStringList tooFar, offPoints;
+    QStringList locked, tooFar, offPoints;
     for (std::size_t i = 0; i < prices.size(); ++i) {
         Unit unit = tier.units[i];
         if (prices[i] == unit.asking)
             continue;
+        const QString name = shownText(unit.name, 24);
+        if (unit.locked)
+            locked << name;
         unit.locked = false;
         const Room room = roomOf(unit, rules);
-        const QString name = shownText(unit.name, 24);
         if (prices[i] < room.lo || prices[i] > room.hi)
             tooFar << name;
         else if (!rules.points.allows(prices[i]))
             offPoints << name;
     }
+    if (!locked.isEmpty())
+        said << counted(locked.size(), QT_TRANSLATE_NOOP("SheetRemarks", "One unit gets a new price though it is locked"),
+                        QT_TRANSLATE_NOOP("SheetRemarks", "%1 units get a new price though they are locked")) +
+                    tr(": %1.").arg(listed(locked));
     if (!tooFar.isEmpty())
         said << counted(tooFar.size(), QT_TRANSLATE_NOOP("SheetRemarks", "One new price lies beyond the price rules"),
                         QT_TRANSLATE_NOOP("SheetRemarks", "%1 new prices lie beyond the price rules")) +

@@ -248,6 +248,12 @@ private slots:
         QVERIFY(!remarks(askingPrices(tierCase.tier.units), rules).join(QString()).contains(QStringLiteral("rules")));
         QCOMPARE(remarks({Price{6900}, Price{9000}, Price{10000}, Price{11000}}),
                  QStringList{QStringLiteral("One unit on offer is asked below the advertised floor.")});
+        Tier lockedTier = tierCase.tier;
+        for (Unit& unit : lockedTier.units)
+            unit.locked = true;
+        const auto& lower = tierCase.candidates[0].prices;
+        const QString said = sheetRemarks(lockedTier, lower, measured(lockedTier, lower, tierCase.model), {}, scenario.currency).join(u' ');
+        QVERIFY2(said.contains(QStringLiteral("though ")) && said.contains(QStringLiteral("locked: A-1")), qPrintable(said));
     }
 };
 
