@@ -181,8 +181,9 @@ private:
         if (!m_found)
             return {};
         if (!asked.isEmpty() && m_list.currency != *m_found)
-            return Words::tr("%1:%2: by the mapping the list's currency is %3, but %4 was asked for. Ask for %3 or for none, or change the "
-                             "mapping")
+            return Words::tr(
+                       "%1:%2: by the mapping the list's currency is %3, but %4 is wanted. Take a list in %4, or change the mapping; a "
+                       "command can name %3 or none")
                 .arg(m_fileName, QString::number(m_currencyLine), QString::fromStdString(m_found->code),
                      QString::fromStdString(m_list.currency.code));
         m_list.currency = *m_found;

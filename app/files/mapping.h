@@ -72,7 +72,7 @@ struct SkipRule {
     enum class Kind : unsigned char { isEmpty, beginsWith };
     Kind kind = Kind::isEmpty;
     TheirColumn column;
-    QString text; ///< For Kind::beginsWith: the beginning, in any case of letters. Not empty.
+    QString text; ///< For Kind::beginsWith: the beginning, whole words, in any case of letters. Not empty.
 
     bool operator==(const SkipRule&) const = default;
 };

@@ -107,7 +107,7 @@ int CellMapper::ruleFor(std::span<const std::string_view> cells) const
             continue;
         const std::string_view text = place < cells.size() ? trimmedText(cells[place]) : std::string_view();
         const SkipRule& rule = m_mapping.skip[i];
-        if (rule.kind == SkipRule::Kind::isEmpty ? text.empty() : foldedText(text).startsWith(rule.text))
+        if (rule.kind == SkipRule::Kind::isEmpty ? text.empty() : beginsWithWords(foldedText(text), rule.text))
             return static_cast<int>(i);
     }
     return -1;
@@ -228,6 +228,10 @@ CellMapper::Answer CellMapper::price(Column column, std::string_view text, const
     if (!read.currency.empty()) {
         m_twoCurrencies = m_twoCurrencies || (!m_priceCurrency.empty() && m_priceCurrency != read.currency);
         m_priceCurrency = read.currency;
+    }
+    if (m_mapping.numbers.grouping == Grouping::none) {
+        if (auto complaint = twoWaysTrouble(read.plain, currency))
+            return complaint;
     }
     Price price;
     auto complaint = readPrice(read.plain, currency, price);

@@ -60,7 +60,7 @@ class FloorReader
 {
 public:
     FloorReader(const QByteArray& bytes, QString fileName, const NumberStyle& style, const Currency& currency) :
-        m_bytes(bytes), m_fileName(std::move(fileName)), m_numbers(style), m_currency(currency)
+        m_bytes(bytes), m_fileName(std::move(fileName)), m_numbers(style), m_grouping(style.grouping), m_currency(currency)
     {
         m_layout.encoding = guessEncoding(bytes, true).encoding;
     }
@@ -139,21 +139,21 @@ private:
         if (cells.size() < m_cells)
             return refuse(line, Words::tr("too few cells; found %1; wanted: %2, as in the header row")
                                     .arg(QString::number(cells.size()), QString::number(m_cells)));
+        // A decimal comma without quotation marks tears a floor apart: 69,50 would be 69.
+        if (!isBlank(cells.subspan(m_cells)))
+            return refuse(line, Words::tr("too many cells; found %1; wanted: %2, as in the header row (%3 inside a cell, such as a decimal "
+                                          "comma, needs quotation marks around the cell)")
+                                    .arg(QString::number(cells.size()), QString::number(m_cells),
+                                         m_layout.delimiter == '\t' ? Words::tr("a tab")
+                                                                    : QStringLiteral("'%1'").arg(QLatin1Char(m_layout.delimiter))));
         const auto cell = [&](std::size_t k) { return trimmedText(cells[static_cast<std::size_t>(m_places[k])]); };
         FloorTable::Floor floor{std::string(cell(0)), std::string(cell(1)), {}, line};
         if (floor.site.empty() || floor.tier.empty())
             return refuse(line, Words::tr("no %1; found nothing; wanted: a name").arg(floor.site.empty() ? "site" : "tier"));
-        const std::string_view text = cell(2);
         ReadNumber number;
-        number.plain = text;
-        const bool fine = m_layout.delimiter == ',' || m_numbers.read(text, number);
-        Price price;
-        if (!fine || readPrice(number.plain, m_currency, price))
-            return refuse(line,
-                          Words::tr("column 'advertised_floor': not a floor; found '%1'; wanted: an amount above 0 such as %2, with at "
-                                    "most %3 decimals (%4)")
-                              .arg(shownText(text), m_layout.delimiter == ',' ? QStringLiteral("1234.50") : m_numbers.example(),
-                                   QString::number(m_currency.decimals), QString::fromStdString(m_currency.code)));
+        if (const auto complaint = floorTrouble(cell(2), number))
+            return refuse(line, Words::tr("column 'advertised_floor': %1; found '%2'; wanted: %3")
+                                    .arg(complaint->wrong, shownText(cell(2)), complaint->wanted));
         const auto [same, fresh] = m_table.m_byKey.emplace(keyOf(floor.site, floor.tier), m_table.m_floors.size());
         if (!fresh)
             return refuse(line, Words::tr("the tier '%1' at '%2' is there already, on line %3; wanted: each tier once")
@@ -161,6 +161,29 @@ private:
                                     .arg(m_table.m_floors[same->second].line));
         floor.text = std::move(number.plain);
         m_table.m_floors.push_back(std::move(floor));
+    }
+
+    // With commas between the cells the floors are written as ours are, else as the mapping has numbers.
+    std::optional<Complaint> floorTrouble(std::string_view text, ReadNumber& number) const
+    {
+        const bool ours = m_layout.delimiter == ',';
+        number.plain = text;
+        const bool fine = ours || m_numbers.read(text, number);
+        if (fine && !number.currency.empty() && number.currency != m_currency.code)
+            return Complaint{Words::tr("the sign beside the floor stands for %1 and the list's currency is %2")
+                                 .arg(QString::fromStdString(std::string(number.currency)), QString::fromStdString(m_currency.code)),
+                             Words::tr("floors in the list's currency, or another meaning of the sign in the mapping")};
+        if (fine && (ours || m_grouping == Grouping::none)) {
+            if (auto complaint = twoWaysTrouble(number.plain, m_currency))
+                return complaint;
+        }
+        Price price;
+        if (fine && !number.percent && !readPrice(number.plain, m_currency, price))
+            return {};
+        return Complaint{number.percent ? Words::tr("a percentage, not a floor") : Words::tr("not a floor"),
+                         Words::tr("an amount above 0 such as %1, with at most %2 decimals (%3)")
+                             .arg(ours ? QStringLiteral("1234.50") : m_numbers.example(), QString::number(m_currency.decimals),
+                                  QString::fromStdString(m_currency.code))};
     }
 
     void refuse(qint64 line, const QString& why)
@@ -172,6 +195,7 @@ private:
     const QByteArray& m_bytes;
     QString m_fileName;
     NumberReader m_numbers;
+    Grouping m_grouping;
     Currency m_currency;
     CsvLayout m_layout;
     std::array<int, kFloorColumns.size()> m_places{};

@@ -41,10 +41,16 @@ std::array<ColumnGuess, kColumnNames.size()> guessColumns(const QStringList& hea
 
 struct NumbersGuess {
     NumberStyle style;
-    bool ambiguous = false;  ///< Two styles read everything, and differently.
-    QString example;         ///< The text that can be read in two ways.
-    QStringList tellNothing; ///< Signs that stand for more than one currency.
+    bool ambiguous = false;   ///< Two styles read everything, and differently.
+    QString example;          ///< The text that can be read in two ways.
+    QStringList tellNothing;  ///< Signs that stand for more than one currency.
+    QStringList unknownMarks; ///< Marks of the style that are neither a currency nor a period beside a price, nor a measure elsewhere.
+    QString period;           ///< "/month", where prices are told by more than one period: the one most of them have, a mark of the style.
+    QStringList otherPeriods; ///< "/week": no marks, since an amount for a week is not one for a month.
 };
+
+/// The texts beside the figures that may be taken off. Never brackets (a minus to bookkeepers) and never letters for thousands (1.5k).
+void guessMarks(const std::vector<QString>& prices, const std::vector<QString>& others, NumbersGuess& guess);
 
 /// `prices` holds the texts of prices and floors, `others` those of areas, grades and chances. Where both a decimal point and a decimal
 /// comma read every text, what a price would then look like decides (at most two decimals), and the guess is called ambiguous.

@@ -1,7 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "mapping_guess.h"
 #include "mapping_numbers.h"
-#include "trade_words.h"
 
 #include <algorithm>
 #include <optional>
@@ -65,27 +64,6 @@ std::vector<QString> figuresOf(const std::vector<QString>& texts)
     return figures;
 }
 
-void addMarks(const std::vector<QString>& texts, NumbersGuess& guess)
-{
-    constexpr std::size_t most = 20;
-    for (const QString& text : texts) {
-        const NumberText number = takeApart(text);
-        if (number.figures.isEmpty())
-            continue;
-        for (const QString& mark : {number.before, number.after}) {
-            const bool known = std::any_of(guess.style.marks.begin(), guess.style.marks.end(),
-                                           [&mark](const NumberMark& one) { return one.text.compare(mark, Qt::CaseInsensitive) == 0; });
-            const bool holdsSign = std::any_of(mark.begin(), mark.end(), [](QChar c) { return isFigure(c) || isSign(c); });
-            if (mark.isEmpty() || known || holdsSign || guess.style.marks.size() >= most)
-                continue;
-            const QString currency = currencyOfSign(mark);
-            guess.style.marks.push_back({mark, currency});
-            if (currency.isEmpty() && (mark.contains(QLatin1Char('$')) || mark.contains(QChar(0xA5)) || mark == QLatin1String("kr")))
-                guess.tellNothing << mark;
-        }
-    }
-}
-
 } // namespace
 
 NumberText takeApart(const QString& text)
@@ -124,8 +102,7 @@ NumberText takeApart(const QString& text)
 NumbersGuess guessNumbers(const std::vector<QString>& prices, const std::vector<QString>& others, char delimiter)
 {
     NumbersGuess guess;
-    addMarks(prices, guess);
-    addMarks(others, guess);
+    guessMarks(prices, others, guess);
     const std::vector<QString> priceFigures = figuresOf(prices);
     const std::vector<QString> otherFigures = figuresOf(others);
     const qsizetype all = qsizetype(priceFigures.size() + otherFigures.size());

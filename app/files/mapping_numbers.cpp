@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "mapping_numbers.h"
 
+#include "words.h"
+
 #include <algorithm>
 #include <span>
 
@@ -173,6 +175,33 @@ bool NumberReader::readDigits(std::string_view text, std::string& plain) const
         return false;
     (plain += '.') += decimals;
     return true;
+}
+
+std::optional<Complaint> twoWaysTrouble(std::string_view plain, const Currency& currency)
+{
+    const std::size_t point = plain.find('.');
+    const bool groupOfThree = point != std::string_view::npos && point >= 1 && point <= 3 && plain.size() - point == 4 &&
+                              std::all_of(plain.begin(), plain.end(), [](char c) { return isDigit(c) || c == '.'; });
+    if (!groupOfThree || plain[0] == '0' || currency.decimals >= 3)
+        return {};
+    return Complaint{
+        Words::tr("can be read in two ways, with decimals or as thousands"),
+        currency.decimals == 0
+            ? Words::tr("the grouping mark in the mapping, or an amount without decimals (%1)").arg(QString::fromStdString(currency.code))
+            : Words::tr("the grouping mark in the mapping, or an amount with two decimals (%1)")
+                  .arg(QString::fromStdString(currency.code))};
+}
+
+bool beginsWithWords(const QString& folded, const QString& prefix)
+{
+    if (!folded.startsWith(prefix))
+        return false;
+    if (prefix.isEmpty() || folded.size() == prefix.size())
+        return true;
+    const auto isOfWord = [](char32_t c) { return QChar::isLetter(c) || QChar::isMark(c); };
+    const QList<uint> last = prefix.right(2).toUcs4();
+    const QList<uint> next = folded.mid(prefix.size(), 2).toUcs4();
+    return !isOfWord(last.back()) || !isOfWord(next.front());
 }
 
 std::string hundredthOf(std::string_view plain)

@@ -5,6 +5,7 @@
 #include "cell_values.h"
 #include "mapping.h"
 
+#include <optional>
 #include <string>
 #include <string_view>
 #include <vector>
@@ -51,6 +52,13 @@ private:
     std::vector<Mark> m_marks; ///< The longest first, so that "US$" is not taken for "$".
     QString m_example;
 };
+
+/// A price of one to three figures and exactly three decimals may as well be a grouped whole number: 1.250 is one and a quarter or one
+/// thousand two hundred and fifty. Asked where the style has no grouping mark that would tell; nothing for a currency of three decimals.
+std::optional<Complaint> twoWaysTrouble(std::string_view plain, const Currency& currency);
+
+/// `folded` begins with `prefix`, and no word goes on behind it: "sum" begins "sum of may", not "summer lane". Both as foldedText has them.
+bool beginsWithWords(const QString& folded, const QString& prefix);
 
 /// A hundredth of a plain number, exactly: "25" gives "0.25".
 std::string hundredthOf(std::string_view plain);

@@ -62,6 +62,9 @@ public:
             columns(top.value(Key("columns")), mapping);
         if (top.has(Key("numbers")))
             mapping.numbers = numbers(top.value(Key("numbers")));
+        else
+            top.refuse(Key("numbers"), Words::tr("missing"),
+                       Words::tr("an object that says how numbers are written: \"decimal\" and \"grouping\""));
         each(top, Key("statuses"),
              [&](const QJsonValue& value, const QString& place) { mapping.statuses.push_back(status(value, place)); });
         if (top.has(Key("locked"))) {

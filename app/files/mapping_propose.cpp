@@ -89,53 +89,99 @@ private:
         return column;
     }
 
+    struct FoundRule {
+        SkipRule rule;
+        qsizetype at = 0;  ///< Index of the rule's column.
+        bool lone = false; ///< The row holds one cell, and its first word is no word for a total.
+
+        bool matches(const QStringList& row) const
+        {
+            const QString text = row.value(at);
+            return rule.kind == SkipRule::Kind::isEmpty ? text.trimmed().isEmpty()
+                                                        : beginsWithWords(foldedText(text), foldedText(rule.text));
+        }
+    };
+
     // Totals and footers. They are taken out of the rows, so that they do not spoil the second look at the columns.
     void findLinesThatAreNoUnits()
     {
-        qsizetype found = 0;
-        SampleRecords units;
-        for (QStringList& row : m_rows) {
-            const std::optional<SkipRule> rule = ruleFor(row);
-            if (!rule) {
-                units.push_back(std::move(row));
-                continue;
-            }
-            ++found;
-            if (std::find(mapping().skip.begin(), mapping().skip.end(), *rule) == mapping().skip.end())
-                mapping().skip.push_back(*rule);
-        }
+        constexpr std::size_t mostTried = 20;
         constexpr std::size_t mostRules = 5;
-        if (mapping().skip.size() > mostRules)
-            mapping().skip.resize(mostRules);
-        m_rows = std::move(units);
-        if (found > 0)
+        std::vector<FoundRule> tried;
+        for (const QStringList& row : m_rows) {
+            const std::optional<FoundRule> found = ruleFor(row);
+            if (found && tried.size() < mostTried &&
+                std::none_of(tried.begin(), tried.end(), [&](const FoundRule& one) { return one.rule == found->rule; }))
+                tried.push_back(*found);
+        }
+        std::erase_if(tried, [this](const FoundRule& found) {
+            if (found.lone && standsInUnitRows(found.rule.text, found.at))
+                return true;
+            return std::any_of(m_rows.begin(), m_rows.end(), [&](const QStringList& row) { return isUnit(row) && found.matches(row); });
+        });
+        tried.resize(std::min(tried.size(), mostRules));
+        const auto passed = std::stable_partition(m_rows.begin(), m_rows.end(), [&tried](const QStringList& row) {
+            return std::none_of(tried.begin(), tried.end(), [&row](const FoundRule& found) { return found.matches(row); });
+        });
+        for (FoundRule& found : tried)
+            mapping().skip.push_back(std::move(found.rule));
+        if (passed != m_rows.end())
             note(Words::tr("lines that seem to be no units (totals, footers) will be passed over: %1 in the sample. Look at the rules")
-                     .arg(found));
+                     .arg(m_rows.end() - passed));
+        m_rows.erase(passed, m_rows.end());
     }
 
-    std::optional<SkipRule> ruleFor(const QStringList& row) const
+    bool isUnit(const QStringList& row) const
+    {
+        return place(Column::unit) >= 0 && !row.value(place(Column::unit)).trimmed().isEmpty() && hasKnownStatus(row);
+    }
+
+    bool hasKnownStatus(const QStringList& row) const
+    {
+        const int at = place(Column::status);
+        if (at < 0)
+            return false;
+        const QString text = row.value(at);
+        return statusOfTradeWord(text) || (statusOfYes(m_proposal.headers[at]) && yesNoOfTradeWord(text));
+    }
+
+    // Does the word stand in the column in a row that holds more than this one cell?
+    bool standsInUnitRows(const QString& word, qsizetype at) const
+    {
+        const QString wanted = foldedText(word);
+        return std::any_of(m_rows.begin(), m_rows.end(), [&](const QStringList& row) {
+            const QString text = foldedText(row.value(at));
+            return (text.split(QLatin1Char(' ')).contains(wanted) || beginsWithWords(text, wanted)) && filledCells(row) > 1;
+        });
+    }
+
+    static qsizetype filledCells(const QStringList& row)
+    {
+        return std::count_if(row.begin(), row.end(), [](const QString& cell) { return !cell.trimmed().isEmpty(); });
+    }
+
+    std::optional<FoundRule> ruleFor(const QStringList& row) const
     {
         const auto text = [&row](int at) { return at < 0 ? QString() : row.value(at).trimmed(); };
-        const auto filled = std::count_if(row.begin(), row.end(), [](const QString& cell) { return !cell.trimmed().isEmpty(); });
         const int unit = place(Column::unit);
         const qsizetype width = std::min(row.size(), m_proposal.headers.size());
         qsizetype totalAt = -1;
         for (qsizetype i = 0; i < width && totalAt < 0; ++i)
             totalAt = totalWordAtBeginning(row[i]).isEmpty() ? -1 : i;
         // A site may be called so: a line of a total has no status.
-        if (place(Column::status) >= 0 && !text(place(Column::status)).isEmpty() && statusOfTradeWord(text(place(Column::status))))
+        if (hasKnownStatus(row))
             totalAt = -1;
         const bool noUnit = unit >= 0 && text(unit).isEmpty();
         if (noUnit && (totalAt >= 0 || text(place(Column::status)).isEmpty()))
-            return SkipRule{SkipRule::Kind::isEmpty, columnAt(unit), {}};
+            return FoundRule{{SkipRule::Kind::isEmpty, columnAt(unit), {}}, unit, false};
         if (totalAt >= 0)
-            return SkipRule{SkipRule::Kind::beginsWith, columnAt(totalAt), totalWordAtBeginning(row[totalAt])};
-        if (filled != 1 || m_proposal.headers.size() < 3)
+            return FoundRule{{SkipRule::Kind::beginsWith, columnAt(totalAt), totalWordAtBeginning(row[totalAt])}, totalAt, false};
+        if (m_proposal.headers.size() < 3 || filledCells(row) != 1)
             return {};
         const auto only = std::find_if(row.begin(), row.end(), [](const QString& cell) { return !cell.trimmed().isEmpty(); }) - row.begin();
-        return only < width
-                   ? std::optional(SkipRule{SkipRule::Kind::beginsWith, columnAt(only), row[only].simplified().section(u' ', 0, 0)})
-                   : std::nullopt;
+        return only < width ? std::optional(FoundRule{
+                                  {SkipRule::Kind::beginsWith, columnAt(only), row[only].simplified().section(u' ', 0, 0)}, only, true})
+                            : std::nullopt;
     }
 
     void setSources()
@@ -179,7 +225,26 @@ private:
         }
         for (const QString& sign : guess.tellNothing)
             note(Words::tr("the sign '%1' stands for more than one currency. Say which it is").arg(sign));
+        noteMarks(guess);
         currencyOfHeader();
+    }
+
+    void noteMarks(const NumbersGuess& guess)
+    {
+        const auto quoted = [](const QStringList& texts) {
+            QStringList shown;
+            for (const QString& text : texts)
+                shown << QStringLiteral("'%1'").arg(shownText(text));
+            return shown.join(QStringLiteral(", "));
+        };
+        if (!guess.unknownMarks.isEmpty())
+            note(Words::tr("beside numbers stands what is not known here, and it will be taken off: %1. Take out of the signs what changes "
+                           "an amount")
+                     .arg(quoted(guess.unknownMarks)));
+        if (!guess.otherPeriods.isEmpty())
+            note(Words::tr("prices are for different periods: '%1', and %2 too. Only '%1' will be taken off, and rows with another period "
+                           "will be refused: a list has prices for one period")
+                     .arg(shownText(guess.period), quoted(guess.otherPeriods)));
     }
 
     bool chancesArePercent() const

@@ -88,7 +88,9 @@ QString settleCurrency(const FirstLook& look, const QString& asked, const QStrin
     if (!look.currency)
         return {};
     if (!asked.isEmpty() && out != *look.currency)
-        return Words::tr("%1:%2: the file's currency is %3, but %4 was asked for. Ask for %3 or for none, or correct the file")
+        return Words::tr(
+                   "%1:%2: the file's currency is %3, but %4 is wanted. Take a file in %4, or correct this one; a command can name %3 or "
+                   "none")
             .arg(fileName, QString::number(look.currencyLine), QString::fromStdString(look.currency->code),
                  QString::fromStdString(out.code));
     out = *look.currency;

@@ -180,6 +180,84 @@ private slots:
         QCOMPARE(proposal.notes.filter(QStringLiteral("two ways")).size(), qsizetype(ambiguous ? 1 : 0));
     }
 
+    // No rule that would pass over a unit of the sample.
+    void proposedRulesLeaveUnitsAlone()
+    {
+        const QByteArray header = "Site,Size,Unit,Rent,Status\n";
+        const QByteArray lane = "Summer Lane,A,u1,80.00,free\nSummer Lane,A,u2,81.00,let\nWinter Row,A,u3,82.00,free\n";
+        // The total stands in the unit's column, so that only its word tells it.
+        const QByteArray total = ",,Sum,243.00,\n";
+        const auto skipOf = [&](const QByteArray& rows) { return proposeMapping({header + rows, true}).mapping.skip; };
+        QCOMPARE(skipOf(lane + total), (std::vector<SkipRule>{{SkipRule::Kind::beginsWith, {"Unit", 1}, "Sum"}}));
+        const MappedListResult read = readMappedList(header + QByteArray(lane).replace(",u1,", ",Summer 1,") + total, "F", [&] {
+            ImportMapping mapping = proposeMapping({header + lane + total, true}).mapping;
+            mapping.floorsMayBeMissing = true;
+            return mapping;
+        }());
+        QVERIFY2(read.list.clean(), qPrintable(read.list.fileTrouble));
+        QCOMPARE(read.list.rowsTaken, qint64(3));
+        QCOMPARE(read.rowsPassedOver, qint64(1));
+        // A unit that is called so: the rule would take it along.
+        QVERIFY(skipOf(QByteArray(lane).replace(",u1,", ",Sum 1,") + total).empty());
+        QCOMPARE(proposeMapping({header + QByteArray(lane).replace(",u1,", ",Sum 1,") + total, true}).notes.filter("passed over").size(),
+                 qsizetype(0));
+    }
+
+    // A footer of one cell gives its first word to a rule, unless units' rows have the word in that column.
+    void footersThatBeginAsUnitsDo()
+    {
+        const QByteArray header = "Unit,Size,Rent,Status\n";
+        const QByteArray units = "Print shop,A,80.00,free\nu2,A,81.00,let\nu3,A,82.00,free\nBack Room,A,83.00,no such word\n";
+        const auto skipOf = [&](const QByteArray& footer) { return proposeMapping({header + units + footer + '\n', true}).mapping.skip; };
+        QCOMPARE(skipOf("Printed today"), (std::vector<SkipRule>{{SkipRule::Kind::beginsWith, {"Unit", 1}, "Printed"}}));
+        QVERIFY(skipOf("Print date 1 May").empty());
+        QVERIFY(skipOf("Room count 4").empty()); // The word stands there, though the unit does not begin with it.
+        QVERIFY(skipOf("Back office").empty());  // Whatever its status is called.
+    }
+
+    void marksThatChangeAnAmountAreNotProposed_data()
+    {
+        QTest::addColumn<QString>("prices");
+        QTest::addColumn<QStringList>("marks");
+        QTest::addColumn<QString>("told"); // Empty: no note on marks.
+        const auto row = [](const char* name, const QString& prices, const QStringList& marks, const QString& told = {}) {
+            QTest::newRow(name) << prices << marks << told;
+        };
+        row("thousands", "1.5k|2.5K|3.5 k", {});
+        row("thousands beside a currency", "1.5 k€|€2.5|T€ 3.5", {"€"});
+        row("millions", "1.5m|2.5M|3.5 Mio", {});
+        row("brackets", "(69.00)|70.00|(71.00", {});
+        row("brackets around words", "69.00 (net)|70.00|71.00", {});
+        row("currency", "€ 69.00|70.00 EUR|71.00", {"€", "EUR"});
+        row("one period", "69.00/month|70.00 per month|71.00 p.m.", {"/month", "per month", "p.m."});
+        row("currency and period", "€69.00 /mes|€70.00 al mese|71.00 € pro Monat", {"€", "/mes", "al mese", "€ pro Monat"});
+        row("two periods", "90/month|25/week|95/month", {"/month"},
+            "prices are for different periods: '/month', and '/week' too. Only '/month' will be taken off");
+        row("two periods, the other way", "90/month|25/week|26 a week", {"/week", "a week"}, "Only '/week' will be taken off");
+        row("unknown", "ca. 69.00|70.00|71.00", {"ca."}, "it will be taken off: 'ca.'. Take out");
+        row("price for an area", "69.00 €/m²|70.00|71.00", {"€/m²"}, "it will be taken off: '€/m²'. Take out");
+        row("many currencies", "$69.00|70.00|71.00", {"$"});
+    }
+    void marksThatChangeAnAmountAreNotProposed()
+    {
+        QFETCH(QString, prices);
+        QFETCH(QStringList, marks);
+        QFETCH(QString, told);
+        QByteArray bytes = "Site,Size,Unit,Rent,Status\n";
+        int n = 0;
+        for (const QString& price : prices.split('|'))
+            bytes += "A,T,u" + QByteArray::number(++n) + ',' + price.toUtf8() + ",free\n";
+        const MappingProposal proposal = proposeMapping({bytes, true});
+        QCOMPARE(proposal.mapping.from(Column::askingPrice).column.header, QStringLiteral("Rent"));
+        QStringList proposed;
+        for (const NumberMark& mark : proposal.mapping.numbers.marks)
+            proposed << mark.text;
+        QCOMPARE(proposed, marks);
+        const QStringList notes = proposal.notes.filter(QStringLiteral("taken off"));
+        QCOMPARE(notes.size(), qsizetype(told.isEmpty() ? 0 : 1));
+        QVERIFY2(told.isEmpty() || notes[0].contains(told), qPrintable(notes.join('\n')));
+    }
+
     void valuesSpeakWhereHeadersDoNot()
     {
         const QByteArray bytes = rowsOf("f1|f2|f3|f4", "Room #|free|EUR #9.50|x", 9);

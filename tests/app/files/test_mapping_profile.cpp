@@ -2,6 +2,8 @@
 // Profiles: as JSON, and in a folder.
 #include "mapping_profile.h"
 
+#include <QJsonDocument>
+#include <QJsonObject>
 #include <QTemporaryDir>
 #include <QtTest>
 
@@ -94,6 +96,16 @@ private slots:
         QVERIFY(json.contains(from));
         json.replace(json.indexOf(from), from.size(), to);
         QVERIFY2(trouble(json).startsWith(told), qPrintable(trouble(json)));
+    }
+
+    // Without it a point and no groups would be taken for granted, and a price be wrong without a word.
+    void numbersAreNeeded()
+    {
+        QJsonObject document = QJsonDocument::fromJson(mappingToJson(everything())).object();
+        document.remove("numbers");
+        const QString told = trouble(QJsonDocument(document).toJson());
+        QVERIFY2(told.startsWith(QStringLiteral("F: numbers: missing; found nothing; wanted: an object that says how numbers are written")),
+                 qPrintable(told));
     }
 
     void notText() { QVERIFY(trouble("\xFF").startsWith(QStringLiteral("F:1: byte 1"))); }

@@ -38,6 +38,8 @@ MappedListResult readWithFloors(const QByteArray& floors, bool mayBeMissing = fa
     mapping.from(Column::advertisedFloor) = {};
     mapping.floorsFromFile = true;
     mapping.floorsMayBeMissing = mayBeMissing;
+    mapping.from(Column::currency) = ColumnSource::always(QStringLiteral("EUR"));
+    mapping.numbers.marks = {{QStringLiteral("€"), "EUR"}, {"CHF", "CHF"}};
     return readMappedList(kHeader + "A;T;1;frei;70,00;\nA;U;2;frei;80,00;\n", "F", mapping, floors, "floors.csv");
 }
 
@@ -65,9 +67,13 @@ private slots:
         row("not above 0", "A;T;1;frei;0,00;69,00",
             "F:3: column 'Miete': not above 0; found '0,00'; wanted: an amount above 0 such as 1234,50");
         row("decimals", "A;T;1;frei;70,005;69,00",
-            "F:3: column 'Miete': more decimals than the currency has; found '70,005'; wanted: an amount above 0 such as 1234,50, with at "
-            "most 2 "
-            "decimals (XXX)");
+            "F:3: column 'Miete': can be read in two ways, with decimals or as thousands; found '70,005'; wanted: the grouping mark in the "
+            "mapping, or an amount with two decimals (XXX)");
+        row("more decimals", "A;T;1;frei;70,0051;69,00",
+            "F:3: column 'Miete': more decimals than the currency has; found '70,0051'; wanted: an amount above 0 such as 1234,50, with at "
+            "most 2 decimals (XXX)");
+        row("a thousand or one", "A;T;1;frei;1,250;69,00", "F:3: column 'Miete': can be read in two ways, with decimals or as thousands");
+        row("a floor of a thousand or one", "A;U;1;frei;70,00;1,300", "F:3: column 'ab': can be read in two ways");
         row("percent price", "A;T;1;frei;70 %;69,00", "F:3: column 'Miete': not a number as the mapping has them; found '70 %'");
         row("no unit", "A;T; ;frei;70,00;69,00", "F:3: column 'Einheit': nothing in it; found nothing; wanted: a name");
         row("two troubles", "A;T;1;weg;abc;69,00",
@@ -91,6 +97,54 @@ private slots:
         // And the rest is taken once that is asked for.
         const MappedListResult without = read(kHeader + "A;T;0;frei;70,00;69,00\n" + row + '\n', german(), {{}, true});
         QCOMPARE(without.list.rowsTaken, qint64(1));
+    }
+
+    void thousandsOrDecimals_data()
+    {
+        QTest::addColumn<int>("decimal");
+        QTest::addColumn<int>("grouping");
+        QTest::addColumn<QByteArray>("currency");
+        QTest::addColumn<QByteArray>("price");
+        QTest::addColumn<qint64>("minor"); // 0: can be read in two ways.
+        const auto row = [](DecimalMark decimal, Grouping grouping, const QByteArray& currency, const QByteArray& price, qint64 minor) {
+            QTest::addRow("%d %d %s %s", int(decimal), int(grouping), currency.constData(), price.constData())
+                << int(decimal) << int(grouping) << currency << price << minor;
+        };
+        row(DecimalMark::point, Grouping::none, "EUR", "1.250", 0);
+        row(DecimalMark::point, Grouping::none, "EUR", "1.300", 0);
+        row(DecimalMark::point, Grouping::none, "EUR", "1.000", 0);
+        row(DecimalMark::point, Grouping::none, "JPY", "100.000", 0);
+        row(DecimalMark::comma, Grouping::none, "EUR", "1,250", 0);
+        row(DecimalMark::point, Grouping::none, "EUR", "1.25", 125);
+        row(DecimalMark::point, Grouping::none, "EUR", "1.2500", 125);      // No group has four figures,
+        row(DecimalMark::point, Grouping::none, "EUR", "1234.500", 123450); // nor is there one before four.
+        row(DecimalMark::point, Grouping::none, "EUR", "0.500", 50);
+        row(DecimalMark::comma, Grouping::point, "EUR", "1.250", 125000);
+        row(DecimalMark::point, Grouping::comma, "EUR", "1,250", 125000);
+        row(DecimalMark::point, Grouping::comma, "EUR", "1.250", 125); // The mapping says that the comma groups.
+        row(DecimalMark::point, Grouping::none, "KWD", "1.250", 1250); // Three decimals by ISO 4217.
+    }
+    void thousandsOrDecimals()
+    {
+        QFETCH(int, decimal);
+        QFETCH(int, grouping);
+        QFETCH(QByteArray, currency);
+        QFETCH(QByteArray, price);
+        QFETCH(qint64, minor);
+        ImportMapping mapping = german();
+        mapping.numbers.decimal = DecimalMark(decimal);
+        mapping.numbers.grouping = Grouping(grouping);
+        mapping.from(Column::currency) = ColumnSource::always(QString::fromLatin1(currency));
+        mapping.from(Column::advertisedFloor) = {};
+        mapping.floorsMayBeMissing = true;
+        const MappedListResult result = read(kHeader + "A;T;1;frei;" + price + ";\n", mapping);
+        QCOMPARE(result.list.fileTrouble, QString());
+        if (minor == 0) {
+            QVERIFY(result.list.refused.at(0).wrong.startsWith("can be read in two ways"));
+            QVERIFY(result.list.refused.at(0).wanted.startsWith("the grouping mark in the mapping, or an amount with"));
+        } else {
+            QCOMPARE(result.list.tiers.at(0).tier.units.at(0).asking.minor, std::int64_t(minor));
+        }
     }
 
     void emptyCellsBehindTheLastColumnDoNoHarm() { QVERIFY(read(kHeader + "A;T;0;frei;70,00;69,00;;\n").list.clean()); }
@@ -161,8 +215,7 @@ private slots:
         QVERIFY2(two.list.refused[0].text("F").contains("another currency than on line 2"), qPrintable(two.list.refused[0].text("F")));
         const MappedListResult within = read(kHeader + "A;T;2;frei;CHF 70,00;\x80 69,00\n", mapping);
         QVERIFY(within.list.refused.at(0).wrong.startsWith("one currency beside the price and another beside the floor"));
-        QVERIFY(
-            read(kHeader + euro, mapping, {"USD", false}).list.fileTrouble.contains("the list's currency is EUR, but USD was asked for"));
+        QVERIFY(read(kHeader + euro, mapping, {"USD", false}).list.fileTrouble.contains("the list's currency is EUR, but USD is wanted"));
         QCOMPARE(read(kHeader + "A;T;0;frei;70,00;69,00\n", german(), {"USD", false}).list.currency.code, std::string("USD"));
     }
 
@@ -209,6 +262,10 @@ private slots:
         QCOMPARE(fine.list.tiers[1].tier.advertisedFloor.minor, std::int64_t(7900));
         // A spreadsheet's semicolons bring its decimal comma with them.
         QVERIFY(readWithFloors("site;tier;advertised_floor\nA;T;69,00\nA;U;79,50\n").list.clean());
+        // Empty cells behind the last column do no harm, nor does the list's own currency.
+        QVERIFY(readWithFloors("site,tier,advertised_floor\nA,T,69.00,,\nA,U,79\n").list.clean());
+        const MappedListResult euro = readWithFloors("site;tier;advertised_floor\nA;T;€ 69,00\nA;U;79,50 €\n");
+        QVERIFY2(euro.list.clean(), qPrintable(euro.list.fileTrouble));
     }
 
     void floorsInTrouble_data()
@@ -224,6 +281,20 @@ private slots:
             "floors.csv: not a file of floors; found the header 'a, b, c'; wanted: a header row with the columns site");
         row("empty", "", "floors.csv: not a file of floors; found the header ''");
         row("too few cells", "site,tier,advertised_floor\nA,T\n", "floors.csv:2: too few cells; found 2; wanted: 3");
+        row("decimal comma", "site,tier,advertised_floor\nA,T,69,50\nA,U,70\n",
+            "floors.csv:2: too many cells; found 4; wanted: 3, as in the header row (',' inside a cell, such as a decimal comma, needs");
+        row("percentage", "site;tier;advertised_floor\nA;T;69%\nA;U;70\n",
+            "floors.csv:2: column 'advertised_floor': a percentage, not a floor; found '69%'; wanted: an amount above 0 such as 1234,50");
+        row("ours as a percentage", "site,tier,advertised_floor\nA,T,69%\n",
+            "floors.csv:2: column 'advertised_floor': not a floor; found '69%'");
+        row("another currency", "site;tier;advertised_floor\nA;T;CHF 69,00\nA;U;70\n",
+            "floors.csv:2: column 'advertised_floor': the sign beside the floor stands for CHF and the list's currency is EUR; found 'CHF "
+            "69,00'; wanted: floors in the list's currency");
+        row("sign in our own spelling", "site,tier,advertised_floor\nA,T,CHF 69.00\n",
+            "floors.csv:2: column 'advertised_floor': not a floor; found 'CHF 69.00'");
+        row("thousands or decimals", "site;tier;advertised_floor\nA;T;69\nA;U;1,250\n",
+            "floors.csv:3: column 'advertised_floor': can be read in two ways, with decimals or as thousands; found '1,250'; wanted: the "
+            "grouping mark in the mapping, or an amount with two decimals (EUR)");
         row("no tier", "site,tier,advertised_floor\nA,,69\n", "floors.csv:2: no tier; found nothing");
     }
     void floorsInTrouble()
@@ -271,6 +342,20 @@ private slots:
         QCOMPARE(result.rowsPassedOver, qint64(3)); // A line in which nothing stands is no row.
         QCOMPARE(result.passedOver[0].rows, qint64(2));
         QCOMPARE(result.passedOver[1].firstLine, qint64(3));
+    }
+
+    // "Sum" is the beginning of a total, not of Summer Lane.
+    void rulesMatchWholeWords()
+    {
+        ImportMapping mapping = german();
+        mapping.skip = {{SkipRule::Kind::beginsWith, {"Standort", 1}, "Sum"}, {SkipRule::Kind::beginsWith, {"Standort", 1}, "#"}};
+        const QByteArray unit = ";T;1;frei;70,00;69,00\n";
+        const MappedListResult result = read(
+            kHeader + "Summer Lane" + unit + "Sum\xFC" + unit + "sum;;;;;\nSum: 2;;;;;\nSUM of all;;;;;\nSum2;;;;;\n#note;;;;;\n", mapping);
+        QVERIFY2(result.list.clean(), qPrintable(result.list.fileTrouble));
+        QCOMPARE(result.list.rowsTaken, qint64(2));
+        QCOMPARE(result.passedOver[0].rows, qint64(4));
+        QCOMPARE(result.passedOver[1].rows, qint64(1)); // No word goes on behind a sign.
     }
 
     void cancelling()

@@ -180,7 +180,7 @@ private slots:
         QCOMPARE(read.tiers[0].tier.units[0].asking.minor, std::int64_t(7000));
         QVERIFY(readList(late, false, QStringLiteral("JPY")).clean());
         const QString quarrel = readList(late, false, QStringLiteral("EUR")).fileTrouble;
-        QVERIFY2(quarrel.startsWith(QStringLiteral("F:3: the file's currency is JPY, but EUR was asked for")), qPrintable(quarrel));
+        QVERIFY2(quarrel.startsWith(QStringLiteral("F:3: the file's currency is JPY, but EUR is wanted")), qPrintable(quarrel));
         QVERIFY(readList(late, false, QStringLiteral("EURO")).fileTrouble.contains(QStringLiteral("'EURO' is not a currency")));
         QVERIFY(readList(late, false, QStringLiteral("XAU")).fileTrouble.contains(QStringLiteral("ISO 4217")));
         const UnitListResult two = readList(header + "Q,T,U,7000,vacant,6000,JPY\nQ,T,V,70.50,vacant,,EUR\nQ,T,W,7,vacant,,US$\n");
