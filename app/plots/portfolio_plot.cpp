@@ -51,18 +51,21 @@ PortfolioPlot::PortfolioPlot(QWidget* parent) : PaperPlot(parent, Marks::buffere
 
 void PortfolioPlot::setSources(Worklist* list, Workbench* bench)
 {
-    if (m_list)
+    if (m_list) {
         m_list->disconnect(this);
+        m_list->document().disconnect(this);
+    }
     if (m_bench)
         m_bench->disconnect(this);
     m_list = list;
     m_bench = bench;
     if (list) {
-        connect(list, &Worklist::reset, this, &PortfolioPlot::takeRows);
+        connect(list, &Worklist::reset, this, [this] { takeRows(Tiers::others); });
+        connect(&list->document(), &Document::saveStateChanged, this, &PortfolioPlot::showHeading);
         // While figures come in by pieces the picture would be drawn a hundred times over: it waits for the last.
         connect(list, &Worklist::rowsChanged, this, [this] {
             if (!m_list->measuring())
-                takeRows();
+                takeRows(Tiers::same);
         });
         connect(list, &Worklist::pickChanged, this, [this] {
             marksChanged();
@@ -71,12 +74,13 @@ void PortfolioPlot::setSources(Worklist* list, Workbench* bench)
     }
     if (bench)
         connect(bench, &Workbench::reset, this, qOverload<>(&QWidget::update));
-    takeRows();
+    takeRows(Tiers::others);
 }
 
-void PortfolioPlot::takeRows()
+void PortfolioPlot::takeRows(Tiers tiers)
 {
-    m_hover = m_cursor = -1;
+    const int tierAtCursor = tiers == Tiers::same && m_cursor >= 0 ? point(m_cursor).tier : -1;
+    const bool ringAtCursor = m_hover >= 0 && m_hover == m_cursor;
     m_pressed = m_boxing = false;
     m_all = m_list ? portfolioPoints(*m_list) : PortfolioPoints{};
     m_pointOf.assign(static_cast<std::size_t>(m_list ? m_list->count() : 0), -1);
@@ -87,16 +91,24 @@ void PortfolioPlot::takeRows()
         leans.push_back(m_all.points[i].lean);
         shares.push_back(m_all.points[i].share);
     }
+    // Keys go on from where they were, as long as that tier is in the picture.
+    m_cursor = tierAtCursor >= 0 ? m_pointOf[static_cast<std::size_t>(tierAtCursor)] : -1;
+    m_hover = ringAtCursor ? m_cursor : -1;
     const FlagThresholds thresholds = m_list ? m_list->thresholds() : FlagThresholds{};
     m_leanRange = robustRange(std::move(leans), {0.0, thresholds.leansLeft});
     m_shareRange = robustRange(std::move(shares), {0.0, thresholds.gapShare});
     xAxis->setRange(m_leanRange.lower, m_leanRange.upper);
     yAxis->setRange(m_shareRange.lower, m_shareRange.upper);
-    if (m_list)
-        setPictureHeading(tr("%1 · portfolio of %2 tiers").arg(isolated(m_list->document().displayName()), number(m_list->count())));
+    showHeading();
     areaChanged();
     describe();
     redrawAll();
+}
+
+void PortfolioPlot::showHeading()
+{
+    if (m_list)
+        setPictureHeading(tr("%1 · portfolio of %2 tiers").arg(isolated(m_list->document().displayName()), number(m_list->count())));
 }
 
 int PortfolioPlot::noteHeight() const
@@ -199,7 +211,7 @@ void PortfolioPlot::describe()
     if (!note.isEmpty())
         said += QLatin1Char('\n') + note;
     if (m_cursor >= 0)
-        said = pointText(m_cursor) + QLatin1Char('\n') + said;
+        said = pointText(m_cursor) + (m_list->isPicked(point(m_cursor).tier) ? tr("\npicked") : QString()) + QLatin1Char('\n') + said;
     setAccessibleDescription(said);
 }
 
@@ -298,10 +310,17 @@ void PortfolioPlot::finishBox(const QRectF& box)
     if (tiers.empty())
         emit told(tr("No tier lies in the box."));
     else
-        emit told(tiers.size() == 1
-                      ? tr("1 tier picked; the worklist shows it. Esc shows all again.")
-                      : tr("%1 tiers picked; the worklist shows these. Esc shows all again.").arg(number(qint64(tiers.size()))));
+        tellPicked(tiers.size());
     m_list->pick(tiers);
+}
+
+void PortfolioPlot::tellPicked(std::size_t tiers)
+{
+    if (tiers == 0)
+        emit told(tr("The worklist shows all tiers again."));
+    else
+        emit told(tiers == 1 ? tr("1 tier picked; the worklist shows it. Esc shows all again.")
+                             : tr("%1 tiers picked; the worklist shows these. Esc shows all again.").arg(number(qint64(tiers))));
 }
 
 void PortfolioPlot::moveCursor(int key)
@@ -334,6 +353,22 @@ void PortfolioPlot::moveCursor(int key)
     setHover(best, mapToGlobal(m_shape.places()[static_cast<std::size_t>(best)].toPoint() + QPoint(8, 8)));
 }
 
+void PortfolioPlot::pickAtCursor(bool toggle, int before)
+{
+    if (!m_list || m_cursor < 0)
+        return;
+    const int here = point(m_cursor).tier;
+    const bool letGo = toggle && m_list->isPicked(here);
+    std::vector<int> tiers;
+    for (int tier = 0; tier < m_list->count(); ++tier) {
+        const bool wanted = tier == here ? !letGo : m_list->isPicked(tier) || (before >= 0 && tier == point(before).tier);
+        if (wanted)
+            tiers.push_back(tier);
+    }
+    tellPicked(tiers.size());
+    m_list->pick(tiers);
+}
+
 void PortfolioPlot::keyPressEvent(QKeyEvent* event)
 {
     event->accept();
@@ -342,8 +377,15 @@ void PortfolioPlot::keyPressEvent(QKeyEvent* event)
     case Qt::Key_Down:
     case Qt::Key_Left:
     case Qt::Key_Right:
-    case Qt::Key_Home:
+    case Qt::Key_Home: {
+        const int before = m_cursor;
         moveCursor(event->key());
+        if (event->modifiers() & Qt::ShiftModifier)
+            pickAtCursor(false, before);
+        return;
+    }
+    case Qt::Key_Space:
+        pickAtCursor(true, -1);
         return;
     case Qt::Key_Return:
     case Qt::Key_Enter:

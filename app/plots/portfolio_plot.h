@@ -17,7 +17,8 @@ namespace rungwright
 /// neither. Of many tiers, cells that hold several are shaded by their number and only scattered ones are drawn one by one. Thresholds
 /// are drawn and named; tiers that cannot be placed are counted in words.
 /// Pointing names a tier and a click chooses it; a box drawn over tiers picks them in the worklist, Esc gives them back. Keys: Up and Down
-/// walk by gap share, Left and Right by lean, Home to the greatest gap share, Enter chooses.
+/// walk by gap share, Left and Right by lean, Home to the greatest gap share, Enter chooses; Space picks the tier under the cursor or
+/// lets it go, a step with Shift adds where it leads.
 class PortfolioPlot : public PaperPlot
 {
     Q_OBJECT
@@ -57,7 +58,9 @@ protected:
     void focusOutEvent(QFocusEvent* event) override;
 
 private:
-    void takeRows();
+    enum class Tiers { others, same };
+    void takeRows(Tiers tiers);
+    void showHeading();
     void describe();
     void setMargins();
     int noteHeight() const;
@@ -68,7 +71,9 @@ private:
     QString pointText(int index) const;
     void setHover(int index, const QPoint& at);
     void moveCursor(int key);
+    void pickAtCursor(bool toggle, int before);
     void finishBox(const QRectF& box);
+    void tellPicked(std::size_t tiers);
     void paintThresholds(QPainter& painter);
     void paintDensity(QPainter& painter);
     void paintPoint(QPainter& painter, int index, bool picked);

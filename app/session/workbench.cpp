@@ -32,6 +32,13 @@ QString Workbench::candidateName() const
 
 void Workbench::showTier(int tier, int candidate)
 {
+    if (tier != m_tier)
+        m_gone.reset();
+    show(tier, candidate);
+}
+
+void Workbench::show(int tier, int candidate)
+{
     giveUpGesture();
     const TierCase* tc = m_document.tier(tier);
     if (m_tier != tier)
@@ -113,7 +120,8 @@ void Workbench::onDocumentChanged(const DocumentChange& change)
     if (change.kind == Kind::everything) {
         m_selection.clear();
         m_tier = -1;
-        showTier(m_document.empty() ? -1 : 0);
+        m_gone.reset();
+        show(m_document.empty() ? -1 : 0, -1);
         if (interrupted)
             emit gestureChanged();
         return;
@@ -127,23 +135,32 @@ void Workbench::onDocumentChanged(const DocumentChange& change)
     // An undo may reach back to another tier or candidate: show where it happened.
     const int tier = change.tier < 0 ? m_tier : change.tier;
     const bool namesCandidate = change.kind == Kind::prices || change.kind == Kind::candidates;
-    showTier(tier, namesCandidate || tier != m_tier ? change.candidate : m_candidate);
+    show(tier, namesCandidate || tier != m_tier ? change.candidate : m_candidate);
     if (interrupted)
         emit gestureChanged();
 }
 
 void Workbench::onRefreshed()
 {
-    const TierCase* same = findTier(m_document.scenario(), m_site, m_tierName);
-    const int candidate = same ? m_candidate : -1;
+    const Scenario& scenario = m_document.scenario();
+    const TierCase* same = m_gone ? findTier(scenario, m_gone->site, m_gone->name) : nullptr;
+    int candidate = -1;
+    if (same) { // it is back
+        candidate = m_gone->candidate;
+        m_gone.reset();
+    } else if ((same = findTier(scenario, m_site, m_tierName))) {
+        candidate = m_candidate;
+    } else if (!m_gone && m_tier >= 0) {
+        m_gone = {m_site, m_tierName, m_candidate};
+    }
     int tier = m_document.empty() ? -1 : 0;
-    for (int i = 0; same && i < static_cast<int>(m_document.scenario().tiers.size()); ++i) {
+    for (int i = 0; same && i < static_cast<int>(scenario.tiers.size()); ++i) {
         if (m_document.tier(i) == same)
             tier = i;
     }
     m_selection.clear(); // its units may stand elsewhere now
     m_tier = -1;
-    showTier(tier, candidate);
+    show(tier, candidate);
 }
 
 // Gestures -----------------------------------------------------------------------------------------------------------

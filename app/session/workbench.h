@@ -9,6 +9,7 @@
 #include <QObject>
 
 #include <cstdint>
+#include <optional>
 #include <span>
 #include <string>
 #include <vector>
@@ -37,6 +38,8 @@ public:
     /// "current" or the candidate's name.
     QString candidateName() const;
 
+    /// The tier the user wants to see. Where an edit, an undo or a refresh leads, the bench goes by itself: when its tier leaves by a
+    /// refresh it shows the first, and goes back when the tier is there again, unless the user has chosen another meanwhile.
     void showTier(int tier, int candidate = -1);
     void workOn(int candidate);
 
@@ -104,6 +107,7 @@ signals:
 private:
     void onDocumentChanged(const DocumentChange& change);
     void onRefreshed();
+    void show(int tier, int candidate);
     void remeasure();
     void remeasureWorked();
     bool startGesture(Gesture gesture, std::vector<std::uint32_t> units);
@@ -118,6 +122,13 @@ private:
     int m_candidate = -1;
     std::string m_site; ///< Of the tier shown: after a refresh it is found again by its names.
     std::string m_tierName;
+    /// A tier that left the bench by a refresh.
+    struct Gone {
+        std::string site;
+        std::string name;
+        int candidate = -1;
+    };
+    std::optional<Gone> m_gone;
     ModelSettings m_settings;
     Measurer m_measureCurrent;
     Measurer m_measureWorked;

@@ -102,9 +102,13 @@ void Worklist::measureInBackground()
     m_cancel = std::make_shared<std::atomic<bool>>(false);
     // The thread reads a copy of its own: the list may change meanwhile.
     m_worker = std::jthread([this, tiers = m_document.scenario().tiers, cancel = m_cancel, round = m_round] {
+        NameRanks inAlphabet = nameRanks(tiers, *cancel);
+        std::vector<QString> folded = searchTexts(tiers, *cancel);
+        if (*cancel)
+            return;
         QMetaObject::invokeMethod(
             this,
-            [this, round, ranks = nameRanks(tiers), search = searchTexts(tiers)]() mutable {
+            [this, round, ranks = std::move(inAlphabet), search = std::move(folded)]() mutable {
                 if (round != m_round)
                     return;
                 m_ranks = std::move(ranks);

@@ -37,15 +37,18 @@ private:
 };
 
 /// The place of every text in the user's alphabet.
-std::vector<std::uint32_t> ranks(const std::vector<QString>& texts)
+std::vector<std::uint32_t> ranks(const std::vector<QString>& texts, const std::atomic<bool>& cancel)
 {
     QCollator collator;
     collator.setNumericMode(true);
     collator.setCaseSensitivity(Qt::CaseInsensitive);
     std::vector<QCollatorSortKey> keys;
     keys.reserve(texts.size());
-    for (const QString& text : texts)
+    for (const QString& text : texts) {
+        if (cancel)
+            return {};
         keys.push_back(collator.sortKey(text));
+    }
     std::vector<std::uint32_t> order(texts.size());
     std::iota(order.begin(), order.end(), 0U);
     std::sort(order.begin(), order.end(), [&](std::uint32_t a, std::uint32_t b) { return keys[a] < keys[b]; });
@@ -74,28 +77,35 @@ WorklistNames worklistNames(const TierList& tiers)
 
 QString searchText(const Tier& tier) { return (fromUtf8(tier.site) + QLatin1Char(' ') + fromUtf8(tier.name)).toCaseFolded(); }
 
-std::vector<QString> searchTexts(const TierList& tiers)
+std::vector<QString> searchTexts(const TierList& tiers, const std::atomic<bool>& cancel)
 {
     std::vector<QString> texts;
     texts.reserve(tiers.size());
-    for (const TierCase& tierCase : tiers)
+    for (const TierCase& tierCase : tiers) {
+        if (cancel)
+            return {};
         texts.push_back(searchText(tierCase.tier));
+    }
     return texts;
 }
 
-NameRanks nameRanks(const TierList& tiers)
+NameRanks nameRanks(const TierList& tiers, const std::atomic<bool>& cancel)
 {
     Numbering sites;
     Numbering names;
     std::vector<std::uint32_t> name;
     name.reserve(tiers.size());
     for (const TierCase& tierCase : tiers) {
+        if (cancel)
+            return {};
         sites.of(tierCase.tier.site);
         name.push_back(names.of(tierCase.tier.name));
     }
-    const std::vector<std::uint32_t> places = ranks(names.texts);
+    const std::vector<std::uint32_t> places = ranks(names.texts, cancel);
     NameRanks found;
-    found.site = ranks(sites.texts);
+    found.site = ranks(sites.texts, cancel);
+    if (cancel)
+        return {};
     found.tier.reserve(name.size());
     for (const std::uint32_t n : name)
         found.tier.push_back(places[n]);

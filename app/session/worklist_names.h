@@ -6,6 +6,7 @@
 
 #include <QString>
 
+#include <atomic>
 #include <cstdint>
 #include <vector>
 
@@ -17,6 +18,9 @@ struct WorklistNames {
     std::vector<std::uint32_t> site; ///< By tier: index into `sites`.
 };
 
+/// For who has the time.
+inline const std::atomic<bool> kNeverCancelled{false};
+
 WorklistNames worklistNames(const TierList& tiers);
 
 /// Places in the user's alphabet, numbers in names by their value ("Room 2" before "Room 10"); equal names have equal places.
@@ -25,11 +29,12 @@ struct NameRanks {
     std::vector<std::uint32_t> tier; ///< By tier.
 };
 
-/// The slow part: to be called from any thread.
-NameRanks nameRanks(const TierList& tiers);
+/// The slow part: to be called from any thread. What comes back after `cancel` became true is worth nothing.
+NameRanks nameRanks(const TierList& tiers, const std::atomic<bool>& cancel = kNeverCancelled);
 
 /// Site and name, case folded, to look for words in.
 QString searchText(const Tier& tier);
-std::vector<QString> searchTexts(const TierList& tiers);
+/// Cancelled as above.
+std::vector<QString> searchTexts(const TierList& tiers, const std::atomic<bool>& cancel = kNeverCancelled);
 
 } // namespace rungwright

@@ -180,6 +180,52 @@ private slots:
                 on.plot.accessibleDescription().contains(QString::fromStdString(on.list.tierCase(byShare[0].tier).tier.name)));
     }
 
+    void keysPick()
+    {
+        Shown on(inventedPortfolio(80));
+        std::vector<PortfolioPoint> byShare = on.plot.points().points;
+        std::stable_sort(byShare.begin(), byShare.end(), [](auto& a, auto& b) { return a.share > b.share; });
+        QTest::keyClick(&on.plot, Qt::Key_Space); // nowhere yet
+        QCOMPARE(on.list.pickedCount(), 0);
+        QTest::keyClick(&on.plot, Qt::Key_Home);
+        QTest::keyClick(&on.plot, Qt::Key_Space);
+        QCOMPARE(on.list.pickedCount(), 1);
+        QVERIFY(on.list.isPicked(byShare[0].tier));
+        QVERIFY(on.plot.accessibleDescription().contains(QStringLiteral("\npicked\n")));
+        QTest::keyClick(&on.plot, Qt::Key_Down);
+        QTest::keyClick(&on.plot, Qt::Key_Down, Qt::ShiftModifier); // from the second to the third
+        QCOMPARE(on.list.pickedCount(), 3);
+        QVERIFY(on.list.isPicked(byShare[1].tier) && on.list.isPicked(byShare[2].tier));
+        QTest::keyClick(&on.plot, Qt::Key_Space);
+        QCOMPARE(on.list.pickedCount(), 2);
+        QVERIFY(!on.list.isPicked(byShare[2].tier));
+        QTest::keyClick(&on.plot, Qt::Key_Escape);
+        QCOMPARE(on.list.pickedCount(), 0);
+    }
+
+    void theCursorStaysAndTheHeadingFollows()
+    {
+        Shown on(inventedPortfolio(80));
+        QSignalSpy chosen(&on.plot, &PortfolioPlot::tierChosen);
+        QTest::keyClick(&on.plot, Qt::Key_Home);
+        QTest::keyClick(&on.plot, Qt::Key_Down);
+        QTest::keyClick(&on.plot, Qt::Key_Down);
+        QTest::keyClick(&on.plot, Qt::Key_Return);
+        on.document.setFlagThresholds({-1.0, 3, 0.25});
+        on.document.setFloor(on.plot.points().points.front().tier, Price{}); // one point fewer before it
+        QTest::keyClick(&on.plot, Qt::Key_Return);
+        QCOMPARE(chosen.count(), 2);
+        QCOMPARE(chosen.at(1), chosen.at(0));
+        QVERIFY(chosen.at(0).first().toInt() != on.plot.points().points.front().tier);
+        QTemporaryDir folder;
+        QVERIFY(on.document.saveTo(folder.filePath(QStringLiteral("another-name.rungs.json"))).ok());
+        QVERIFY(on.plot.pictureHeading().contains(on.document.displayName()));
+        QVERIFY(on.plot.pictureHeading().contains(QStringLiteral("another-name")));
+        on.document.begin(inventedPortfolio(80), {}, true); // other tiers: from the start
+        QTest::keyClick(&on.plot, Qt::Key_Return);
+        QCOMPARE(chosen.count(), 2);
+    }
+
     void densityCountsEveryPointOnce()
     {
         Shown on(inventedPortfolio(4000, 10));

@@ -131,7 +131,9 @@ void DocumentTest::aRefreshTakesThePlansTiersWhileTheyFit()
     Document document;
     document.begin(inventedScenario(), {}, true);
     const QByteArray before = scenarioToJson(document.scenario());
-    RefreshPlan plan{document.scenario().tiers, document.scenario().tiers};
+    RefreshPlan plan;
+    plan.currency = document.scenario().currency;
+    plan.before = plan.after = document.scenario().tiers;
     QVERIFY(document.refresh(plan, QStringLiteral("a.csv")));
     QCOMPARE(document.undoStack().count(), 0); // nothing would change
     plan.after[1].tier.units[0].asking = Price{6100};

@@ -27,6 +27,7 @@ private slots:
     void undoGoesWhereItHappened();
     void undoInTheMiddleOfADragIsSafe();
     void aRefreshKeepsTheTierOnTheBench();
+    void aTierThatLeftComesBackToTheBench();
     void marksDoNotInterruptADrag();
     void aFloorIsMeasuredAnew();
     void emptyDocumentIsHarmless();
@@ -254,7 +255,9 @@ void WorkbenchTest::aRefreshKeepsTheTierOnTheBench()
     document.copyCandidate(1, -1);
     bench.showTier(1, 0);
     bench.select({3, 4});
-    RefreshPlan plan{document.scenario().tiers, {}};
+    RefreshPlan plan;
+    plan.currency = document.scenario().currency;
+    plan.before = document.scenario().tiers;
     plan.after.push_back(document.scenario().tiers[1]); // the first tier is gone
     plan.after[0].tier.units[0].asking = Price{5900};
     plan.after[0].candidates[0].prices[0] = Price{5900};
@@ -273,6 +276,44 @@ void WorkbenchTest::aRefreshKeepsTheTierOnTheBench()
     QCOMPARE(bench.tier(), 0);
     QCOMPARE(bench.candidate(), -1);
     QCOMPARE(bench.tierCase()->tier.name, std::string("Room 3-5"));
+}
+
+void WorkbenchTest::aTierThatLeftComesBackToTheBench()
+{
+    Document document;
+    Workbench bench(document);
+    document.begin(inventedScenario(), {}, true);
+    document.copyCandidate(1, -1);
+    const std::string gone = document.scenario().tiers[1].tier.name;
+    bench.showTier(1, 0);
+    RefreshPlan plan;
+    plan.currency = document.scenario().currency;
+    plan.before = document.scenario().tiers;
+    plan.after.push_back(document.scenario().tiers[0]);
+    QVERIFY(document.refresh(plan, QStringLiteral("a.csv")));
+    QCOMPARE(bench.tier(), 0);
+    QCOMPARE(bench.candidate(), -1);
+    bench.workOn(-1);
+    document.setFloor(0, Price{4200}); // an edit of the tier that took its place chooses no tier
+    document.undoStack().undo();
+    document.undoStack().undo();
+    QCOMPARE(bench.tier(), 1);
+    QCOMPARE(bench.tierCase()->tier.name, gone);
+    QCOMPARE(bench.candidate(), 0);
+    document.undoStack().redo();
+    QCOMPARE(bench.tier(), 0);
+    document.undoStack().undo();
+    QCOMPARE(bench.tier(), 1);
+    // What the user chooses meanwhile counts.
+    bench.showTier(0);
+    bench.showTier(1, 0);
+    document.undoStack().redo();
+    QCOMPARE(bench.tier(), 0);
+    bench.showTier(-1);
+    bench.showTier(0);
+    document.undoStack().undo();
+    QCOMPARE(bench.tier(), 0);
+    QVERIFY(bench.tierCase()->tier.name != gone);
 }
 
 void WorkbenchTest::marksDoNotInterruptADrag()

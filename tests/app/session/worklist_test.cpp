@@ -83,6 +83,7 @@ private slots:
     void rowsAndFlagsAreWhatTheirDefinitionsSay();
     void backgroundGivesTheSame_data();
     void backgroundGivesTheSame();
+    void preparingNamesIsGivenUp();
     void editsMeanwhileAreNotOverwritten();
     void thresholdsFlagAnewWithoutMeasuring();
     void orderIsStableAndUndefinedLast();
@@ -186,6 +187,17 @@ void WorklistTest::backgroundGivesTheSame()
     QCoreApplication::processEvents();
     QCOMPARE(list.measuredCount(), 20);
     document.begin(inventedPortfolio(600, 12), {}, true);
+}
+
+void WorklistTest::preparingNamesIsGivenUp()
+{
+    const TierList tiers = inventedPortfolio(40).tiers;
+    std::atomic<bool> cancel = false;
+    QCOMPARE(nameRanks(tiers, cancel).tier.size(), tiers.size());
+    QCOMPARE(searchTexts(tiers, cancel).size(), tiers.size());
+    cancel = true;
+    QVERIFY(nameRanks(tiers, cancel).tier.empty());
+    QVERIFY(searchTexts(tiers, cancel).empty());
 }
 
 void WorklistTest::editsMeanwhileAreNotOverwritten()
