@@ -92,7 +92,7 @@ private:
     bool settleCurrency(Intake& intake, ReadList& list);
     void takeList(const Intake& intake, ReadList list);
     void planRefreshFrom(const Intake& intake, ReadList list);
-    void showRefresh(const QString& path, RefreshPlan plan, const QString& alsoSaid);
+    void showRefresh(const QString& path, RefreshPlan plan, const QStringList& alsoSaid);
     bool changedSinceAsked();
     void show(QDialog* dialog);
 

@@ -10,6 +10,7 @@
 
 #include <QFileInfo>
 #include <QLocale>
+#include <QThreadPool>
 
 namespace rungwright
 {
@@ -171,14 +172,16 @@ void FileFlow::planRefreshFrom(const Intake& intake, ReadList list)
 {
     QStringList also;
     if (list.said.refusedCount > 0)
-        also << tr("%1 rows of the list were left out.").arg(counted(list.said.refusedCount));
+        also << (list.said.refusedCount == 1
+                     ? tr("1 row was left out: its unit counts as gone.")
+                     : tr("%1 rows were left out: their units count as gone.").arg(counted(list.said.refusedCount)));
     also << list.notes;
     m_work.start<Outcome<RefreshPlan>>(
         tr("Comparing %1 with the scenario …").arg(QFileInfo(intake.request.path).fileName()),
         [now = m_document.scenario(), currency = list.said.currency, listed = list.listed](const LongWork::Progress& progress) {
             return planRefresh(now, currency, std::move(*listed), progress);
         },
-        [this, path = intake.request.path, also = also.join(QLatin1Char(' '))](std::optional<Outcome<RefreshPlan>> plan) {
+        [this, path = intake.request.path, also](std::optional<Outcome<RefreshPlan>> plan) {
             if (!plan)
                 giveUp();
             else if (plan->ok())
@@ -189,17 +192,19 @@ void FileFlow::planRefreshFrom(const Intake& intake, ReadList list)
         });
 }
 
-void FileFlow::showRefresh(const QString& path, RefreshPlan plan, const QString& alsoSaid)
+void FileFlow::showRefresh(const QString& path, RefreshPlan plan, const QStringList& alsoSaid)
 {
-    const auto held = std::make_shared<RefreshPlan>(std::move(plan)); // the dialog only looks at it
-    auto* dialog = new RefreshDialog(*held, m_document.scenario().currency, path, m_window, &m_questions);
+    // The dialog only looks at it. It holds two scenarios: who lets go of it last does not wait until they are gone.
+    const std::shared_ptr<RefreshPlan> held(new RefreshPlan(std::move(plan)),
+                                            [](RefreshPlan* former) { QThreadPool::globalInstance()->start([former] { delete former; }); });
+    auto* dialog = new RefreshDialog(*held, held->currency, path, m_window, &m_questions, alsoSaid);
     connect(dialog, &QDialog::finished, this, [this, held, path, alsoSaid](int result) {
         m_dialog = nullptr;
         const QString name = QFileInfo(path).fileName();
         if (result != QDialog::Accepted)
             giveUp();
         else if (m_document.refresh(*held, name))
-            emit told(QStringList{tr("Refreshed from %1.").arg(name), alsoSaid}.join(QLatin1Char(' ')).trimmed());
+            emit told((QStringList{tr("Refreshed from %1.").arg(name)} + alsoSaid).join(QLatin1Char(' ')));
         else
             m_questions.tell(m_window, tr("The scenario could not be refreshed from “%1”.").arg(name),
                              tr("It was edited since the list was compared with it. Refresh once more."));

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "refresh_dialog.h"
 
+#include "caution.h"
 #include "file_names.h"
 #include "plot_words.h"
 #include "questions.h"
@@ -11,27 +12,44 @@
 #include "words.h"
 
 #include <QAccessible>
+#include <QAction>
+#include <QClipboard>
 #include <QEvent>
 #include <QFileInfo>
+#include <QGuiApplication>
 #include <QHeaderView>
 
 namespace rungwright
 {
 
+namespace
+{
+
+/// More than that is nothing for a clipboard, and for nobody to wait for.
+constexpr int kMostCopied = 20'000;
+
+} // namespace
+
 RefreshDialog::RefreshDialog(const RefreshPlan& plan, const Currency& currency, const QString& listName, QWidget* parent,
-                             Questions* questions) :
+                             Questions* questions, const QStringList& warnings) :
     QDialog(parent),
     m_ownQuestions(questions ? nullptr : std::make_unique<Questions>()),
     m_questions(questions ? questions : m_ownQuestions.get()),
+    m_plan(plan),
+    m_currency(currency),
     m_listName(QFileInfo(listName).fileName()),
     m_table(plan, currency),
     m_topics(refreshTopics(plan, currency)),
-    m_ui(std::make_unique<Ui::RefreshDialog>())
+    m_ui(std::make_unique<Ui::RefreshDialog>()),
+    m_work(this)
 {
     m_ui->setupUi(this);
     m_ui->titleLabel->setText(tr("Refresh from %1").arg(isolated(shownText(m_listName))));
     m_ui->titleLabel->setToolTip(listName);
+    m_ui->warningsLabel->setText(QStringLiteral("⚠ ") + warnings.join(QStringLiteral("\n⚠ ")));
+    m_ui->warningsLabel->setVisible(!warnings.isEmpty());
     showSummary(plan);
+    m_ui->cautionLabel->setText(cautionText());
     m_ui->resultLabel->hide();
 
     QTableView* table = m_ui->linesTable;
@@ -39,20 +57,23 @@ RefreshDialog::RefreshDialog(const RefreshPlan& plan, const Currency& currency, 
     table->horizontalHeader()->setHighlightSections(false);
     table->horizontalHeader()->setResizeContentsPrecision(200); // of a hundred thousand lines the first tell how wide they are
     makeCopyable(*table);
+    for (const auto& [name, part] : {std::pair("copyAction", CopyPart::selection), std::pair("copyAllAction", CopyPart::everything)}) {
+        auto* action = table->findChild<QAction*>(QLatin1String(name));
+        action->disconnect(table);
+        connect(action, &QAction::triggered, this, [this, part = part] { copy(part); });
+    }
     dress();
     fillTopics();
 
     connect(m_ui->topicsList, &QListWidget::currentRowChanged, this, &RefreshDialog::showTopic);
-    connect(m_ui->copyButton, &QPushButton::clicked, this, [this] {
-        const int rows = copyTable(*m_ui->linesTable, CopyPart::everything);
-        showResult(rows == 1 ? tr("1 row copied.") : tr("%1 rows copied.").arg(numberText(rows, 0)));
-    });
+    connect(m_ui->copyButton, &QPushButton::clicked, this, [this] { copy(CopyPart::everything); });
     connect(m_ui->saveButton, &QPushButton::clicked, this, &RefreshDialog::save);
     connect(m_ui->refreshButton, &QPushButton::clicked, this, &QDialog::accept);
     connect(m_ui->leaveButton, &QPushButton::clicked, this, &QDialog::reject);
 
     const bool anything = !m_topics.empty();
-    for (QWidget* widget : std::initializer_list<QWidget*>{m_ui->topicsList, table, m_ui->copyButton, m_ui->saveButton, m_ui->keptLabel})
+    for (QWidget* widget :
+         std::initializer_list<QWidget*>{m_ui->topicsList, table, m_ui->copyButton, m_ui->saveButton, m_ui->keptLabel, m_ui->cautionLabel})
         widget->setVisible(anything);
     // With nothing to take there is nothing to refresh; marks of the week before are reason enough.
     const bool useful = !plan.changesNothing() || plan.seenCleared > 0;
@@ -164,17 +185,51 @@ void RefreshDialog::showEvent(QShowEvent* event)
     fitColumns(); // only now is it known how wide the table is
 }
 
+void RefreshDialog::copy(CopyPart part)
+{
+    const QTableView& table = *m_ui->linesTable;
+    const auto rows = part == CopyPart::everything ? m_table.rowCount() : static_cast<int>(table.selectionModel()->selectedRows().size());
+    if (rows > kMostCopied) {
+        showResult(tr("⚠ Not copied: %1 rows are too many at once. Save the table as CSV, or select no more than %2 rows.")
+                       .arg(numberText(rows, 0), numberText(kMostCopied, 0)));
+        return;
+    }
+    const QString text = copiedText(table, part);
+    if (text.isEmpty())
+        return;
+    // Below the rows, where it hinders no pasting.
+    QString caution = cautionText();
+    caution.replace(QLatin1Char('"'), QStringLiteral("\"\""));
+    QGuiApplication::clipboard()->setText(text + QStringLiteral("\n\n\"%1\"").arg(caution));
+    showResult(rows == 1 ? tr("1 row copied.") : tr("%1 rows copied.").arg(numberText(rows, 0)));
+}
+
 void RefreshDialog::save()
 {
     const int row = m_ui->topicsList->currentRow();
     const QString topic = row < 0 ? QString() : m_topics[static_cast<std::size_t>(row)].text;
     const QString suggestion = fileNameFrom({QFileInfo(m_listName).completeBaseName(), tr("refresh"), topic}, QStringLiteral("csv"));
     const QString path = m_questions->savePath(this, tr("Save the table"), suggestion, tr("Comma-separated table (*.csv)"));
-    if (path.isEmpty())
+    if (path.isEmpty() || m_work.busy())
         return;
     const QString target = withSuffix(path, QStringLiteral("csv"));
-    const Outcome<bool> written = writeWhole(target, m_table.csv());
-    showResult(written.ok() ? tr("✓ Table saved: %1").arg(target) : tr("⚠ Not saved: %1").arg(QString::fromStdString(written.trouble())));
+    const RefreshTopic shown = row < 0 ? RefreshTopic() : m_topics[static_cast<std::size_t>(row)];
+    m_work.start<Outcome<bool>>(
+        tr("Saving %1 …").arg(QFileInfo(target).fileName()),
+        [lines = RefreshLines(m_plan, m_currency, shown), target](const LongWork::Progress& progress) -> Outcome<bool> {
+            const std::optional<QByteArray> csv = lines.csv(progress);
+            if (!csv)
+                return Trouble{};
+            return writeWhole(target, *csv);
+        },
+        [this, target](std::optional<Outcome<bool>> written) {
+            if (!written)
+                showResult(tr("⚠ Saving was given up: look whether %1 is there before you use it.").arg(target));
+            else if (written->ok())
+                showResult(tr("✓ Table saved: %1").arg(target));
+            else
+                showResult(tr("⚠ Not saved: %1").arg(QString::fromStdString(written->trouble())));
+        });
 }
 
 void RefreshDialog::showResult(const QString& sentence)

@@ -99,6 +99,8 @@ QString refreshSentence(const RefreshPlan& plan)
         if (plan.unitsBefore != plan.unitsAfter)
             said << Words::tr("Units: %1 today, %2 then.").arg(counted(plan.unitsBefore), counted(plan.unitsAfter));
     }
+    if (plan.takesCurrency)
+        said << Words::tr("The scenario names no currency so far and takes the list’s: %1.").arg(fromUtf8(plan.currency.code));
     if (plan.seenCleared > 0)
         said << plural(plan.seenCleared, Words::tr("One tier marked as seen is to be looked at again."),
                        Words::tr("%1 tiers marked as seen are to be looked at again."));

@@ -51,7 +51,7 @@ SideBySidePage::SideBySidePage(Workbench& bench, Questions& questions, QWidget* 
     });
     connect(m_ui->chooseButton, &QPushButton::clicked, this, &SideBySidePage::choose);
     connect(&bench.document(), &Document::changed, this, [this](const DocumentChange& change) {
-        if (change.kind != DocumentChange::Kind::everything && change.kind != DocumentChange::Kind::refreshed)
+        if (change.kind != DocumentChange::Kind::everything)
             return;
         m_picks.clear();
         refresh();
@@ -116,6 +116,12 @@ void SideBySidePage::dress()
     table->setMinimumHeight(6 * (fontMetrics().height() + 8));
 }
 
+SideBySidePage::TierKey SideBySidePage::tierKey() const
+{
+    const TierCase* tierCase = m_bench.tierCase();
+    return tierCase ? TierKey(tierCase->tier.site, tierCase->tier.name) : TierKey();
+}
+
 // What is compared ---------------------------------------------------------------------------------------------------
 
 std::vector<int> SideBySidePage::shownCandidates() const
@@ -156,8 +162,8 @@ void SideBySidePage::refresh()
     }
     pick().update(names, m_bench.candidate());
     showPick(names);
-    const bool sameTier = m_shownTier == m_bench.tier() && !m_model.ladders().empty();
-    m_shownTier = m_bench.tier();
+    const bool sameTier = m_shownTier == tierKey() && !m_model.ladders().empty();
+    m_shownTier = tierKey();
     showLadders(sameTier ? selectedCandidate() : kNoCandidate);
     m_ui->stack->setCurrentWidget(m_ui->comparePage);
 }

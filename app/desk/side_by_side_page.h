@@ -10,6 +10,8 @@
 
 #include <map>
 #include <memory>
+#include <string>
+#include <utility>
 
 namespace Ui
 {
@@ -64,15 +66,18 @@ private:
     void adoptHeaderOrder();
     void moveSelected(int by);
     void choose();
-    LadderPick& pick() { return m_picks[m_bench.tier()]; }
+    /// Site and name: an index means another tier after a refresh.
+    using TierKey = std::pair<std::string, std::string>;
+    TierKey tierKey() const;
+    LadderPick& pick() { return m_picks[tierKey()]; }
     QStringList candidateNames() const;
 
     Workbench& m_bench;
     Questions& m_questions;
     SideBySideModel m_model;
     PickMenu* m_pickMenu = nullptr;
-    std::map<int, LadderPick> m_picks; ///< By tier.
-    int m_shownTier = -1;
+    std::map<TierKey, LadderPick> m_picks;
+    TierKey m_shownTier;
     bool m_stale = true; ///< Something changed while the page was hidden.
     std::unique_ptr<Ui::SideBySidePage> m_ui;
 };

@@ -116,8 +116,7 @@ void WorklistPanel::restore()
     QTableView* table = m_ui->worklistTable;
     if (!m_model.sameTiers()) {
         m_lastRow = 0;
-        onBenchReset();
-        return;
+        return; // the bench hears of other tiers later, and tells then: what it says now is an index among those that were
     }
     std::vector<int> rows;
     for (const ShownRow& what : m_kept.selected) {
@@ -149,13 +148,19 @@ void WorklistPanel::restore()
 
 void WorklistPanel::onBenchReset()
 {
-    const int row = m_bench.tier() < 0 ? -1 : m_model.rowOf({m_bench.tier(), 0});
+    const int before = std::exchange(m_benchTier, m_bench.tier());
+    const int row = m_benchTier < 0 ? -1 : m_model.rowOf({m_benchTier, 0});
     QTableView* table = m_ui->worklistTable;
-    if (row < 0 || row == table->currentIndex().row())
+    if (row >= 0 ? row == table->currentIndex().row() : m_benchTier == before)
         return;
     m_followingBench = true;
-    goTo(row);
-    m_lastRow = row;
+    if (row >= 0) {
+        goTo(row);
+        m_lastRow = row;
+    } else {
+        // Hidden by the filter or folded away: no other tier is to look as if it were the one on the bench, or be marked in its stead.
+        table->selectionModel()->clear();
+    }
     m_followingBench = false;
 }
 

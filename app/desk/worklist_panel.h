@@ -96,6 +96,7 @@ private:
     QAction* m_unseenAction = nullptr;
     QAction* m_groupAction = nullptr;
     Kept m_kept;
+    int m_benchTier = -1; ///< On the bench when it last told of itself.
     int m_lastRow = 0;    ///< Where the current row was when it had last one.
     bool m_toTop = false; ///< The next rearrangement is of another order or filter: it is read from the top.
     bool m_followingBench = false;

@@ -307,7 +307,9 @@ void ImportGuiTest::whatIsMissingIsSaid()
     QTRY_COMPARE(QApplication::focusWidget(), &constant);
     QTest::keyClicks(&constant, QStringLiteral("Box"));
     // What was said stays when the encoding is corrected.
-    pickByMouse(in<QComboBox>(form(), "encodingCombo"), QStringLiteral("ISO 8859-15"));
+    in<QTabWidget>(form(), "tabs").setCurrentIndex(3);
+    pickByMouse(in<QComboBox>(form(), "encodingCombo"), QStringLiteral("ISO-8859-15"));
+    in<QTabWidget>(form(), "tabs").setCurrentIndex(0);
     QCOMPARE(form()->mapping().encoding, TextEncoding::iso8859_15);
     QCOMPARE(form()->mapping().from(Column::tier), ColumnSource::always(QStringLiteral("Box")));
     QCOMPARE(constant.text(), QStringLiteral("Box"));

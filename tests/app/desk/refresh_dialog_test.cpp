@@ -2,6 +2,7 @@
 // What a person reads, chooses, copies and saves before a refresh, by mouse and by keyboard.
 #include "refresh_dialog.h"
 
+#include "caution.h"
 #include "desk_fixture.h"
 #include "plot_words.h"
 
@@ -95,6 +96,9 @@ private slots:
     void theButtonsDoWhatTheySay();
     void tablesAreCopiedAndSaved();
     void aFileThatCannotBeWrittenIsTold();
+    void whatWasNotTakenStandsFirst();
+    void aLockIsAReasonToClash();
+    void aCurrencyNotYetKnownIsSaid();
     void nothingToDoIsSaid();
     void aHundredThousandLinesAppearAtOnce();
     void everythingHasAName();
@@ -168,9 +172,9 @@ void RefreshDialogTest::everyTopicShowsItsLines()
     choose(QStringLiteral("1 unit newly let"));
     QCOMPARE(row(0).mid(4), (QStringList{statusText(Status::vacant), statusText(Status::occupied)}));
     choose(QStringLiteral("1 kept, clashes with the list"));
-    QCOMPARE(row(0),
-             (QStringList{QStringLiteral("Mill Quay"), QStringLiteral("Room 8-10"), QStringLiteral("Lower"), QStringLiteral("8-10/2"),
-                          QStringLiteral("6,100.00"), QStringLiteral("6,000.00"), QStringLiteral("6,250.00")}));
+    QCOMPARE(row(0), (QStringList{QStringLiteral("Mill Quay"), QStringLiteral("Room 8-10"), QStringLiteral("Lower"),
+                                  QStringLiteral("8-10/2"), QStringLiteral("6,100.00"), QStringLiteral("6,000.00"),
+                                  QStringLiteral("6,250.00"), QStringLiteral("another price is asked")}));
     choose(QStringLiteral("2 candidates"));
     QCOMPARE(row(1)[3], QStringLiteral("leaves with its tier"));
     choose(QStringLiteral("1 price sheet"));
@@ -219,11 +223,21 @@ void RefreshDialogTest::tablesAreCopiedAndSaved()
 {
     choose(QStringLiteral("1 dropped, tier gone"));
     QTest::mouseClick(&button("copyButton"), Qt::LeftButton);
+    const QString caution = cautionText().replace(QLatin1Char('"'), QStringLiteral("\"\"")); // quoted, as in CSV
     QCOMPARE(QGuiApplication::clipboard()->text(), QStringLiteral("Site\tTier\tCandidate\tUnit\tAsked before\tCandidate’s\tAsked then\n"
-                                                                  "Mill Quay\tRoom 3-5\t'=Odd\t3-5/0\t6,000.00\t1.00\t"));
+                                                                  "Mill Quay\tRoom 3-5\t'=Odd\t3-5/0\t6,000.00\t1.00\t\n\n\"%1\"")
+                                                       .arg(caution));
+    QVERIFY(!cautionText().isEmpty());
+    QCOMPARE(label("cautionLabel"), cautionText());
+    QVERIFY(m_dialog->findChild<QLabel*>(QStringLiteral("cautionLabel"))->isVisible());
+    table().selectRow(0); // the shortcut and the menu's entry do the same
+    QGuiApplication::clipboard()->clear();
+    table().findChild<QAction*>(QStringLiteral("copyAction"))->trigger();
+    QVERIFY(QGuiApplication::clipboard()->text().endsWith(QStringLiteral("\n\n\"%1\"").arg(caution)));
     QTemporaryDir folder;
     m_questions.nextPath = folder.filePath(QStringLiteral("lines")); // the suffix is ours to add
     QTest::mouseClick(&button("saveButton"), Qt::LeftButton);
+    QTRY_VERIFY(label("resultLabel").startsWith(QStringLiteral("✓")));
     QFile saved(folder.filePath(QStringLiteral("lines.csv")));
     QVERIFY(saved.open(QIODevice::ReadOnly));
     QCOMPARE(saved.readAll(), QByteArrayLiteral("Site,Tier,Candidate,Unit,Asked before,Candidate\xe2\x80\x99s,Asked then\r\n"
@@ -236,9 +250,45 @@ void RefreshDialogTest::aFileThatCannotBeWrittenIsTold()
     QTemporaryDir folder;
     m_questions.nextPath = folder.filePath(QStringLiteral("no/such/folder/lines.csv"));
     QTest::mouseClick(&button("saveButton"), Qt::LeftButton);
-    QVERIFY(label("resultLabel").contains(QStringLiteral("Not saved")));
+    QTRY_VERIFY(label("resultLabel").contains(QStringLiteral("Not saved")));
     m_questions.nextPath.clear(); // given up: nothing is said
     QTest::mouseClick(&button("saveButton"), Qt::LeftButton);
+}
+
+void RefreshDialogTest::whatWasNotTakenStandsFirst()
+{
+    QVERIFY(!m_dialog->findChild<QLabel*>(QStringLiteral("warningsLabel"))->isVisible());
+    RefreshDialog dialog(*m_plan, Currency{"EUR", 2}, QStringLiteral("week.csv"), nullptr, &m_questions,
+                         {QStringLiteral("12 rows were left out."), QStringLiteral("tiers taken without a floor: 1")});
+    dialog.open();
+    QVERIFY(QTest::qWaitForWindowActive(&dialog));
+    const auto& warnings = *dialog.findChild<QLabel*>(QStringLiteral("warningsLabel"));
+    QVERIFY(warnings.isVisible());
+    QCOMPARE(warnings.text(), QStringLiteral("⚠ 12 rows were left out.\n⚠ tiers taken without a floor: 1"));
+    QVERIFY(warnings.y() < dialog.findChild<QLabel*>(QStringLiteral("sentenceLabel"))->y());
+}
+
+void RefreshDialogTest::aLockIsAReasonToClash()
+{
+    const Scenario scenario = before();
+    std::vector<TierCase> list(scenario.tiers.begin(), scenario.tiers.end());
+    list[0].tier.units[0].locked = true;
+    const RefreshPlan locking = planFor(scenario, list);
+    const RefreshLines lines(locking, scenario.currency, {RefreshTopic::What::fates, static_cast<int>(ChangeFate::clash), QString(), 1, 1});
+    QCOMPARE(lines.rows(), 1);
+    QCOMPARE(lines.texts(0, false).last(), QStringLiteral("locked by the list"));
+}
+
+void RefreshDialogTest::aCurrencyNotYetKnownIsSaid()
+{
+    Scenario scenario = before();
+    scenario.currency = Currency{"XXX", 2};
+    const auto plan = planRefresh(scenario, Currency{"EUR", 2}, {scenario.tiers.begin(), scenario.tiers.end()});
+    QVERIFY(plan.ok());
+    RefreshDialog dialog(plan.value(), plan.value().currency, QStringLiteral("week.csv"));
+    QVERIFY(dialog.findChild<QLabel*>(QStringLiteral("sentenceLabel"))->text().contains(QStringLiteral("takes the list’s: EUR.")));
+    QVERIFY(dialog.findChild<QPushButton*>(QStringLiteral("refreshButton"))->isEnabled());
+    QVERIFY(dialog.findChild<QListWidget*>(QStringLiteral("topicsList"))->item(0)->text() == QStringLiteral("Your candidates"));
 }
 
 void RefreshDialogTest::nothingToDoIsSaid()
@@ -296,6 +346,12 @@ void RefreshDialogTest::aHundredThousandLinesAppearAtOnce()
     lines.viewport()->repaint();
     qInfo("scrolled to the end in %lld ms", static_cast<long long>(timer.elapsed()));
     QVERIFY(dialog.findChild<QLabel*>(QStringLiteral("keptLabel"))->text().startsWith(QStringLiteral("100,000 of 105,000 lines shown")));
+    QGuiApplication::clipboard()->setText(QStringLiteral("kept"));
+    QTest::mouseClick(dialog.findChild<QPushButton*>(QStringLiteral("copyButton")), Qt::LeftButton);
+    QCOMPARE(QGuiApplication::clipboard()->text(), QStringLiteral("kept"));
+    QVERIFY(dialog.findChild<QLabel*>(QStringLiteral("resultLabel"))
+                ->text()
+                .startsWith(QStringLiteral("⚠ Not copied: 100,000 rows are too many at once.")));
 }
 
 void RefreshDialogTest::everythingHasAName()

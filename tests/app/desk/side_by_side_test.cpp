@@ -3,6 +3,7 @@
 #include "caution.h"
 #include "compared_tier.h"
 #include "read_table.h"
+#include "refresh.h"
 #include "side_by_side_page.h"
 #include "side_by_side_plot.h"
 
@@ -107,6 +108,36 @@ private slots:
         // The order lasts.
         m_bench->workOn(1);
         QCOMPARE(m_page->shownCandidates(), (Ladders{0, 1, -1, 2}));
+    }
+
+    void thePickOutlivesARefresh()
+    {
+        Scenario scenario = comparedScenario();
+        TierCase other = scenario.tiers[0];
+        other.tier.name = "Box 9";
+        const TierCase compared = scenario.tiers[0];
+        scenario.tiers = {other, compared};
+        m_document->begin(scenario, {}, true);
+        m_bench->showTier(1);
+        table().setFocus();
+        table().setCurrentIndex(table().model()->index(0, 1));
+        QTest::keyClick(&table(), Qt::Key_Right, Qt::AltModifier);
+        QCOMPARE(m_page->shownCandidates(), (Ladders{-1, 1, 0, 2}));
+        RefreshPlan plan;
+        plan.currency = m_document->scenario().currency;
+        plan.before = m_document->scenario().tiers;
+        plan.after.push_back(plan.before[1]);
+        QVERIFY(m_document->refresh(plan, QStringLiteral("a.csv")));
+        QCOMPARE(m_bench->tier(), 0);
+        QCOMPARE(m_page->shownCandidates(), (Ladders{-1, 1, 0, 2}));
+        QCOMPARE(m_page->selectedCandidate(), 0);
+        m_document->undoStack().undo();
+        QCOMPARE(m_page->shownCandidates(), (Ladders{-1, 1, 0, 2}));
+        m_bench->showTier(0);
+        QCOMPARE(m_page->shownCandidates(), (Ladders{-1, 0, 1, 2}));
+        m_document->begin(scenario, {}, true); // another scenario, though of the same names
+        m_bench->showTier(1);
+        QCOMPARE(m_page->shownCandidates(), (Ladders{-1, 0, 1, 2}));
     }
 
     void columnsMoveByKeysAndTakeTheSelectionAlong()

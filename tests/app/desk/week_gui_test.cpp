@@ -29,6 +29,8 @@ private slots:
     void aFloorIsTypedAndTakenAway();
     void theNextListIsTakenAndUndone();
     void theNextListIsLeft();
+    void aRowLeftOutIsToldFirst();
+    void aCurrencyNotYetKnownComesWithTheList();
 
 private:
     static const QByteArray kFirst;
@@ -203,6 +205,42 @@ void WeekGuiTest::theNextListIsLeft()
     QTRY_VERIFY(!dialog("RefreshDialog"));
     QCOMPARE(scenarioToJson(document().scenario()), before);
     QVERIFY(!document().undoStack().canUndo());
+}
+
+void WeekGuiTest::aRowLeftOutIsToldFirst()
+{
+    QByteArray bad = kSecond;
+    bad.replace("Small,S2,63.50", "Small,S2,many");
+    m_desk->questions.nextPath = write("bad.csv", bad);
+    m_desk->window->findChild<QAction*>(QStringLiteral("refreshAction"))->trigger();
+    QTRY_VERIFY(dialog("RefusedRowsDialog"));
+    dialog("RefusedRowsDialog")->accept(); // go on without it
+    QTRY_VERIFY(dialog("RefreshDialog"));
+    const auto& warnings = *dialog("RefreshDialog")->findChild<QLabel*>(QStringLiteral("warningsLabel"));
+    QVERIFY(warnings.isVisible());
+    QCOMPARE(warnings.text(), QStringLiteral("⚠ 1 row was left out: its unit counts as gone."));
+    // S2 among them, which the list does name.
+    auto& topics = *dialog("RefreshDialog")->findChild<QListWidget*>(QStringLiteral("topicsList"));
+    QCOMPARE(topics.findItems(QStringLiteral("2 units gone"), Qt::MatchExactly).size(), 1);
+    QTest::keyClick(dialog("RefreshDialog"), Qt::Key_Escape);
+    QTRY_VERIFY(!dialog("RefreshDialog"));
+    QVERIFY(!document().undoStack().canUndo());
+}
+
+void WeekGuiTest::aCurrencyNotYetKnownComesWithTheList()
+{
+    QByteArray unnamed = kFirst;
+    unnamed.replace(",EUR\n", "\n").replace(",currency\n", "\n");
+    m_desk->questions.answers = {1, 1}; // as a new one; go on without saving
+    m_desk->questions.texts = {QStringLiteral("")};
+    QVERIFY(m_desk->open(write("unnamed.csv", unnamed)));
+    QCOMPARE(document().scenario().currency.code, std::string("XXX"));
+    const QByteArray before = scenarioToJson(document().scenario());
+    askRefresh(write("second.csv", kSecond));
+    click(dialog("RefreshDialog"), "refreshButton");
+    QTRY_COMPARE(document().scenario().currency.code, std::string("EUR"));
+    document().undoStack().undo();
+    QCOMPARE(scenarioToJson(document().scenario()), before);
 }
 
 QTEST_MAIN(WeekGuiTest)
