@@ -91,7 +91,7 @@ private:
     /// False when the user gave up, or the list is being read once more.
     bool settleCurrency(Intake& intake, ReadList& list);
     void takeList(const Intake& intake, ReadList list);
-    void planRefreshFrom(const Intake& intake, ReadList list);
+    void planRefreshFrom(const Intake& intake, const ReadList& list);
     void showRefresh(const QString& path, RefreshPlan plan, const QStringList& alsoSaid);
     bool changedSinceAsked();
     void show(QDialog* dialog);

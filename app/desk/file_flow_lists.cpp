@@ -102,7 +102,7 @@ void FileFlow::listRead(Intake intake, ReadList list)
         return;
     }
     if (intake.purpose == Purpose::refresh)
-        planRefreshFrom(intake, std::move(list));
+        planRefreshFrom(intake, list);
     else if (settleCurrency(intake, list) && !changedSinceAsked())
         takeList(intake, std::move(list));
 }
@@ -168,7 +168,7 @@ void FileFlow::takeList(const Intake& intake, ReadList list)
     emit told(said.join(QLatin1Char(' ')));
 }
 
-void FileFlow::planRefreshFrom(const Intake& intake, ReadList list)
+void FileFlow::planRefreshFrom(const Intake& intake, const ReadList& list)
 {
     QStringList also;
     if (list.said.refusedCount > 0)
@@ -201,13 +201,14 @@ void FileFlow::showRefresh(const QString& path, RefreshPlan plan, const QStringL
     connect(dialog, &QDialog::finished, this, [this, held, path, alsoSaid](int result) {
         m_dialog = nullptr;
         const QString name = QFileInfo(path).fileName();
-        if (result != QDialog::Accepted)
+        if (result != QDialog::Accepted) {
             giveUp();
-        else if (m_document.refresh(*held, name))
+        } else if (m_document.refresh(*held, name)) {
             emit told((QStringList{tr("Refreshed from %1.").arg(name)} + alsoSaid).join(QLatin1Char(' ')));
-        else
+        } else {
             m_questions.tell(m_window, tr("The scenario could not be refreshed from “%1”.").arg(name),
                              tr("It was edited since the list was compared with it. Refresh once more."));
+        }
         emit done();
     });
     show(dialog);
