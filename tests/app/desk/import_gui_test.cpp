@@ -110,6 +110,9 @@ private:
     /// Goes there by the Tab key.
     static bool tabTo(QWidget& wanted)
     {
+        wanted.window()->activateWindow(); // where no window manager does it
+        if (!QTest::qWaitForWindowActive(wanted.window()) || !QTest::qWaitFor([] { return QApplication::focusWidget() != nullptr; }))
+            return false;
         for (int i = 0; i < 100 && QApplication::focusWidget() != &wanted; ++i)
             QTest::keyClick(QApplication::focusWidget() ? QApplication::focusWidget() : wanted.window(), Qt::Key_Tab);
         return QApplication::focusWidget() == &wanted;
