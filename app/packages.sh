@@ -6,12 +6,12 @@
 # To build and run the desk and the commands.
 rungwright_build_packages=(
     g++ cmake ninja-build
-    qt6-base-dev qt6-svg-dev qt6-wayland
+    qt6-base-dev libqt6sql6-sqlite qt6-svg-dev qt6-wayland
     libqcustomplot-dev libeigen3-dev libboost-math-dev libcsv-dev
     fontconfig fonts-dejavu-core
 )
 # Beside these, to run every test: R and three of its packages for the live comparisons, a virtual display for the GUI.
-rungwright_test_packages=(r-base-core r-cran-e1071 r-cran-robustbase r-cran-quadprog xvfb xauth)
+rungwright_test_packages=(r-base-core r-cran-e1071 r-cran-robustbase r-cran-quadprog poppler-utils xvfb xauth)
 # Beside these, for the checks of .ci/run.
 rungwright_check_packages=(
     git clang clang-format clang-tidy libclang-rt-14-dev shellcheck desktop-file-utils appstream

@@ -23,16 +23,16 @@ bool belongsToFigures(QChar c) { return isFigure(c) || c == QLatin1Char('.') || 
 
 bool isSign(QChar c) { return c == QLatin1Char('-') || c == QLatin1Char('+') || c == QChar(0x2212); }
 
-struct Candidate {
+struct Reading {
     NumberStyle style;
     qsizetype read = 0;
     qsizetype likePrices = 0;        ///< Prices with at most two decimals.
     std::vector<std::string> values; ///< One for each text; empty when it is not read.
 };
 
-Candidate tried(DecimalMark decimal, Grouping grouping, const std::vector<QString>& prices, const std::vector<QString>& others)
+Reading tried(DecimalMark decimal, Grouping grouping, const std::vector<QString>& prices, const std::vector<QString>& others)
 {
-    Candidate candidate;
+    Reading candidate;
     candidate.style.decimal = decimal;
     candidate.style.grouping = grouping;
     const NumberReader reader(candidate.style);
@@ -108,7 +108,7 @@ NumbersGuess guessNumbers(const std::vector<QString>& prices, const std::vector<
     const qsizetype all = qsizetype(priceFigures.size() + otherFigures.size());
 
     // Without groups first: what is not needed is not proposed.
-    std::vector<Candidate> candidates;
+    std::vector<Reading> candidates;
     const bool commaFirst = delimiter == ';';
     for (const DecimalMark decimal :
          {commaFirst ? DecimalMark::comma : DecimalMark::point, commaFirst ? DecimalMark::point : DecimalMark::comma}) {
@@ -119,17 +119,15 @@ NumbersGuess guessNumbers(const std::vector<QString>& prices, const std::vector<
                 candidates.push_back(tried(decimal, grouping, priceFigures, otherFigures));
         }
     }
-    const auto better = [](const Candidate& a, const Candidate& b) {
-        return a.read != b.read ? a.read > b.read : a.likePrices > b.likePrices;
-    };
-    const Candidate* best = &candidates.front();
-    for (const Candidate& candidate : candidates) {
+    const auto better = [](const Reading& a, const Reading& b) { return a.read != b.read ? a.read > b.read : a.likePrices > b.likePrices; };
+    const Reading* best = &candidates.front();
+    for (const Reading& candidate : candidates) {
         if (better(candidate, *best))
             best = &candidate;
     }
     guess.style.decimal = best->style.decimal;
     guess.style.grouping = best->style.grouping;
-    for (const Candidate& other : candidates) {
+    for (const Reading& other : candidates) {
         if (guess.ambiguous || other.read < best->read || all == 0 || other.values == best->values)
             continue;
         const auto [mine, theirs] = std::mismatch(best->values.begin(), best->values.end(), other.values.begin());

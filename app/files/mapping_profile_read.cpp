@@ -20,14 +20,14 @@ constexpr qint64 kLargestProfile = qint64(4) << 20;
 constexpr qsizetype kMostWords = 10'000;
 constexpr int kMostColumns = static_cast<int>(kMostCells);
 
-QString textOf(std::string_view utf8) { return QString::fromUtf8(utf8.data(), qsizetype(utf8.size())); }
+QString decoded(std::string_view utf8) { return QString::fromUtf8(utf8.data(), qsizetype(utf8.size())); }
 
 template <std::size_t N>
 QString listed(const std::array<std::string_view, N>& words)
 {
     QStringList texts;
     for (const std::string_view word : words)
-        texts << textOf(word);
+        texts << decoded(word);
     return Words::tr("one of %1").arg(texts.join(QStringLiteral(", ")));
 }
 
@@ -51,7 +51,7 @@ public:
         } else {
             QStringList known;
             for (const TextEncoding one : kTextEncodings)
-                known << textOf(encodingWord(one));
+                known << decoded(encodingWord(one));
             top.refuse(Key("encoding"), Words::tr("not an encoding"), Words::tr("one of %1").arg(known.join(QStringLiteral(", "))));
         }
         mapping.delimiter = kDelimiters[choice(top, Key("delimiter"), kDelimiterWords)];

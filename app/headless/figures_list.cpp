@@ -94,7 +94,7 @@ namespace
 {
 
 /// The text of plainNumber(), written to `text`.
-std::string_view numberText(double value, std::array<char, 64>& text)
+std::string_view shortestText(double value, std::array<char, 64>& text)
 {
     // Plain digits where they stay short: a price of 1400000 is not to read 1.4e+06.
     const double size = std::abs(value);
@@ -108,7 +108,7 @@ std::string_view numberText(double value, std::array<char, 64>& text)
 QByteArray plainNumber(double value)
 {
     std::array<char, 64> text{};
-    const std::string_view number = numberText(value, text);
+    const std::string_view number = shortestText(value, text);
     return {number.data(), qsizetype(number.size())};
 }
 
@@ -177,7 +177,7 @@ void appendCell(const Value& value, std::string& out)
     else if (const auto* whole = std::get_if<std::int64_t>(&value))
         out.append(text.data(), std::to_chars(text.data(), text.data() + text.size(), *whole).ptr);
     else if (const auto* real = std::get_if<double>(&value))
-        out += numberText(*real, text);
+        out += shortestText(*real, text);
 }
 
 std::string heading(const NamedFigure& figure) { return (*figure.group ? std::string(figure.group) + '_' : std::string()) + figure.key; }

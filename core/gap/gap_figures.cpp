@@ -12,8 +12,6 @@ namespace rungwright
 namespace
 {
 
-double minor(Price price) { return static_cast<double>(price.minor); }
-
 /// The least rung price whose cumulated odds reach p, out of odds that add up to `found`.
 double quantile(std::span<const Rung> ladder, std::span<const double> odds, double found, double p)
 {
@@ -26,19 +24,19 @@ double quantile(std::span<const Rung> ladder, std::span<const double> odds, doub
         if (odds[i] > 0)
             last = i;
         if (odds[i] > 0 && reached >= wanted)
-            return minor(ladder[i].price);
+            return inMinor(ladder[i].price);
     }
-    return minor(ladder[last].price);
+    return inMinor(ladder[last].price);
 }
 
 void fill(GapFigures& figures, double aboveLowest, Price lowest, Price advertisedFloor)
 {
-    figures.expectedCheapest = minor(lowest) + aboveLowest;
-    figures.claimPart = minor(lowest - advertisedFloor);
+    figures.expectedCheapest = inMinor(lowest) + aboveLowest;
+    figures.claimPart = inMinor(lowest - advertisedFloor);
     figures.shapePart = aboveLowest;
     figures.gap = *figures.claimPart + aboveLowest;
     if (advertisedFloor.minor > 0)
-        figures.gapShare = *figures.gap / minor(advertisedFloor);
+        figures.gapShare = *figures.gap / inMinor(advertisedFloor);
 }
 
 } // namespace
@@ -57,7 +55,7 @@ GapFigures gapFigures(std::span<const Rung> ladder, const CheapestOdds& odds, Pr
     double met = 0;
     for (std::size_t i = 0; i < ladder.size(); ++i) {
         found += odds.perRung[i];
-        above += odds.perRung[i] * minor(ladder[i].price - lowest);
+        above += odds.perRung[i] * inMinor(ladder[i].price - lowest);
         if (ladder[i].price <= advertisedFloor)
             met += odds.perRung[i];
     }
@@ -65,18 +63,18 @@ GapFigures gapFigures(std::span<const Rung> ladder, const CheapestOdds& odds, Pr
         return figures;
     fill(figures, above / found, lowest, advertisedFloor);
     figures.chanceFloorMet = met / found;
-    figures.gapMedian = quantile(ladder, odds.perRung, found, 0.5) - minor(advertisedFloor);
-    figures.gapP90 = quantile(ladder, odds.perRung, found, 0.9) - minor(advertisedFloor);
+    figures.gapMedian = quantile(ladder, odds.perRung, found, 0.5) - inMinor(advertisedFloor);
+    figures.gapP90 = quantile(ladder, odds.perRung, found, 0.9) - inMinor(advertisedFloor);
     return figures;
 }
 
 GapFigures gapFigures(const FittedRange& fit, double n, Price lowest, Price advertisedFloor)
 {
     GapFigures figures;
-    fill(figures, expectedCheapest(fit, n) - minor(lowest), lowest, advertisedFloor);
-    figures.chanceFloorMet = 1 - std::pow(fit.survival(minor(advertisedFloor)), n);
-    figures.gapMedian = cheapestQuantile(fit, n, 0.5) - minor(advertisedFloor);
-    figures.gapP90 = cheapestQuantile(fit, n, 0.9) - minor(advertisedFloor);
+    fill(figures, expectedCheapest(fit, n) - inMinor(lowest), lowest, advertisedFloor);
+    figures.chanceFloorMet = 1 - std::pow(fit.survival(inMinor(advertisedFloor)), n);
+    figures.gapMedian = cheapestQuantile(fit, n, 0.5) - inMinor(advertisedFloor);
+    figures.gapP90 = cheapestQuantile(fit, n, 0.9) - inMinor(advertisedFloor);
     return figures;
 }
 
@@ -89,7 +87,7 @@ void curtainSteps(std::span<const Rung> ladder, const CheapestOdds& odds, std::v
     out.reserve(ladder.size()); // However many are tied this time.
     for (std::size_t i = 0; i < ladder.size(); ++i) {
         if (i == 0 || ladder[i].price != ladder[i - 1].price)
-            out.push_back({minor(ladder[i].price), 0});
+            out.push_back({inMinor(ladder[i].price), 0});
         out.back().chance += odds.perRung[i];
     }
     while (!out.empty() && out.back().chance <= 0)

@@ -24,10 +24,8 @@ Column sized(std::vector<double>& storage, std::size_t size)
     return {storage.data(), static_cast<Eigen::Index>(size)};
 }
 
-double minor(Price price) { return static_cast<double>(price.minor); }
-
 /// Distance from rung i to rung i + 1 (counted from 0).
-double riseAfter(std::span<const Rung> ladder, std::size_t i) { return minor(ladder[i + 1].price - ladder[i].price); }
+double riseAfter(std::span<const Rung> ladder, std::size_t i) { return inMinor(ladder[i + 1].price - ladder[i].price); }
 
 /// E = p(1) + sum_i ((m-i)/m)^N (p(i+1) - p(i)): the powers of all distinct prices are carried from one N to the next.
 void perceivedCurve(std::span<const Rung> ladder, double claim, std::size_t count, ThinningWorkspace& work, std::vector<double>& gap)
@@ -92,7 +90,7 @@ void unitCurve(std::span<const Rung> ladder, std::span<const Unit> units, double
     Eigen::Index certain = 0;
     for (std::size_t i = ladder.size(); i-- > 0;) {
         const double chance = units[ladder[i].unit].vacancyChance.value_or(share);
-        const double price = minor(ladder[i].price - ladder.front().price);
+        const double price = inMinor(ladder[i].price - ladder.front().price);
         if (chance <= 0)
             continue;
         if (chance >= 1) {
@@ -172,7 +170,7 @@ void turnoverCurve(std::span<const Rung> ladder, double claim, ThinningWorkspace
             const Lanes ratio = (free + 1) * share;
             const Lanes odds = loss * ratio;
             found += odds;
-            above += odds * minor(ladder[static_cast<std::size_t>(i - 1)].price - ladder.front().price);
+            above += odds * inMinor(ladder[static_cast<std::size_t>(i - 1)].price - ladder.front().price);
             free = i * ratio;
             loss *= load * share;
             if ((loss < kNegligible).all())
@@ -193,7 +191,7 @@ void thinningCurve(std::span<const Rung> ladder, std::span<const Unit> units, co
     if (inputs.note)
         return;
     const auto rentable = static_cast<std::size_t>(std::ranges::count_if(units, &Unit::rentable));
-    const double claim = minor(ladder.front().price - advertisedFloor);
+    const double claim = inMinor(ladder.front().price - advertisedFloor);
     switch (settings.kind) {
     case ModelKind::perceived:
         perceivedCurve(ladder, claim, rentable, work, gap);
@@ -202,7 +200,7 @@ void thinningCurve(std::span<const Rung> ladder, std::span<const Unit> units, co
         if (fit) {
             expectedCheapestForAll(*fit, static_cast<int>(rentable), gap);
             for (double& at : gap)
-                at -= minor(advertisedFloor);
+                at -= inMinor(advertisedFloor);
         }
         break;
     case ModelKind::remainder:
@@ -216,7 +214,7 @@ void thinningCurve(std::span<const Rung> ladder, std::span<const Unit> units, co
         break;
     case ModelKind::onHand:
         for (std::size_t left = 1; left <= ladder.size(); ++left)
-            gap.push_back(minor(ladder[ladder.size() - left].price - advertisedFloor));
+            gap.push_back(inMinor(ladder[ladder.size() - left].price - advertisedFloor));
         break;
     }
 }

@@ -33,6 +33,9 @@ struct Price {
     friend Price operator-(Price a) { return Price{-a.minor}; }
 };
 
+/// As a number of minor units, where expectations and sums of squares begin.
+constexpr double inMinor(Price price) { return static_cast<double>(price.minor); }
+
 /// The dearest price the tool takes from a file: 900 000 000 000 minor units. Beyond it a typing error
 /// is far likelier than a rent, and doubles that hold sums of such prices stay exact.
 inline constexpr Price kGreatestPrice{900'000'000'000};

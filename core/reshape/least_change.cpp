@@ -17,16 +17,14 @@ namespace
 constexpr int kHalvings = 30;
 constexpr int kTightenings = 12;
 
-double minor(Price price) { return static_cast<double>(price.minor); }
-
-std::optional<double> asNumber(std::optional<Price> price) { return price ? std::optional(minor(*price)) : std::nullopt; }
+std::optional<double> asNumber(std::optional<Price> price) { return price ? std::optional(inMinor(*price)) : std::nullopt; }
 
 } // namespace
 
 std::optional<std::pair<Price, Price>> totalLimits(Price today, const TotalWish& wish)
 {
     if (!wish.free) {
-        const Price wanted{wish.changePercent == 0 ? today.minor : std::llround(minor(today) * (1 + wish.changePercent / 100))};
+        const Price wanted{wish.changePercent == 0 ? today.minor : std::llround(inMinor(today) * (1 + wish.changePercent / 100))};
         return std::pair(wanted, wanted);
     }
     if (wish.greatestChange)
@@ -37,7 +35,7 @@ std::optional<std::pair<Price, Price>> totalLimits(Price today, const TotalWish&
 Obstacle LeastChange::setGoal(const Tier& tier, const ChangeWish& wish)
 {
     m_goal = {};
-    m_floor = minor(tier.advertisedFloor);
+    m_floor = inMinor(tier.advertisedFloor);
     if (const auto limits = totalLimits(m_chain.total, wish.total)) {
         m_goal.totalLeast = limits->first;
         m_goal.totalMost = limits->second;
@@ -180,13 +178,13 @@ void LeastChange::roundFitted(const Tier& tier, const PriceRules& rules)
     const auto gapOfRounded = [&] {
         prices.clear();
         for (const Price price : m_rounded.prices)
-            prices.push_back(minor(price));
+            prices.push_back(inMinor(price));
         return fittedGap(tier, prices);
     };
     const RepairAnswer first = m_rounded;
     auto gap = gapOfRounded();
     for (int i = 0; i < kTightenings && (!gap || *gap > wanted + 1e-6); ++i) {
-        *m_goal.expectedMost -= std::max(gap ? 1.1 * (*gap - wanted) : 0.0, 0.02 * minor(rules.points.step));
+        *m_goal.expectedMost -= std::max(gap ? 1.1 * (*gap - wanted) : 0.0, 0.02 * inMinor(rules.points.step));
         round(rules);
         gap = gapOfRounded();
     }
@@ -212,7 +210,7 @@ void LeastChange::writeAnswer(const Tier& tier, const ModelSettings& model)
     answer.continuous.resize(tier.units.size());
     answer.prices.resize(tier.units.size());
     for (std::size_t i = 0; i < tier.units.size(); ++i) {
-        answer.continuous[i] = minor(tier.units[i].asking);
+        answer.continuous[i] = inMinor(tier.units[i].asking);
         answer.prices[i] = tier.units[i].asking;
     }
     double squaresLeast = 0;
@@ -223,7 +221,7 @@ void LeastChange::writeAnswer(const Tier& tier, const ModelSettings& model)
         answer.continuous[unit] = m_optimum.x[i];
         answer.prices[unit] = m_rounded.prices[i];
         squaresLeast += (m_optimum.x[i] - m_chain.today[i]) * (m_optimum.x[i] - m_chain.today[i]);
-        const double change = minor(m_rounded.prices[i]) - m_chain.today[i];
+        const double change = inMinor(m_rounded.prices[i]) - m_chain.today[i];
         squares += change * change;
         answer.changed += change != 0 ? 1 : 0;
         if (!m_chain.odds.empty() && m_rounded.prices[i] <= tier.advertisedFloor)
@@ -246,7 +244,7 @@ void LeastChange::writeAnswer(const Tier& tier, const ModelSettings& model)
     if (model.kind == ModelKind::fitted) {
         answer.gapLeast = fittedGap(tier, m_optimum.x);
         m_optimum.x.assign(m_rounded.prices.size(), 0); // Only its storage is wanted now.
-        std::ranges::transform(m_rounded.prices, m_optimum.x.begin(), minor);
+        std::ranges::transform(m_rounded.prices, m_optimum.x.begin(), inMinor);
         answer.gap = fittedGap(tier, m_optimum.x);
     } else {
         answer.gapLeast = m_optimum.expected - m_floor;
@@ -281,8 +279,8 @@ void LeastChange::explain(const Tier& tier, const ModelSettings& model, const Pr
 
 void LeastChange::explainTotal(const Tier& tier, const ModelSettings& model, const PriceRules& rules, const ChangeWish& wish)
 {
-    const double wanted = minor(m_goal.totalLeast.value_or(Price{}));
-    const double now = std::clamp(wanted, minor(m_answer.leastTotal), minor(m_answer.mostTotal));
+    const double wanted = inMinor(m_goal.totalLeast.value_or(Price{}));
+    const double now = std::clamp(wanted, inMinor(m_answer.leastTotal), inMinor(m_answer.mostTotal));
     for (const RuleFamily family :
          {RuleFamily::locks, RuleFamily::changePercent, RuleFamily::changeMoney, RuleFamily::ceiling, RuleFamily::pointLimits}) {
         m_eased.build(tier, model, rules, wish.order, wish.takenStay, wish.weights, family);
