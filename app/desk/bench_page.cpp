@@ -56,6 +56,7 @@ BenchPage::BenchPage(Workbench& bench, Questions& questions, QWidget* parent) :
         showReading();
     });
     connect(&bench, &Workbench::moving, this, &BenchPage::showReading);
+    connect(&bench, &Workbench::gestureChanged, this, &BenchPage::showTitle);
     showTitle();
     showModel();
     showReading();
@@ -148,7 +149,9 @@ void BenchPage::showTitle()
     const QString title = tr("%1 · %2").arg(QString::fromStdString(tc->tier.site), QString::fromStdString(tc->tier.name));
     m_ui->tierTitle->setText(title);
     m_ui->tierTitle->setToolTip(title);
-    if (m_bench.candidate() < 0)
+    if (m_bench.gesture() == Workbench::Gesture::trial)
+        m_ui->workingOn->setText(tr("%1 of %2 on offer · a trial, not kept yet").arg(m.onOffer).arg(m.rentable));
+    else if (m_bench.candidate() < 0)
         m_ui->workingOn->setText(tr("%1 of %2 on offer · current ladder").arg(m.onOffer).arg(m.rentable));
     else
         m_ui->workingOn->setText(tr("%1 of %2 on offer · working on “%3”").arg(m.onOffer).arg(m.rentable).arg(m_bench.candidateName()));

@@ -38,7 +38,8 @@ void CandidatesModel::rebuild()
 void CandidatesModel::refreshWorked()
 {
     // A moving number left concerns all rows; they follow when the gesture ends. A moving price concerns one.
-    if (m_bench.gesture() == Workbench::Gesture::left || m_bench.candidate() < 0)
+    // What is tried becomes a candidate of its own: it is not the one worked on.
+    if (m_bench.gesture() == Workbench::Gesture::left || m_bench.gesture() == Workbench::Gesture::trial || m_bench.candidate() < 0)
         return;
     const int row = rowOf(m_bench.candidate());
     m_measured[static_cast<std::size_t>(row)] = m_bench.worked();

@@ -19,6 +19,8 @@ constexpr double kSidePad = 8; ///< Pixels between the area's sides and the firs
 
 bool drawnWithMovers(const Workbench& bench, const Unit& unit)
 {
+    if (bench.gesture() == Workbench::Gesture::trial)
+        return !unit.locked;
     // When the total is held, or all is bent, any unit on offer may give way.
     return bench.holdsTotal() && unit.onOffer() && !unit.locked;
 }
@@ -83,7 +85,8 @@ void LadderPlot::onReset()
         for (std::size_t place = 0; place < columns.size(); ++place)
             m_placeOf[columns[place]] = static_cast<std::uint32_t>(place);
         m_moves.assign(tier.units.size(), 0);
-        if (m_bench->candidate() >= 0)
+        markMovers();
+        if (m_bench->candidate() >= 0 || m_bench->gesture() == Workbench::Gesture::trial)
             sortLadder(tier.units, m_bench->currentPrices(), Among::all, m_behind);
         const auto any = [&tier](auto what) { return std::any_of(tier.units.begin(), tier.units.end(), what); };
         m_legend.setKey(any([](const Unit& u) { return u.status == Status::reserved; }),
@@ -117,20 +120,27 @@ void LadderPlot::onGestureChanged()
 {
     if (!shows())
         return;
-    const auto& units = m_bench->tierCase()->tier.units;
-    std::fill(m_moves.begin(), m_moves.end(), char{0});
-    const Workbench::Gesture gesture = m_bench->gesture();
-    if (gesture == Workbench::Gesture::move || gesture == Workbench::Gesture::bend) {
-        for (const std::uint32_t unit : m_bench->moved())
-            m_moves[unit] = 1;
-        for (std::size_t i = 0; i < units.size(); ++i) {
-            if (drawnWithMovers(*m_bench, units[i]))
-                m_moves[i] = 1;
-        }
-    }
+    markMovers();
+    if (m_bench->gesture() == Workbench::Gesture::trial) // Today's ladder stays in sight, whatever is tried.
+        sortLadder(m_bench->tierCase()->tier.units, m_bench->currentPrices(), Among::all, m_behind);
     placeRungs();
     arrange(m_scene);
     marksChanged();
+}
+
+void LadderPlot::markMovers()
+{
+    const auto& units = m_bench->tierCase()->tier.units;
+    std::fill(m_moves.begin(), m_moves.end(), char{0});
+    const Workbench::Gesture gesture = m_bench->gesture();
+    if (gesture == Workbench::Gesture::none || gesture == Workbench::Gesture::left)
+        return;
+    for (const std::uint32_t unit : m_bench->moved())
+        m_moves[unit] = 1;
+    for (std::size_t i = 0; i < units.size(); ++i) {
+        if (drawnWithMovers(*m_bench, units[i]))
+            m_moves[i] = 1;
+    }
 }
 
 void LadderPlot::onSelectionChanged()

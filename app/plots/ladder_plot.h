@@ -90,6 +90,7 @@ private:
     void onReset();
     void onMoving();
     void onGestureChanged();
+    void markMovers();
     void onSelectionChanged();
     void describe();
 

@@ -246,6 +246,7 @@ void PaperPlot::contextMenuEvent(QContextMenuEvent* event)
     menu->setAttribute(Qt::WA_DeleteOnClose);
     menu->addAction(tr("&Copy picture"), this, &PaperPlot::copyPlot)->setObjectName(QStringLiteral("copyPicture"));
     menu->addAction(tr("&Save picture…"), this, &PaperPlot::askAndSave)->setObjectName(QStringLiteral("savePicture"));
+    extendMenu(*menu);
     menu->popup(event->globalPos());
 }
 

@@ -12,6 +12,8 @@
 
 #include <functional>
 
+class QMenu;
+
 namespace rungwright
 {
 
@@ -68,6 +70,8 @@ protected:
     virtual void paintAbove(QPainter&) {}
     /// Pixels for coordinates changed (range, size, margins, export): geometry kept in pixels is stale.
     virtual void areaChanged() {}
+    /// More entries for the context menu, below those for the picture.
+    virtual void extendMenu(QMenu&) {}
     /// Colours or font changed. Call the base.
     virtual void lookChanged();
 

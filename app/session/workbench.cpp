@@ -254,6 +254,23 @@ void Workbench::leftTo(int left)
     emit moving();
 }
 
+bool Workbench::beginTrial(const QString& name)
+{
+    if (!tierCase())
+        return false;
+    m_trialName = name;
+    return m_gesture == Gesture::trial || startGesture(Gesture::trial, {});
+}
+
+void Workbench::tryPrices(std::span<const Price> prices)
+{
+    assert(prices.size() == m_startPrices.size());
+    if (m_gesture != Gesture::trial)
+        return;
+    m_reshaped.prices.assign(prices.begin(), prices.end());
+    reshaped();
+}
+
 void Workbench::holdTotalIfAsked()
 {
     if (m_holdTotal)
@@ -283,6 +300,10 @@ void Workbench::finishGesture()
             m_document.setModel(m_tier, m_settings, *m_settings.left == 1 ? tr("1 unit left") : tr("%1 units left").arg(*m_settings.left));
         return;
     }
+    if (done == Gesture::trial) {
+        keepTrial();
+        return;
+    }
     const QString name = gestureName();
     m_gesture = Gesture::none;
     emit gestureChanged();
@@ -291,6 +312,24 @@ void Workbench::finishGesture()
                       .arg(signedMoneyText(static_cast<double>(m_reshaped.leftOver.minor), currency())));
     }
     commit(name, false);
+}
+
+void Workbench::keepTrial()
+{
+    m_gesture = Gesture::none;
+    emit gestureChanged();
+    if (m_reshaped.prices == m_currentPrices) {
+        emit told(tr("Nothing to keep: these are today's prices."));
+        remeasure();
+        emit reset();
+        return;
+    }
+    Candidate kept;
+    kept.name = m_trialName.toStdString();
+    kept.prices = m_reshaped.prices;
+    const QString name = m_trialName;
+    m_document.addCandidate(m_tier, std::move(kept), name);
+    emit told(name);
 }
 
 void Workbench::giveUpGesture()

@@ -65,7 +65,7 @@ public:
     void setHoldTotal(bool on);
 
     // Gestures.
-    enum class Gesture { none, move, bend, left };
+    enum class Gesture { none, move, bend, left, trial };
     Gesture gesture() const { return m_gesture; }
     /// Starts to drag `units` (ascending unit indices; locked ones do not follow). False when nothing can move.
     bool beginMove(std::vector<std::uint32_t> units);
@@ -77,6 +77,13 @@ public:
     /// Starts to drag the number left. False for models without one.
     bool beginLeft();
     void leftTo(int left);
+    /// Starts to try whole ladders (a solver's while its slider moves): worked() shows each, whatever ladder was on the bench. `name` is
+    /// what the ladder is kept under; a trial that is going on goes on under the new name. False without a tier.
+    bool beginTrial(const QString& name);
+    /// One price per unit, by unit index.
+    void tryPrices(std::span<const Price> prices);
+    const QString& trialName() const { return m_trialName; }
+    /// A trial becomes a candidate of its own, unless it is the current ladder.
     void finishGesture();
     void giveUpGesture();
     /// The units the gesture moves (not those that only give way to hold the total), and their prices at its start, by unit index.
@@ -116,6 +123,7 @@ private:
     void commit(const QString& name, bool nudge);
     QString gestureName() const;
     QString unitName(std::uint32_t unit) const;
+    void keepTrial();
 
     Document& m_document;
     int m_tier = -1;
@@ -144,6 +152,7 @@ private:
     Reshaped m_reshaped;
     Gesture m_gesture = Gesture::none;
     double m_bendExponent = 1.0;
+    QString m_trialName;
     bool m_holdTotal = false;
 };
 

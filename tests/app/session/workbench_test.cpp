@@ -31,6 +31,8 @@ private slots:
     void marksDoNotInterruptADrag();
     void aFloorIsMeasuredAnew();
     void emptyDocumentIsHarmless();
+    void aTrialIsShownAndKeptAsACandidate();
+    void aTrialGivenUpLeavesNoTrace();
     void typedPriceIsHeldInsideTheRules();
 };
 
@@ -355,6 +357,7 @@ void WorkbenchTest::emptyDocumentIsHarmless()
     QVERIFY(!bench.beginMove({}));
     QVERIFY(!bench.beginBend());
     QVERIFY(!bench.beginLeft());
+    QVERIFY(!bench.beginTrial(QStringLiteral("Nothing")));
     bench.nudge(1);
     bench.toggleLock();
     bench.finishGesture();
@@ -376,6 +379,72 @@ void WorkbenchTest::typedPriceIsHeldInsideTheRules()
     QCOMPARE(bench.workedPrices()[0], Price{9000});
     bench.setPrice(0, Price{6120});
     QCOMPARE(bench.workedPrices()[0], Price{6100}); // the nearest price point
+}
+
+void WorkbenchTest::aTrialIsShownAndKeptAsACandidate()
+{
+    Document document;
+    Workbench bench(document);
+    document.begin(inventedScenario(), {}, true);
+    bench.showTier(0);
+    // Even while another candidate is worked on, what is kept becomes one of its own.
+    bench.setPrice(3, Price{7000});
+    QCOMPARE(bench.candidate(), 0);
+    const std::vector<Price> first = document.tier(0)->candidates.at(0).prices;
+    const std::vector<std::uint32_t> columns(bench.columns().begin(), bench.columns().end());
+    QSignalSpy moving(&bench, &Workbench::moving);
+    QVERIFY(bench.beginTrial(QStringLiteral("Least change: gap at most 6.00")));
+    std::vector<Price> prices = askingPrices(bench.tierCase()->tier.units);
+    for (const int by : {-100, -300, -500}) {
+        prices[0] = Price{6000 + by};
+        prices[9] = Price{10500 - by};
+        bench.tryPrices(prices);
+        QCOMPARE(bench.worked().gap.gap.value(), gapOf(bench));
+        QVERIFY(std::equal(prices.begin(), prices.end(), bench.workedPrices().begin(), bench.workedPrices().end()));
+        QVERIFY(std::equal(columns.begin(), columns.end(), bench.columns().begin(), bench.columns().end()));
+    }
+    QCOMPARE(moving.count(), 3);
+    QCOMPARE(document.tier(0)->candidates.size(), std::size_t(1));
+    QVERIFY(bench.beginTrial(QStringLiteral("Least change: gap at most 5.00"))); // the slider went on
+    QCOMPARE(bench.workedPrices()[0], Price{5500});
+    bench.finishGesture();
+    QCOMPARE(document.undoStack().count(), 2);
+    QCOMPARE(document.undoStack().undoText(), QStringLiteral("Least change: gap at most 5.00"));
+    QCOMPARE(document.tier(0)->candidates.size(), std::size_t(2));
+    QCOMPARE(document.tier(0)->candidates[0].prices, first);
+    QCOMPARE(document.tier(0)->candidates[1].prices, prices);
+    QCOMPARE(bench.candidate(), 1);
+    document.undoStack().undo();
+    QCOMPARE(document.tier(0)->candidates.size(), std::size_t(1));
+}
+
+void WorkbenchTest::aTrialGivenUpLeavesNoTrace()
+{
+    Document document;
+    Workbench bench(document);
+    document.begin(inventedScenario(), {}, true);
+    bench.showTier(0);
+    const double before = bench.worked().gap.gap.value();
+    std::vector<Price> prices = askingPrices(bench.tierCase()->tier.units);
+    QVERIFY(bench.beginTrial(QStringLiteral("Even steps")));
+    // Today's prices are nothing to keep.
+    bench.finishGesture();
+    QCOMPARE(document.undoStack().count(), 0);
+    QVERIFY(bench.beginTrial(QStringLiteral("Even steps")));
+    prices[0] = Price{5500};
+    bench.tryPrices(prices);
+    QVERIFY(bench.worked().gap.gap.value() != before);
+    bench.giveUpGesture();
+    QCOMPARE(bench.worked().gap.gap.value(), before);
+    QCOMPARE(document.undoStack().count(), 0);
+    bench.tryPrices(prices); // too late
+    QCOMPARE(bench.worked().gap.gap.value(), before);
+    // An edit from elsewhere ends it.
+    QVERIFY(bench.beginTrial(QStringLiteral("Even steps")));
+    bench.tryPrices(prices);
+    document.setFloor(0, Price{5000});
+    QCOMPARE(bench.gesture(), Workbench::Gesture::none);
+    QCOMPARE(bench.workedPrices()[0], Price{6000});
 }
 
 QTEST_GUILESS_MAIN(WorkbenchTest)
