@@ -13,7 +13,7 @@ namespace rungwright
 namespace
 {
 
-QString fromUtf8(const std::string& text) { return QString::fromStdString(text); }
+QString wordOfUtf8(const std::string& text) { return QString::fromStdString(text); }
 
 QString counted(std::int64_t count) { return numberText(static_cast<double>(count), 0); }
 
@@ -66,7 +66,7 @@ QString tierValue(RefreshKind kind, const TierCase& tierCase, const MoneyWords& 
     case RefreshKind::floorChanged:
         return tierCase.tier.hasFloor() ? money(tierCase.tier.advertisedFloor) : undefinedText();
     case RefreshKind::movedTier:
-        return fromUtf8(tierCase.tier.name);
+        return wordOfUtf8(tierCase.tier.name);
     default:
         return {};
     }
@@ -100,7 +100,7 @@ QString refreshSentence(const RefreshPlan& plan)
             said << Words::tr("Units: %1 today, %2 then.").arg(counted(plan.unitsBefore), counted(plan.unitsAfter));
     }
     if (plan.takesCurrency)
-        said << Words::tr("The scenario names no currency so far and takes the list’s: %1.").arg(fromUtf8(plan.currency.code));
+        said << Words::tr("The scenario names no currency so far and takes the list’s: %1.").arg(wordOfUtf8(plan.currency.code));
     if (plan.seenCleared > 0)
         said << plural(plan.seenCleared, Words::tr("One tier marked as seen is to be looked at again."),
                        Words::tr("%1 tiers marked as seen are to be looked at again."));
@@ -199,7 +199,7 @@ RefreshLineText refreshLineText(const RefreshPlan& plan, const RefreshLine& line
             return QString();
         return one && line.kind != RefreshKind::movedTier ? unitValue(line.kind, *one, money) : tierValue(line.kind, *of, money);
     };
-    return {fromUtf8(shown->tier.site), fromUtf8(shown->tier.name), shownUnit ? fromUtf8(shownUnit->name) : QString(),
+    return {wordOfUtf8(shown->tier.site), wordOfUtf8(shown->tier.name), shownUnit ? wordOfUtf8(shownUnit->name) : QString(),
             value(before, unitBefore), value(after, unitAfter)};
 }
 

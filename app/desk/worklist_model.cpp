@@ -14,7 +14,7 @@ namespace rungwright
 namespace
 {
 
-QString fromUtf8(const std::string& text) { return QString::fromUtf8(text.data(), static_cast<qsizetype>(text.size())); }
+QString worklistText(const std::string& text) { return QString::fromUtf8(text.data(), static_cast<qsizetype>(text.size())); }
 
 bool isNumeric(int column) { return column >= WorklistModel::onOfferColumn && column <= WorklistModel::leanColumn; }
 
@@ -161,9 +161,9 @@ QString WorklistModel::tierText(int tier, int column) const
     };
     switch (column) {
     case tierColumn:
-        return fromUtf8(tierCase.tier.name);
+        return worklistText(tierCase.tier.name);
     case siteColumn:
-        return fromUtf8(tierCase.tier.site);
+        return worklistText(tierCase.tier.site);
     case onOfferColumn:
         return r.measured ? tr("%1 / %2").arg(r.onOffer).arg(r.rentable) : pending;
     case floorColumn:
@@ -181,7 +181,7 @@ QString WorklistModel::tierText(int tier, int column) const
     case seenColumn:
         return tierCase.seen ? tr("seen") : QString();
     case noteColumn:
-        return fromUtf8(tierCase.note).simplified();
+        return worklistText(tierCase.note).simplified();
     default:
         return {};
     }
@@ -219,7 +219,7 @@ QString WorklistModel::description(int tier) const
 {
     const WorklistRow& r = m_list.row(tier);
     const TierCase& tierCase = m_list.tierCase(tier);
-    QString said = tr("%1, %2: ").arg(fromUtf8(tierCase.tier.site), fromUtf8(tierCase.tier.name));
+    QString said = tr("%1, %2: ").arg(worklistText(tierCase.tier.site), worklistText(tierCase.tier.name));
     said += r.measured ? tr("%1 of %2 rentable units on offer").arg(r.onOffer).arg(r.rentable) : tr("not measured yet");
     said += tr(", advertised from %1").arg(floorText(tierCase.tier.advertisedFloor, m_list.document().scenario().currency));
     if (r.gap && r.share)
@@ -230,7 +230,7 @@ QString WorklistModel::description(int tier) const
     if (!flags.isEmpty())
         said += QLatin1Char('\n') + flags;
     if (!tierCase.note.empty())
-        said += QLatin1Char('\n') + tr("Note: %1").arg(fromUtf8(tierCase.note));
+        said += QLatin1Char('\n') + tr("Note: %1").arg(worklistText(tierCase.note));
     return said;
 }
 
@@ -267,7 +267,7 @@ QVariant WorklistModel::tierData(int tier, int column, int role) const
     case secondLineRole: {
         QStringList parts;
         if (!m_wish.grouped)
-            parts << fromUtf8(tierCase.tier.site);
+            parts << worklistText(tierCase.tier.site);
         const QString flags = flagWords(m_list.flags(tier));
         if (!flags.isEmpty())
             parts << flags;
