@@ -21,7 +21,7 @@ namespace
 {
 
 constexpr double kSwatch = 34; ///< Room for a stretch of line with its mark, and some air.
-constexpr double kGap = 18;
+constexpr double kSideGap = 18;
 constexpr double kInset = 4; ///< Between a column's sides and its first and last rung.
 
 /// Line styles beside the colours, in pen widths; empty = solid.
@@ -79,7 +79,7 @@ void SideBySidePlot::paintFrame(QPainter& painter)
     painter.setPen(look().faintInk);
     const QString title = priceAxisTitle(m_currency);
     painter.drawText(QPointF(8, kHeadingTop + metrics.ascent()), title);
-    const double left = 8 + metrics.horizontalAdvance(title) + 2 * kGap;
+    const double left = 8 + metrics.horizontalAdvance(title) + 2 * kSideGap;
     const QRectF room(left, kHeadingTop, viewport().width() - left - 12, metrics.height());
     const QString beside = m_arrangement == Arrangement::columns ? tr("beside each ladder, the chance that nothing costs less (0 to 100 %)")
                                                                  : tr("on the right, the chance that nothing costs less (0 to 100 %)");
@@ -228,7 +228,7 @@ int SideBySidePlot::legendRows(double width) const
     double x = 0;
     for (const Side& side : m_sides) {
         const double entry = kSwatch + std::min(metrics.horizontalAdvance(side.name), 0.3 * width) +
-                             metrics.horizontalAdvance(QStringLiteral(": ") + gapText(side)) + kGap;
+                             metrics.horizontalAdvance(QStringLiteral(": ") + gapText(side)) + kSideGap;
         if (x > 0 && x + entry > width) {
             ++rows;
             x = 0;
@@ -248,7 +248,7 @@ void SideBySidePlot::paintOverlayLegend(QPainter& painter)
         const Side& side = m_sides[s];
         const QString text = isolated(metrics.elidedText(side.name, Qt::ElideRight, 0.3 * width)) + QStringLiteral(": ") + gapText(side);
         const double entry = kSwatch + std::min(metrics.horizontalAdvance(side.name), 0.3 * width) +
-                             metrics.horizontalAdvance(QStringLiteral(": ") + gapText(side)) + kGap;
+                             metrics.horizontalAdvance(QStringLiteral(": ") + gapText(side)) + kSideGap;
         if (x > 0 && x + entry > width) {
             x = 0;
             top += 1.15 * metrics.height();
