@@ -8,6 +8,7 @@
 #include "reshape/rules.h"
 #include "tier_list.h"
 
+#include <compare>
 #include <optional>
 #include <string>
 #include <vector>
@@ -64,6 +65,22 @@ struct FlagThresholds {
     bool operator==(const FlagThresholds&) const = default;
 };
 
+/// Whose rules: the scenario's (no names), a site's (no tier), or one tier's.
+struct RuleScope {
+    std::string site;
+    std::string tier;
+
+    auto operator<=>(const RuleScope&) const = default;
+};
+
+/// Rules of a site or a tier, in place of the scenario's.
+struct OwnRules {
+    RuleScope scope; ///< Names a site; it need not be among the scenario's at the time.
+    PriceRules rules;
+
+    bool operator==(const OwnRules&) const = default;
+};
+
 using TierList = SharedList<TierCase>;
 
 /// Everything one `*.rungs.json` file holds. Self-contained: no path inside.
@@ -71,7 +88,8 @@ struct Scenario {
     Currency currency;
     std::string title;
     std::string note;
-    PriceRules rules;
+    PriceRules rules;               ///< Of every tier for which nearer ones are not set.
+    std::vector<OwnRules> ownRules; ///< In ascending order of scope, each scope once.
     FlagThresholds flags;
     TierList tiers;
 
@@ -83,6 +101,14 @@ inline constexpr std::string_view kCurrentName = "current";
 
 /// The tier of that site and name; nullptr when there is none.
 const TierCase* findTier(const Scenario& scenario, std::string_view site, std::string_view tier);
+
+/// The rules set for a scope itself; nullptr when there are none (the scenario always has some).
+const PriceRules* rulesOf(const Scenario& scenario, const RuleScope& scope);
+/// Sets a scope's rules, or takes them away; the scenario's own can only be set.
+void setRulesOf(Scenario& scenario, const RuleScope& scope, std::optional<PriceRules> rules);
+/// Whose rules are in force for a tier: the nearest ones win whole, the tier's before the site's before the scenario's.
+RuleScope ruleScopeFor(const Scenario& scenario, const Tier& tier);
+const PriceRules& rulesFor(const Scenario& scenario, const Tier& tier);
 
 /// The prices of a candidate (index into tierCase.candidates), or the current ones for -1.
 std::vector<Price> pricesOf(const TierCase& tierCase, int candidate);

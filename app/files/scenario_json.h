@@ -11,7 +11,7 @@
 namespace rungwright
 {
 
-inline constexpr int kScenarioVersion = 2;
+inline constexpr int kScenarioVersion = 3;
 
 /// UTF-8 JSON, two-space indented, one unit a line, keys in a fixed order, prices as decimal strings ("69.00"): two writings
 /// of equal scenarios are byte-identical, and differences read well. Ends with a newline.

@@ -5,6 +5,7 @@
 #include "encoding.h"
 #include "json_text.h"
 #include "json_walk.h"
+#include "rules_json.h"
 #include "whole_file.h"
 #include "words.h"
 
@@ -36,9 +37,10 @@ class Reader
 public:
     Scenario read(const QJsonValue& document)
     {
-        const JsonWalk top(
-            document, {},
-            {Key("format"), Key("version"), Key("title"), Key("currency"), Key("note"), Key("rules"), Key("flags"), Key("tiers")}, trouble);
+        const JsonWalk top(document, {},
+                           {Key("format"), Key("version"), Key("title"), Key("currency"), Key("note"), Key("rules"), Key("own_rules"),
+                            Key("flags"), Key("tiers")},
+                           trouble);
         Scenario scenario;
         scenario.title = top.text(Key("title"));
         scenario.note = top.text(Key("note"));
@@ -50,7 +52,8 @@ public:
             top.refuse(Key("currency"), Words::tr("not a currency"), Words::tr("a code of ISO 4217 such as EUR, JPY or KWD, in capitals"));
         scenario.currency = m_currency;
         if (top.has(Key("rules")))
-            scenario.rules = rules(top.value(Key("rules")));
+            scenario.rules = readRules(top.value(Key("rules")), QStringLiteral("rules"), m_currency, trouble);
+        scenario.ownRules = readOwnRules(top, m_currency, trouble);
         if (top.has(Key("flags")))
             scenario.flags = flags(top.value(Key("flags")));
         const QJsonArray tiers = top.list(Key("tiers"), true);
@@ -70,37 +73,6 @@ public:
     JsonTrouble trouble;
 
 private:
-    PriceRules rules(const QJsonValue& value)
-    {
-        const JsonWalk walk(value, QStringLiteral("rules"),
-                            {Key("step"), Key("endings"), Key("least"), Key("greatest"), Key("greatest_change_percent"),
-                             Key("greatest_change"), Key("ceiling")},
-                            trouble);
-        PriceRules rules;
-        rules.points.step = walk.price(Key("step"), m_currency).value_or(rules.points.step);
-        const QJsonArray endings = walk.list(Key("endings"), false);
-        for (qsizetype i = 0; i < endings.size() && !trouble.any(); ++i)
-            ending(endings.at(i), walk.placeOf(Key("endings"), i), rules.points);
-        rules.points.least = walk.price(Key("least"), m_currency);
-        rules.points.greatest = walk.price(Key("greatest"), m_currency);
-        if (rules.points.least && rules.points.greatest && *rules.points.greatest < *rules.points.least)
-            walk.refuse(Key("greatest"), Words::tr("below the least price"), Words::tr("at least the least price"));
-        rules.greatestChangePercent = walk.number(Key("greatest_change_percent"), 0, kGreatestDouble);
-        rules.greatestChange = walk.price(Key("greatest_change"), m_currency);
-        rules.ceiling = walk.price(Key("ceiling"), m_currency);
-        return rules;
-    }
-
-    void ending(const QJsonValue& value, const QString& place, PricePoints& points)
-    {
-        const QString wanted = Words::tr("amounts in quotation marks from 0 up to, not including, the step, in rising order");
-        const std::optional<Price> price = value.isString() ? parsePlain(value.toString().toStdString(), m_currency) : std::nullopt;
-        if (!price || price->minor < 0 || *price >= points.step || (!points.endings.empty() && *price <= points.endings.back()))
-            trouble.set(place, Words::tr("not an ending"), shownValue(value), wanted);
-        else
-            points.endings.push_back(*price);
-    }
-
     FlagThresholds flags(const QJsonValue& value)
     {
         const JsonWalk walk(value, QStringLiteral("flags"), {Key("leans_left"), Key("last_units"), Key("gap_share")}, trouble);
@@ -266,7 +238,8 @@ QString envelopeTrouble(const QJsonDocument& document)
     if (version.isDouble() && number > kScenarioVersion)
         return Words::tr("the scenario is of format version %1, and this program knows versions up to %2. Open it with a newer Rungwright")
             .arg(QString::number(number, 'g', 12), QString::number(kScenarioVersion));
-    // Version 1 is version 2 without thresholds, seen marks and sheets handed over.
+    // Version 2 is version 3 without rules of sites and tiers and without rules for whole tiers; version 1 lacks thresholds, seen marks and
+    // sheets handed over besides.
     if (!version.isDouble() || number < 1 || number != std::floor(number))
         return Words::tr("version: not a version; found %1; wanted: a whole number from 1 to %2")
             .arg(shownValue(version), QString::number(kScenarioVersion));

@@ -2,6 +2,7 @@
 #include "scenario_json.h"
 
 #include "json_text.h"
+#include "rules_json.h"
 #include "whole_file.h"
 #include "words.h"
 
@@ -29,27 +30,16 @@ public:
 
     std::string price(Price value) const { return '"' + plainText(value, m_currency) + '"'; }
 
-    void rules(const PriceRules& rules)
+    void rules(const Scenario& scenario)
     {
-        m_out += "  \"rules\": {\n    \"step\": " + price(rules.points.step);
-        if (!rules.points.endings.empty()) {
-            std::string endings;
-            for (const Price ending : rules.points.endings)
-                endings += (endings.empty() ? "" : ", ") + price(ending);
-            m_out += ",\n    \"endings\": [" + endings + "]";
-        }
-        const auto line = [this](std::string_view key, const std::string& value) { ((m_out += ",\n    \"") += key) += "\": " + value; };
-        if (rules.points.least)
-            line("least", price(*rules.points.least));
-        if (rules.points.greatest)
-            line("greatest", price(*rules.points.greatest));
-        if (rules.greatestChangePercent)
-            line("greatest_change_percent", number(*rules.greatestChangePercent));
-        if (rules.greatestChange)
-            line("greatest_change", price(*rules.greatestChange));
-        if (rules.ceiling)
-            line("ceiling", price(*rules.ceiling));
-        m_out += "\n  },\n";
+        m_out += "  \"rules\": ";
+        writeRules(m_out, scenario.rules, m_currency, "  ");
+        m_out += ",\n";
+        if (scenario.ownRules.empty())
+            return;
+        m_out += "  \"own_rules\": ";
+        writeOwnRules(m_out, scenario.ownRules, m_currency, "  ");
+        m_out += ",\n";
     }
 
     void flags(const FlagThresholds& flags)
@@ -163,7 +153,7 @@ QByteArray scenarioToJson(const Scenario& scenario)
     out += "  \"title\": " + quotedJson(scenario.title) + ",\n";
     out += "  \"currency\": " + quotedJson(scenario.currency.code) + ",\n";
     out += "  \"note\": " + quotedJson(scenario.note) + ",\n";
-    writer.rules(scenario.rules);
+    writer.rules(scenario);
     writer.flags(scenario.flags);
     out += "  \"tiers\": [";
     writer.list(scenario.tiers.size(), "", "  ", [&](std::size_t i) { writer.tier(scenario.tiers[i]); });

@@ -49,7 +49,7 @@ void LadderPlot::bendByKey(int steps)
 {
     if (m_bendUnit < 0 || !m_bench->beginBend())
         return;
-    const PricePoints& points = m_bench->document().scenario().rules.points;
+    const PricePoints& points = m_bench->rules().points;
     const Price wanted = points.stepped(Price{std::llround(m_bendStart)}, steps);
     m_bench->bendTo(exponentFor(static_cast<double>(wanted.minor)));
     m_bench->finishGesture();

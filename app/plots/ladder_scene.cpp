@@ -137,10 +137,8 @@ QStringList LadderPlot::dragText(std::uint32_t unit) const
         const double share = start.minor > 0 ? by / static_cast<double>(start.minor) : 0.0;
         lines << tr("%1 (%2) from %3").arg(signedMoneyText(by, currency), percentText(share, true), moneyText(start, currency));
     }
-    if (m_bench->bound() != Bound::none) {
-        const std::string_view reason = boundReason(m_bench->bound());
-        lines << QString::fromUtf8(reason.data(), static_cast<qsizetype>(reason.size()));
-    }
+    if (const QString held = m_bench->boundText(); !held.isEmpty())
+        lines << held;
     if (m_bench->holdsTotal() && m_bench->leftOver() != Price{})
         lines << tr("no room left: asking total %1").arg(signedMoneyText(static_cast<double>(m_bench->leftOver().minor), currency));
     return lines;

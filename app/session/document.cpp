@@ -213,12 +213,22 @@ void Document::setModel(int tierIndex, const ModelSettings& model, const QString
                                                model, {DocumentChange::Kind::model, tierIndex, -1}));
 }
 
-void Document::setRules(const PriceRules& rules)
+void Document::setRules(const RuleScope& scope, const PriceRules& rules)
 {
-    if (m_scenario.rules == rules)
+    if (const PriceRules* now = rulesOf(m_scenario, scope); now && *now == rules)
         return;
-    m_undo.push(new ChangeValue<PriceRules>(*this, tr("Change the price rules"), [](Scenario& s) -> PriceRules& { return s.rules; }, rules,
-                                            {DocumentChange::Kind::rules, -1, -1}));
+    QString name = tr("Change the price rules");
+    if (!scope.site.empty())
+        name = tr("Price rules of %1").arg(fromUtf8(scope.tier.empty() ? scope.site : scope.tier));
+    m_undo.push(new SetRules(*this, name, scope, rules));
+}
+
+void Document::dropRules(const RuleScope& scope)
+{
+    assert(scope != RuleScope{});
+    if (rulesOf(m_scenario, scope))
+        m_undo.push(new SetRules(*this, tr("Drop the price rules of %1").arg(fromUtf8(scope.tier.empty() ? scope.site : scope.tier)), scope,
+                                 std::nullopt));
 }
 
 void Document::setTierNote(int tierIndex, const QString& note)

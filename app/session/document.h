@@ -27,7 +27,7 @@ struct DocumentChange {
         candidates, ///< A candidate came, went, was renamed, noted or chosen.
         units,      ///< Locks of the tier's units.
         model,      ///< The tier's availability model or its settings.
-        rules,      ///< The scenario's price rules.
+        rules,      ///< Price rules of the scenario, a site or a tier.
         notes,      ///< Notes of the scenario or of the tier.
         flags,      ///< The thresholds from where on the worklist flags.
         seen,       ///< The "seen" mark of the tier, or of several (tier -1).
@@ -94,7 +94,10 @@ public:
     void chooseCandidate(int tier, std::optional<int> candidate);
     void setLocked(int tier, std::span<const std::uint32_t> units, bool locked);
     void setModel(int tier, const ModelSettings& model, const QString& stepName);
-    void setRules(const PriceRules& rules);
+    void setRules(const PriceRules& rules) { setRules(RuleScope{}, rules); }
+    void setRules(const RuleScope& scope, const PriceRules& rules);
+    /// The site's or tier's own rules go: the next wider ones hold.
+    void dropRules(const RuleScope& scope);
     void setTierNote(int tier, const QString& note);
     void setScenarioNote(const QString& note);
     void setFlagThresholds(const FlagThresholds& flags);

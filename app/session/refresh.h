@@ -12,7 +12,8 @@
 //   of it moves along; changes of candidates do not, for a candidate is a ladder of one tier.
 // - A candidate keeps its price of a unit where that differs from what was asked; elsewhere it follows what is asked now. A new unit
 //   stands in it at its asking price.
-// - Notes, models, rules, the candidate chosen and the last sheet handed over stay. "Seen" marks are taken away: it is another week.
+// - Rules stay, those of sites and tiers that the list no longer names too: they hold again when these come back.
+// - Notes, models, the candidate chosen and the last sheet handed over stay. "Seen" marks are taken away: it is another week.
 #pragma once
 
 #include "outcome.h"

@@ -103,6 +103,19 @@ void DiscardCandidate::undo()
     announce({DocumentChange::Kind::candidates, m_tier, m_index});
 }
 
+SetRules::SetRules(Document& document, const QString& name, RuleScope scope, std::optional<PriceRules> rules) :
+    ScenarioStep(document, name), m_scope(std::move(scope)), m_other(std::move(rules))
+{
+}
+
+void SetRules::swap()
+{
+    const PriceRules* now = rulesOf(scenario(), m_scope);
+    std::optional<PriceRules> before = now ? std::optional(*now) : std::nullopt;
+    setRulesOf(scenario(), m_scope, std::exchange(m_other, std::move(before)));
+    announce({DocumentChange::Kind::rules, -1, -1});
+}
+
 SetLocks::SetLocks(Document& document, const QString& name, int tier, std::vector<std::uint32_t> units, bool locked) :
     ScenarioStep(document, name), m_tier(tier), m_units(std::move(units)), m_locked(locked)
 {

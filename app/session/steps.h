@@ -113,6 +113,21 @@ private:
     std::optional<int> m_chosenBefore;
 };
 
+/// Rules of a scope come, change or go.
+class SetRules : public ScenarioStep
+{
+public:
+    SetRules(Document& document, const QString& name, RuleScope scope, std::optional<PriceRules> rules);
+    void redo() override { swap(); }
+    void undo() override { swap(); }
+
+private:
+    void swap();
+
+    RuleScope m_scope;
+    std::optional<PriceRules> m_other;
+};
+
 /// Locks of some units.
 class SetLocks : public ScenarioStep
 {

@@ -1,10 +1,12 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "workbench.h"
 
+#include "rules_words.h"
 #include "wording.h"
 
 #include <algorithm>
 #include <cassert>
+#include <cmath>
 #include <utility>
 
 namespace rungwright
@@ -57,6 +59,17 @@ void Workbench::workOn(int candidate)
 {
     if (candidate != m_candidate)
         showTier(m_tier, candidate);
+}
+
+const PriceRules& Workbench::rules() const
+{
+    const TierCase* tc = tierCase();
+    return tc ? rulesFor(m_document.scenario(), tc->tier) : m_document.scenario().rules;
+}
+
+QString Workbench::boundText() const
+{
+    return bound() == Bound::none ? QString() : tr("held: %1").arg(boundWords(bound(), m_rules, currency()));
 }
 
 bool Workbench::isSelected(std::uint32_t unit) const { return std::binary_search(m_selection.begin(), m_selection.end(), unit); }
@@ -171,6 +184,8 @@ bool Workbench::startGesture(Gesture gesture, std::vector<std::uint32_t> units)
     m_moved = std::move(units);
     m_startPrices.assign(m_workedPrices.begin(), m_workedPrices.end());
     m_reshaped = Reshaped{m_startPrices, Bound::none, Price{}};
+    m_rules = rules();
+    m_limits = tierLimitsOf(tierCase()->tier, m_rules);
     m_gesture = gesture;
     emit gestureChanged();
     return true;
@@ -196,8 +211,12 @@ void Workbench::moveBy(Price by)
 {
     if (m_gesture != Gesture::move)
         return;
-    moveUnits(tierCase()->tier.units, m_startPrices, m_moved, by, m_document.scenario().rules, m_reshaped);
-    holdTotalIfAsked();
+    const Tier& tier = tierCase()->tier;
+    const auto move = [&](std::int64_t part) {
+        moveUnits(tier.units, m_startPrices, m_moved, Price{part}, m_rules, m_reshaped);
+        holdTotalIfAsked();
+    };
+    makeWithin(tier, m_limits, m_startPrices, by.minor, move, m_reshaped);
     reshaped();
 }
 
@@ -228,9 +247,16 @@ void Workbench::bendTo(double exponent)
     if (m_gesture != Gesture::bend)
         return;
     // Beyond this every rung but the ends lies on one of them: nothing more to see.
-    m_bendExponent = std::clamp(exponent, 0.05, 20.0);
-    bendUnits(tierCase()->tier.units, m_startPrices, m_moved, m_bendExponent, m_document.scenario().rules, m_reshaped);
-    holdTotalIfAsked();
+    const double wanted = std::clamp(exponent, 0.05, 20.0);
+    // Parts of a bend, when a rule holds it back: finer than a price point shows.
+    constexpr std::int64_t parts = 4096;
+    const Tier& tier = tierCase()->tier;
+    const auto bend = [&](std::int64_t part) {
+        m_bendExponent = part == parts ? wanted : std::pow(wanted, static_cast<double>(part) / static_cast<double>(parts));
+        bendUnits(tier.units, m_startPrices, m_moved, m_bendExponent, m_rules, m_reshaped);
+        holdTotalIfAsked();
+    };
+    makeWithin(tier, m_limits, m_startPrices, parts, bend, m_reshaped);
     reshaped();
 }
 
@@ -274,7 +300,7 @@ void Workbench::tryPrices(std::span<const Price> prices)
 void Workbench::holdTotalIfAsked()
 {
     if (m_holdTotal)
-        holdTotal(tierCase()->tier.units, m_startPrices, m_onOffer, m_moved, m_document.scenario().rules, m_reshaped);
+        holdTotal(tierCase()->tier.units, m_startPrices, m_onOffer, m_moved, m_rules, m_reshaped);
     else
         m_reshaped.leftOver = Price{};
 }
@@ -381,10 +407,14 @@ void Workbench::nudge(int steps)
 {
     if (m_gesture != Gesture::none || !beginMove(m_selection))
         return;
-    nudgeUnits(tierCase()->tier.units, m_startPrices, m_moved, steps, m_document.scenario().rules, m_reshaped);
-    holdTotalIfAsked();
+    const Tier& tier = tierCase()->tier;
+    const auto go = [&](std::int64_t part) {
+        nudgeUnits(tier.units, m_startPrices, m_moved, static_cast<int>(part), m_rules, m_reshaped);
+        holdTotalIfAsked();
+    };
+    makeWithin(tier, m_limits, m_startPrices, steps, go, m_reshaped);
     if (m_reshaped.bound != Bound::none && m_reshaped.prices == m_startPrices) {
-        const QString reason = QString::fromUtf8(boundReason(m_reshaped.bound).data());
+        const QString reason = boundWords(m_reshaped.bound, m_rules, currency());
         giveUpGesture();
         emit told(tr("No further: %1.").arg(reason));
         return;
@@ -401,8 +431,8 @@ void Workbench::setPrice(std::uint32_t unit, Price wanted)
         return;
     moveBy(wanted - m_startPrices[unit]);
     if (m_reshaped.bound != Bound::none)
-        emit told(tr("Held at %1: %2.")
-                      .arg(moneyText(m_reshaped.prices[unit], currency()), QString::fromUtf8(boundReason(m_reshaped.bound).data())));
+        emit told(
+            tr("Held at %1: %2.").arg(moneyText(m_reshaped.prices[unit], currency()), boundWords(m_reshaped.bound, m_rules, currency())));
     finishGesture();
 }
 

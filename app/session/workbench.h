@@ -5,6 +5,7 @@
 #include "document.h"
 #include "gap/measure.h"
 #include "reshape/by_hand.h"
+#include "reshape/tier_limits.h"
 
 #include <QObject>
 
@@ -48,6 +49,8 @@ public:
     const Measurement& worked() const { return *m_worked; }
     std::span<const Price> currentPrices() const { return m_currentPrices; }
     std::span<const Price> workedPrices() const { return m_workedPrices; }
+    /// The price rules in force for the tier.
+    const PriceRules& rules() const;
     /// Model settings in force, a marker being dragged included.
     const ModelSettings& settings() const { return m_settings; }
 
@@ -91,6 +94,8 @@ public:
     std::span<const Price> startPrices() const { return m_startPrices; }
     /// What stopped the gesture short, if anything; what could not be spread when the total is held.
     Bound bound() const { return m_reshaped.bound; }
+    /// The same in words, with the rule's figure: "held: greatest change 10 %". Empty when nothing did.
+    QString boundText() const;
     Price leftOver() const { return m_reshaped.leftOver; }
 
     // Whole gestures in one call.
@@ -150,6 +155,8 @@ private:
     std::vector<std::uint32_t> m_moved;
     std::vector<std::uint32_t> m_onOffer;
     Reshaped m_reshaped;
+    PriceRules m_rules; ///< In force during the gesture.
+    TierLimits m_limits;
     Gesture m_gesture = Gesture::none;
     double m_bendExponent = 1.0;
     QString m_trialName;

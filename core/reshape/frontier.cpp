@@ -26,7 +26,7 @@ bool FrontierTracer::prepare(const Tier& tier, const ModelSettings& model, const
     m_weightAll = 0;
     for (const double v : m_chain.weight)
         m_weightAll += v;
-    return tier.hasFloor() && !m_chain.odds.empty();
+    return tier.hasFloor() && !m_chain.odds.empty() && m_chain.reachFloor == m_chain.wantedAtFloor;
 }
 
 const std::vector<FrontierPoint>& FrontierTracer::byChange(const Tier& tier, const ModelSettings& model, const PriceRules& rules,
@@ -37,7 +37,9 @@ const std::vector<FrontierPoint>& FrontierTracer::byChange(const Tier& tier, con
         return m_points;
     ChainProblem problem = m_chain.problem();
     const Price today = m_chain.total;
-    if (const auto limits = totalLimits(today, wish.total)) {
+    if (const auto limits = totalLimits(today, wish.total, rules)) {
+        if (limits->first > limits->second)
+            return m_points;
         problem.totalLeast = static_cast<double>(limits->first.minor);
         problem.totalMost = static_cast<double>(limits->second.minor);
     }
@@ -81,8 +83,12 @@ const std::vector<FrontierPoint>& FrontierTracer::byTotal(const Tier& tier, cons
     if (reach.status != ChainStatus::solved)
         return m_points;
     const auto today = static_cast<double>(m_chain.total.minor);
-    const double from = std::max(reach.leastTotal, today * (1 - percent / 100));
-    const double to = std::min(reach.mostTotal, today * (1 + percent / 100));
+    double from = std::max(reach.leastTotal, today * (1 - percent / 100));
+    double to = std::min(reach.mostTotal, today * (1 + percent / 100));
+    if (const auto room = totalRoomOf(m_chain.total, rules)) {
+        from = std::max(from, inMinor(room->least));
+        to = std::min(to, inMinor(room->most));
+    }
     for (int i = 0; i < count && from <= to; ++i) {
         const double total = from + (to - from) * i / (count - 1);
         problem.totalLeast = problem.totalMost = total;

@@ -20,10 +20,16 @@ std::string_view familyPhrase(RuleFamily family)
         return "the greatest change in money";
     case RuleFamily::ceiling:
         return "the ceiling";
+    case RuleFamily::least:
+        return "the lowest asking price";
     case RuleFamily::pointLimits:
         return "the least and greatest price point";
     case RuleFamily::total:
         return "the asking total";
+    case RuleFamily::tierTotal:
+        return "the greatest change of the tier's asking total";
+    case RuleFamily::shareAtFloor:
+        return "the least share at the advertised floor";
     }
     return "";
 }
@@ -37,6 +43,8 @@ void roomsOf(std::span<const Unit> units, const PriceRules& rules, std::optional
         eased.greatestChange.reset();
     if (without == RuleFamily::ceiling)
         eased.ceiling.reset();
+    if (without == RuleFamily::least)
+        eased.least.reset();
     if (without == RuleFamily::pointLimits)
         eased.points.least = eased.points.greatest = std::nullopt;
     out.clear();
@@ -121,21 +129,43 @@ void LadderChain::build(const Tier& tier, const ModelSettings& model, const Pric
         odds.clear();
     for (double& w : odds)
         w /= found;
+
+    wantedAtFloor = reachFloor = 0;
+    if (!rules.leastShareAtFloor || !tier.hasFloor() || without == RuleFamily::shareAtFloor)
+        return;
+    const auto onOffer = static_cast<std::size_t>(std::ranges::count_if(tier.units, &Unit::onOffer));
+    wantedAtFloor = unitsWantedAtFloor(onOffer, rules);
+    PricePoints points = rules.points;
+    if (without == RuleFamily::pointLimits)
+        points.least = points.greatest = std::nullopt;
+    for (std::size_t i = 0; i < places.size() && reachFloor < wantedAtFloor; ++i) {
+        if (counted[i] == 0)
+            continue;
+        if (!holdPlaceAtFloor(i, tier.advertisedFloor, points))
+            return;
+        ++reachFloor;
+    }
+}
+
+bool LadderChain::holdPlaceAtFloor(std::size_t place, Price floor, const PricePoints& points)
+{
+    if (most[place] <= floor)
+        return true;
+    Price price = todayPrices[place] <= floor ? todayPrices[place] : Price{0};
+    if (const auto point = points.atOrBelow(floor))
+        price = std::max(price, *point);
+    if (price < least[place])
+        return false;
+    most[place] = price;
+    hi[place] = inMinor(price);
+    return true;
 }
 
 bool LadderChain::holdAtFloor(std::size_t rungs, Price floor, const PricePoints& points)
 {
-    for (std::size_t i = 0; i < rungs; ++i) {
-        if (most[i] <= floor)
-            continue;
-        Price price = todayPrices[i] <= floor ? todayPrices[i] : Price{0};
-        if (const auto point = points.atOrBelow(floor))
-            price = std::max(price, *point);
-        if (price < least[i])
+    for (std::size_t i = 0; i < rungs; ++i)
+        if (!holdPlaceAtFloor(i, floor, points))
             return false;
-        most[i] = price;
-        hi[i] = static_cast<double>(price.minor);
-    }
     return true;
 }
 

@@ -14,14 +14,18 @@
 namespace rungwright
 {
 
-/// The order of prices a reshaping keeps.
-enum class OrderKept : unsigned char {
-    present, ///< Today's: a unit asked for less stays at or below one asked for more.
-    grade,   ///< A higher grade is never asked for less: inversions are repaired. Within a grade today's order.
-};
-
 /// Kinds of rules that can be set aside to see what they cost.
-enum class RuleFamily : unsigned char { locks, changePercent, changeMoney, ceiling, pointLimits, total };
+enum class RuleFamily : unsigned char {
+    locks,
+    changePercent,
+    changeMoney,
+    ceiling,
+    least, ///< The floor for asking prices.
+    pointLimits,
+    total,        ///< The asking total as wished.
+    tierTotal,    ///< How far the rules let the asking total change.
+    shareAtFloor, ///< The least share of units at the advertised floor.
+};
 /// A phrase for the user: "the locks", "the greatest change in percent", ...
 std::string_view familyPhrase(RuleFamily family);
 
@@ -47,10 +51,13 @@ struct LadderChain {
     std::vector<double> odds;
     CheapestOdds cheapest;
     Price total; ///< Asking total of the units on offer, today.
+    /// How many of the units on offer the rules want at or below the advertised floor, 0 without a floor, and how many could come down
+    /// there by their own rules, one from the lowest on; fewer than wanted: the bounds do not hold that rule.
+    std::size_t wantedAtFloor = 0, reachFloor = 0;
 
     /// The units the model works on (modelUnits()) are those that move. Taken units among them count towards what an enquirer finds, but
     /// not towards the asking total; with `takenStay` they keep their prices. Units the model leaves out keep theirs. `weights` by unit
-    /// index, > 0; empty = 1 each.
+    /// index, > 0; empty = 1 each. The lowest units on offer that the rules want at the advertised floor are held there by their bounds.
     void build(const Tier& tier, const ModelSettings& model, const PriceRules& rules, OrderKept order, bool takenStay,
                std::span<const double> weights, std::optional<RuleFamily> without = {});
     /// The first `rungs` places may not ask more than `floor`. False when one of them has no such price.
@@ -60,6 +67,8 @@ struct LadderChain {
     RepairProblem repairProblem(const PricePoints& points) const;
 
 private:
+    bool holdPlaceAtFloor(std::size_t place, Price floor, const PricePoints& points);
+
     std::vector<Rung> m_ladder;
 };
 

@@ -5,6 +5,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <functional>
 #include <limits>
 
 namespace rungwright
@@ -17,7 +18,17 @@ namespace
 constexpr int kHalvings = 30;
 constexpr int kTightenings = 12;
 
-std::optional<double> asNumber(std::optional<Price> price) { return price ? std::optional(inMinor(*price)) : std::nullopt; }
+using Limits = std::optional<std::pair<Price, Price>>;
+
+/// What both allow; nothing is no limit. The first above the second when they exclude each other.
+Limits within(const Limits& a, const Limits& b)
+{
+    if (!a || !b)
+        return a ? a : b;
+    return std::pair(std::max(a->first, b->first), std::min(a->second, b->second));
+}
+
+bool excluded(const Limits& limits) { return limits && limits->first > limits->second; }
 
 } // namespace
 
@@ -32,15 +43,25 @@ std::optional<std::pair<Price, Price>> totalLimits(Price today, const TotalWish&
     return {};
 }
 
-Obstacle LeastChange::setGoal(const Tier& tier, const ChangeWish& wish)
+std::optional<std::pair<Price, Price>> totalLimits(Price today, const TotalWish& wish, const PriceRules& rules)
+{
+    const auto room = totalRoomOf(today, rules);
+    return within(totalLimits(today, wish), room ? std::optional(std::pair(room->least, room->most)) : std::nullopt);
+}
+
+Obstacle LeastChange::setGoal(const Tier& tier, const PriceRules& rules, const ChangeWish& wish)
 {
     m_goal = {};
     m_floor = inMinor(tier.advertisedFloor);
-    if (const auto limits = totalLimits(m_chain.total, wish.total)) {
+    m_goal.wished = totalLimits(m_chain.total, wish.total);
+    if (const auto room = totalRoomOf(m_chain.total, rules))
+        m_goal.ruled = std::pair(room->least, room->most);
+    if (const auto limits = within(m_goal.wished, m_goal.ruled)) {
         m_goal.totalLeast = limits->first;
         m_goal.totalMost = limits->second;
-        m_answer.wantedTotal = wish.total.free ? Price{} : limits->first;
     }
+    if (!wish.total.free)
+        m_answer.wantedTotal = m_goal.wished->first;
     if (wish.target.kind == TargetKind::none)
         return Obstacle::none;
     if (!tier.hasFloor())
@@ -70,12 +91,14 @@ Obstacle LeastChange::setGoal(const Tier& tier, const ChangeWish& wish)
     return Obstacle::none;
 }
 
-ChainProblem LeastChange::problemOf(const LadderChain& chain, bool withTotal) const
+ChainProblem LeastChange::problemOf(const LadderChain& chain, std::optional<RuleFamily> without) const
 {
     ChainProblem problem = chain.problem();
-    if (withTotal) {
-        problem.totalLeast = asNumber(m_goal.totalLeast);
-        problem.totalMost = asNumber(m_goal.totalMost);
+    const auto limits =
+        within(without == RuleFamily::total ? Limits{} : m_goal.wished, without == RuleFamily::tierTotal ? Limits{} : m_goal.ruled);
+    if (limits) {
+        problem.totalLeast = inMinor(limits->first);
+        problem.totalMost = inMinor(limits->second);
     }
     problem.expectedMost = m_goal.expectedMost;
     return problem;
@@ -93,11 +116,13 @@ const LeastChangeAnswer& LeastChange::solve(const Tier& tier, const ModelSetting
         fresh.easings.clear();
         return fresh;
     }();
-    m_answer.obstacle = setGoal(tier, wish);
+    m_answer.obstacle = setGoal(tier, rules, wish);
     if (m_answer.obstacle != Obstacle::none)
         return m_answer;
 
-    bool solved = m_goal.rungsAtFloor == 0 || m_chain.holdAtFloor(m_goal.rungsAtFloor, tier.advertisedFloor, rules.points);
+    bool solved = m_chain.reachFloor == m_chain.wantedAtFloor && !excluded(within(m_goal.wished, m_goal.ruled));
+    if (solved && m_goal.rungsAtFloor > 0)
+        solved = m_chain.holdAtFloor(m_goal.rungsAtFloor, tier.advertisedFloor, rules.points);
     const bool fitted = model.kind == ModelKind::fitted && m_goal.expectedMost;
     if (solved && fitted) {
         solved = solveFitted(tier);
@@ -254,59 +279,120 @@ void LeastChange::writeAnswer(const Tier& tier, const ModelSettings& model)
 
 void LeastChange::explain(const Tier& tier, const ModelSettings& model, const PriceRules& rules, const ChangeWish& wish)
 {
-    m_eased.build(tier, model, rules, wish.order, wish.takenStay, wish.weights);
+    const auto solveBounds = [&](std::optional<RuleFamily> without) -> const ChainAnswer& { // Neither total nor target.
+        m_eased.build(tier, model, rules, wish.order, wish.takenStay, wish.weights, without);
+        return m_solver.solve(m_eased.problem());
+    };
+    const ChainAnswer& bounds = solveBounds({});
+    const bool tooFew = m_eased.reachFloor < m_eased.wantedAtFloor;
+    if (tooFew || bounds.status == ChainStatus::boundsCross) {
+        m_answer.obstacle = Obstacle::order;
+        if (!tooFew)
+            m_answer.conflict = {m_eased.places[bounds.conflict.lower], m_eased.places[bounds.conflict.upper]};
+        if (m_eased.wantedAtFloor > 0 && solveBounds(RuleFamily::shareAtFloor).status == ChainStatus::solved)
+            explainShare(tier, model, rules, wish);
+        else if (tooFew)
+            m_answer.conflict = {m_eased.places[bounds.conflict.lower], m_eased.places[bounds.conflict.upper]};
+        return;
+    }
+    m_answer.leastTotal = Price{static_cast<std::int64_t>(std::ceil(bounds.leastTotal - 1e-6))};
+    m_answer.mostTotal = Price{static_cast<std::int64_t>(std::floor(bounds.mostTotal + 1e-6))};
     ChainProblem problem = problemOf(m_eased);
     problem.expectedMost.reset();
-    const ChainAnswer& without = m_solver.solve(problem); // Without the target.
-    switch (without.status) {
-    case ChainStatus::boundsCross:
-        m_answer.obstacle = Obstacle::order;
-        m_answer.conflict = {m_eased.places[without.conflict.lower], m_eased.places[without.conflict.upper]};
-        break;
-    case ChainStatus::totalOutOfReach:
+    if (excluded(within(m_goal.wished, m_goal.ruled)) || m_solver.solve(problem).status == ChainStatus::totalOutOfReach) {
         m_answer.obstacle = Obstacle::total;
-        m_answer.leastTotal = Price{static_cast<std::int64_t>(std::ceil(without.leastTotal - 1e-6))};
-        m_answer.mostTotal = Price{static_cast<std::int64_t>(std::floor(without.mostTotal + 1e-6))};
         explainTotal(tier, model, rules, wish);
-        break;
-    case ChainStatus::expectedOutOfReach:
-    case ChainStatus::solved:
-        m_answer.obstacle = Obstacle::target;
-        explainTarget(tier, model, rules, wish);
-        break;
+        return;
     }
+    m_answer.obstacle = Obstacle::target;
+    explainTarget(tier, model, rules, wish);
 }
 
 void LeastChange::explainTotal(const Tier& tier, const ModelSettings& model, const PriceRules& rules, const ChangeWish& wish)
 {
-    const double wanted = inMinor(m_goal.totalLeast.value_or(Price{}));
-    const double now = std::clamp(wanted, inMinor(m_answer.leastTotal), inMinor(m_answer.mostTotal));
-    for (const RuleFamily family :
-         {RuleFamily::locks, RuleFamily::changePercent, RuleFamily::changeMoney, RuleFamily::ceiling, RuleFamily::pointLimits}) {
+    // How far the totals that a family of rules leaves are from the ones wished for, and the nearest of them.
+    struct Nearest {
+        double miss = std::numeric_limits<double>::infinity();
+        double total = 0;
+    };
+    const double today = inMinor(m_chain.total);
+    const auto nearest = [&](double least, double most, bool ruled) {
+        if (ruled && m_goal.ruled) {
+            least = std::max(least, inMinor(m_goal.ruled->first));
+            most = std::min(most, inMinor(m_goal.ruled->second));
+        }
+        if (least > most)
+            return Nearest{};
+        const double wanted =
+            m_goal.wished ? std::clamp(std::clamp(today, least, most), inMinor(m_goal.wished->first), inMinor(m_goal.wished->second))
+                          : std::clamp(today, least, most);
+        const double total = std::clamp(wanted, least, most);
+        return Nearest{std::abs(total - wanted), total};
+    };
+    const Nearest now = nearest(inMinor(m_answer.leastTotal), inMinor(m_answer.mostTotal), true);
+    if (const auto left = within(std::pair(m_answer.leastTotal, m_answer.mostTotal), m_goal.ruled); !excluded(left)) {
+        m_answer.leastTotal = left->first;
+        m_answer.mostTotal = left->second;
+    }
+    std::vector<std::pair<double, Easing>> found;
+    for (const RuleFamily family : {RuleFamily::locks, RuleFamily::changePercent, RuleFamily::changeMoney, RuleFamily::ceiling,
+                                    RuleFamily::least, RuleFamily::pointLimits, RuleFamily::tierTotal, RuleFamily::shareAtFloor}) {
         m_eased.build(tier, model, rules, wish.order, wish.takenStay, wish.weights, family);
         ChainProblem problem = m_eased.problem();
         problem.odds = {};
         const ChainAnswer& eased = m_solver.solve(problem);
         if (eased.status != ChainStatus::solved)
             continue;
-        const double nearest = std::clamp(wanted, eased.leastTotal, eased.mostTotal);
-        if (std::abs(nearest - wanted) < std::abs(now - wanted) - 0.5)
-            m_answer.easings.push_back({family, nearest});
+        const Nearest then = nearest(eased.leastTotal, eased.mostTotal, family != RuleFamily::tierTotal);
+        if (then.miss < now.miss - 0.5)
+            found.push_back({then.miss, {family, then.total}});
     }
-    std::ranges::stable_sort(m_answer.easings, {}, [&](const Easing& easing) { return std::abs(easing.reach - wanted); });
+    std::ranges::stable_sort(found, {}, [](const auto& one) { return one.first; });
+    for (const auto& [miss, easing] : found)
+        m_answer.easings.push_back(easing);
+}
+
+/// The units that can come down to the floor, one from the lowest on, with every family of rules set aside in turn.
+void LeastChange::explainShare(const Tier& tier, const ModelSettings& model, const PriceRules& rules, const ChangeWish& wish)
+{
+    m_answer.obstacle = Obstacle::shareAtFloor;
+    const auto onOffer = static_cast<double>(std::ranges::count_if(tier.units, &Unit::onOffer));
+    PriceRules fewer = rules;
+    const auto fits = [&](std::size_t units, std::optional<RuleFamily> without) {
+        fewer.leastShareAtFloor = static_cast<double>(units) / onOffer;
+        m_trial.build(tier, model, fewer, wish.order, wish.takenStay, wish.weights, without);
+        return m_trial.reachFloor == m_trial.wantedAtFloor && m_solver.solve(m_trial.problem()).status == ChainStatus::solved;
+    };
+    const std::size_t wanted = m_chain.wantedAtFloor;
+    const auto reach = [&](std::optional<RuleFamily> without) {
+        std::size_t most = 0;
+        for (std::size_t beyond = wanted + 1; beyond - most > 1;) {
+            const std::size_t middle = most + (beyond - most) / 2;
+            (fits(middle, without) ? most : beyond) = middle;
+        }
+        return most;
+    };
+    m_answer.wantedAtFloor = wanted;
+    m_answer.reachFloor = reach({});
+    for (const RuleFamily family : {RuleFamily::locks, RuleFamily::changePercent, RuleFamily::changeMoney, RuleFamily::ceiling,
+                                    RuleFamily::least, RuleFamily::pointLimits})
+        if (const std::size_t then = reach(family); then > m_answer.reachFloor)
+            m_answer.easings.push_back({family, static_cast<double>(then)});
+    std::ranges::stable_sort(m_answer.easings, std::greater{}, &Easing::reach);
 }
 
 /// The smallest gap, or the greatest share of enquirers who meet the floor, that `chain` allows.
-std::optional<double> LeastChange::bestTarget(const Tier& tier, const PriceRules& rules, const LadderChain& chain, bool withTotal)
+std::optional<double> LeastChange::bestTarget(const Tier& tier, const PriceRules& rules, const LadderChain& chain,
+                                              std::optional<RuleFamily> without)
 {
     if (m_goal.rungsAtFloor == 0) {
-        const ChainAnswer& answer = m_solver.leastExpected(problemOf(chain, withTotal));
+        const ChainAnswer& answer = m_solver.leastExpected(problemOf(chain, without));
         return answer.leastExpected ? std::optional(*answer.leastExpected - m_floor) : std::nullopt;
     }
     const auto fits = [&](std::size_t rungs) {
         m_trial = chain;
         return m_trial.holdAtFloor(rungs, tier.advertisedFloor, rules.points) &&
-               m_solver.solve(problemOf(m_trial, withTotal)).status == ChainStatus::solved;
+               m_solver.solve(problemOf(m_trial, without)).status == ChainStatus::solved;
     };
     if (!fits(0))
         return {};
@@ -328,16 +414,17 @@ void LeastChange::explainTarget(const Tier& tier, const ModelSettings& model, co
         m_answer.nearestTarget = m_fittedNearest;
         return;
     }
-    m_answer.nearestTarget = bestTarget(tier, rules, m_eased, true);
+    m_answer.nearestTarget = bestTarget(tier, rules, m_eased, {});
     if (!m_answer.nearestTarget)
         return;
-    for (const RuleFamily family : {RuleFamily::locks, RuleFamily::changePercent, RuleFamily::changeMoney, RuleFamily::ceiling,
-                                    RuleFamily::pointLimits, RuleFamily::total}) {
+    for (const RuleFamily family :
+         {RuleFamily::locks, RuleFamily::changePercent, RuleFamily::changeMoney, RuleFamily::ceiling, RuleFamily::least,
+          RuleFamily::pointLimits, RuleFamily::total, RuleFamily::tierTotal, RuleFamily::shareAtFloor}) {
         PriceRules eased = rules;
         if (family == RuleFamily::pointLimits)
             eased.points.least = eased.points.greatest = std::nullopt;
         m_eased.build(tier, model, rules, wish.order, wish.takenStay, wish.weights, family);
-        const auto reach = bestTarget(tier, eased, m_eased, family != RuleFamily::total);
+        const auto reach = bestTarget(tier, eased, m_eased, family);
         const double gain = reach ? (share ? *reach - *m_answer.nearestTarget : *m_answer.nearestTarget - *reach) : 0;
         if (gain > (share ? 1e-9 : 1e-3))
             m_answer.easings.push_back({family, *reach});

@@ -33,6 +33,8 @@ struct TotalWish {
 
 /// The least and greatest asking total a wish allows, from today's; nothing when it is free without limits.
 std::optional<std::pair<Price, Price>> totalLimits(Price today, const TotalWish& wish);
+/// The same within the rules (totalRoomOf()); the first above the second when the rules forbid what is wished.
+std::optional<std::pair<Price, Price>> totalLimits(Price today, const TotalWish& wish, const PriceRules& rules);
 
 struct ChangeWish {
     OrderKept order = OrderKept::present;
@@ -45,16 +47,18 @@ struct ChangeWish {
 /// Why there is no ladder as wished.
 enum class Obstacle : unsigned char {
     none,
-    order,       ///< The units `conflict` cannot keep their rules and the order at once.
-    total,       ///< The asking total cannot be reached: it runs from leastTotal to mostTotal.
-    target,      ///< The target cannot be reached: see nearestTarget.
-    noOdds,      ///< The model has no odds here; `note` says why.
-    noFloor,     ///< The tier has no advertised floor, so there is no gap to aim at.
-    pricePoints, ///< There is such a ladder, but none on the price points.
+    order,        ///< The units `conflict` cannot keep their rules and the order at once.
+    total,        ///< The asking total cannot be reached: it runs from leastTotal to mostTotal.
+    target,       ///< The target cannot be reached: see nearestTarget.
+    noOdds,       ///< The model has no odds here; `note` says why.
+    noFloor,      ///< The tier has no advertised floor, so there is no gap to aim at.
+    pricePoints,  ///< There is such a ladder, but none on the price points.
+    shareAtFloor, ///< Too few units on offer can come down to the advertised floor: `reachFloor` of `wantedAtFloor`.
 };
 
 /// What setting aside one family of rules would give: the smallest gap in minor units (floorMet: the greatest share), or, for a total out
-/// of reach, the total nearest to the one wished for. Only families that make a difference are listed, the most telling first.
+/// of reach, the total nearest to the one wished for; for the least share at the floor, how many units could come down to it. Only families
+/// that make a difference are listed, the most telling first.
 struct Easing {
     RuleFamily family = RuleFamily::locks;
     double reach = 0;
@@ -68,10 +72,11 @@ struct LeastChangeAnswer {
         std::uint32_t upper = 0; ///< ... that this unit, which must not be asked for less, may not go above.
     } conflict;
     Price wantedTotal;                   ///< Unless free.
-    Price leastTotal, mostTotal;         ///< What order and bounds allow (rounded inwards); set for Obstacle::total.
+    Price leastTotal, mostTotal;         ///< What order, bounds and rules allow (rounded inwards); set for Obstacle::total.
     std::optional<double> nearestTarget; ///< Obstacle::target: the smallest gap in minor units, or the greatest share of floorMet.
     /// Obstacle::total and Obstacle::target: which rules are in the way. Not worked out for a gap under the fitted range.
     std::vector<Easing> easings;
+    std::size_t wantedAtFloor = 0, reachFloor = 0; ///< Obstacle::shareAtFloor, in units on offer.
 
     // The rest has a meaning where obstacle is none.
     std::vector<double> continuous;      ///< By unit index, minor units: the optimum without price points.
@@ -94,7 +99,9 @@ struct LeastChangeAnswer {
 /// range and the explanation of an obstacle.
 ///
 /// Minimises sum weight_i (x_i - today_i)^2 over ladders in the order kept, within every unit's room (roomOf()), with the total as wished
-/// and the target met. Changes count from Unit::asking; other candidates play no part.
+/// and within what the rules leave it, the least share of units on offer at the advertised floor (bounds on the lowest of them in the order
+/// kept) and the target met. PriceRules::order is not looked at: the wish says which order. Changes count from Unit::asking; other
+/// candidates play no part.
 ///
 /// Models. Perceived, remainder, unit by unit, turnover and on hand give every place of the order kept odds that do not depend on prices,
 /// so that the expected cheapest is linear in them and the problem is the one of ChainSolver, solved exactly. The floor met by a share q
@@ -115,12 +122,13 @@ public:
 private:
     struct Goal {
         std::optional<Price> totalLeast, totalMost;
+        std::optional<std::pair<Price, Price>> wished, ruled; ///< Whose intersection the two are.
         std::optional<double> expectedMost;
         std::size_t rungsAtFloor = 0;
     };
 
-    Obstacle setGoal(const Tier& tier, const ChangeWish& wish);
-    ChainProblem problemOf(const LadderChain& chain, bool withTotal = true) const;
+    Obstacle setGoal(const Tier& tier, const PriceRules& rules, const ChangeWish& wish);
+    ChainProblem problemOf(const LadderChain& chain, std::optional<RuleFamily> without = {}) const;
     bool solveFitted(const Tier& tier);
     bool round(const PriceRules& rules);
     void roundFitted(const Tier& tier, const PriceRules& rules);
@@ -129,7 +137,9 @@ private:
     void explain(const Tier& tier, const ModelSettings& model, const PriceRules& rules, const ChangeWish& wish);
     void explainTotal(const Tier& tier, const ModelSettings& model, const PriceRules& rules, const ChangeWish& wish);
     void explainTarget(const Tier& tier, const ModelSettings& model, const PriceRules& rules, const ChangeWish& wish);
-    std::optional<double> bestTarget(const Tier& tier, const PriceRules& rules, const LadderChain& chain, bool withTotal);
+    void explainShare(const Tier& tier, const ModelSettings& model, const PriceRules& rules, const ChangeWish& wish);
+    std::optional<double> bestTarget(const Tier& tier, const PriceRules& rules, const LadderChain& chain,
+                                     std::optional<RuleFamily> without);
 
     Goal m_goal;
     double m_floor = 0;

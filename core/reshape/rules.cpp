@@ -4,6 +4,7 @@
 #include <algorithm>
 #include <cmath>
 #include <cstdlib>
+#include <limits>
 
 namespace rungwright
 {
@@ -17,13 +18,13 @@ struct Limit {
     Bound bound;
 };
 
-/// The greatest change in whole minor units that `percent` of `price` allows.
-std::int64_t wholePercent(Price price, double percent)
+/// The greatest change in whole minor units, up to `most`, that `percent` of `price` allows.
+std::int64_t wholePercent(Price price, double percent, Price most = kGreatestPrice)
 {
     const double change = static_cast<double>(price.minor) * percent / 100.0;
     // 0.7 % of 100.00 is 69.99999999999999 in floating point; a hair is added so that a whole amount is not lost to that.
     const double hair = 1e-9 + 1e-14 * change;
-    return static_cast<std::int64_t>(std::floor(std::min(change + hair, static_cast<double>(kGreatestPrice.minor))));
+    return static_cast<std::int64_t>(std::floor(std::min(change + hair, static_cast<double>(most.minor))));
 }
 
 /// The stricter of two limits in the direction `up`; the first when they are equal.
@@ -44,6 +45,8 @@ Limit limitOf(Price today, const PriceRules& rules, bool up)
         limit = stricter({today.minor + sign * rules.greatestChange->minor, Bound::changeMoney}, limit, up);
     if (up && rules.ceiling)
         limit = stricter({rules.ceiling->minor, Bound::ceiling}, limit, up);
+    if (!up && rules.least)
+        limit = stricter({rules.least->minor, Bound::least}, limit, up);
     return limit;
 }
 
@@ -72,12 +75,20 @@ std::string_view boundReason(Bound bound)
         return "the greatest change in money is reached";
     case Bound::ceiling:
         return "the ceiling is reached";
+    case Bound::least:
+        return "the lowest asking price is reached";
     case Bound::leastPoint:
         return "the least price point is reached";
     case Bound::greatestPoint:
         return "the greatest price point is reached";
     case Bound::noPricePoint:
         return "the rules allow no price point";
+    case Bound::totalPercent:
+        return "the tier's asking total has changed by the greatest percentage";
+    case Bound::totalMoney:
+        return "the tier's asking total has changed by the greatest amount";
+    case Bound::shareAtFloor:
+        return "no fewer units may be at the advertised floor";
     }
     return "";
 }
@@ -123,6 +134,29 @@ Snapped snapped(const Unit& unit, Price from, Price wanted, const PriceRules& ru
         return {price, room.below};
     // Between today's price and the price points, where those begin above it or end below it.
     return {price, rules.points.greatest && freely > *rules.points.greatest ? Bound::greatestPoint : Bound::leastPoint};
+}
+
+std::optional<TotalRoom> totalRoomOf(Price today, const PriceRules& rules)
+{
+    if (!rules.greatestTierChangePercent && !rules.greatestTierChange)
+        return {};
+    // No sum of a tier's prices comes near; there is room above it in the type.
+    constexpr Price far{std::numeric_limits<std::int64_t>::max() / 4};
+    Limit change{far.minor, Bound::totalMoney};
+    if (rules.greatestTierChangePercent)
+        change = {wholePercent(today, *rules.greatestTierChangePercent, far), Bound::totalPercent};
+    if (rules.greatestTierChange)
+        change = stricter(change, {rules.greatestTierChange->minor, Bound::totalMoney}, true);
+    return TotalRoom{today - Price{change.minor}, today + Price{change.minor}, change.bound};
+}
+
+std::size_t unitsWantedAtFloor(std::size_t onOffer, const PriceRules& rules)
+{
+    if (!rules.leastShareAtFloor)
+        return 0;
+    // 0.07 of 100 is 7.000000000000001 in floating point; a hair is taken so that it does not ask for an eighth.
+    const double wanted = std::ceil(*rules.leastShareAtFloor * static_cast<double>(onOffer) * (1 - 1e-12));
+    return std::min(onOffer, static_cast<std::size_t>(std::max(0.0, wanted)));
 }
 
 } // namespace rungwright

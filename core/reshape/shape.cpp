@@ -148,6 +148,32 @@ std::optional<Trouble> troubleWith(const LadderShape& shape)
     return {};
 }
 
+/// Brings the lowest units on offer down to the floor, as many as the rules want there. False when one of them cannot come down.
+bool holdLowestAtFloor(const Tier& tier, const PriceRules& rules, std::span<const std::uint32_t> places, std::vector<Price>& prices)
+{
+    if (!tier.hasFloor())
+        return true;
+    const auto onOffer = static_cast<std::size_t>(std::ranges::count_if(tier.units, &Unit::onOffer));
+    std::size_t left = unitsWantedAtFloor(onOffer, rules);
+    for (const std::uint32_t i : places) {
+        const Unit& unit = tier.units[i];
+        if (left == 0)
+            break;
+        if (!unit.onOffer())
+            continue;
+        --left;
+        if (prices[i] <= tier.advertisedFloor)
+            continue;
+        const auto point = rules.points.atOrBelow(tier.advertisedFloor);
+        const Price wanted =
+            unit.asking <= tier.advertisedFloor ? std::max(unit.asking, point.value_or(unit.asking)) : point.value_or(unit.asking);
+        prices[i] = snapped(unit, unit.asking, wanted, rules).price;
+        if (prices[i] > tier.advertisedFloor)
+            return false;
+    }
+    return true;
+}
+
 } // namespace
 
 std::vector<Price> shapeRungs(const LadderShape& shape, std::size_t m)
@@ -182,6 +208,10 @@ Outcome<std::vector<Price>> shapedPrices(const Tier& tier, const PriceRules& rul
     chainOrder(tier.units, rooms, placing.among, placing.order, places);
     const std::vector<Price> rungs = shapeRungs(shape, places.size());
     std::vector<Price> prices = askingPrices(tier.units);
+    Price todayTotal;
+    Price total;
+    for (const Unit& unit : tier.units)
+        todayTotal += unit.onOffer() ? unit.asking : Price{};
     for (std::size_t i = 0; i < places.size(); ++i) {
         const Unit& unit = tier.units[places[i]];
         if (unit.locked)
@@ -193,6 +223,14 @@ Outcome<std::vector<Price>> shapedPrices(const Tier& tier, const PriceRules& rul
             price = rules.points.nearest(price).value_or(price);
         prices[places[i]] = price;
     }
+    if (!placing.withinRules)
+        return prices;
+    if (!holdLowestAtFloor(tier, rules, places, prices))
+        return Trouble{"Too few units on offer can come down to the advertised floor for the share that the rules ask for."};
+    for (std::size_t i = 0; i < prices.size(); ++i)
+        total += tier.units[i].onOffer() ? prices[i] : Price{};
+    if (const auto room = totalRoomOf(todayTotal, rules); room && (total < room->least || total > room->most))
+        return Trouble{"This shape would change the asking total of the units on offer by more than the rules allow."};
     return prices;
 }
 

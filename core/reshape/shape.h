@@ -59,11 +59,14 @@ struct ShapePlacing {
     Among among = Among::onOffer; ///< Which units are shaped; the others keep their prices.
     OrderKept order = OrderKept::present;
     bool onPricePoints = true; ///< Move each price to the nearest price point.
-    bool withinRules = true;   ///< Hold each unit inside its room (roomOf()); with this, prices are also on price points.
+    /// Hold each unit inside its room (roomOf()), and the lowest units on offer at the advertised floor that the rules want there; with
+    /// this, prices are also on price points.
+    bool withinRules = true;
 };
 
 /// Prices by unit index. Locked units keep theirs, and their rung of the shape goes to nobody. Trouble, in words for the user, when the
-/// shape makes no sense: floor above top, no share above 0, parameters not above 0, a price that is not above 0.
+/// shape makes no sense: floor above top, no share above 0, parameters not above 0, a price that is not above 0; and, within the rules,
+/// when too few units can come down to the floor or the asking total would change by more than they allow.
 Outcome<std::vector<Price>> shapedPrices(const Tier& tier, const PriceRules& rules, const LadderShape& shape, const ShapePlacing& placing);
 
 /// The shape's own prices for m rungs, nondecreasing, rounded to whole minor units. The shape must make sense.

@@ -4,7 +4,9 @@
 
 #include "file_helpers.h"
 
+#include <algorithm>
 #include <set>
+#include <utility>
 
 namespace rungwright::tests
 {
@@ -74,14 +76,9 @@ inline TierCase oddTier(Dice& dice, std::set<std::string>& taken)
     return made;
 }
 
-inline Scenario oddScenario(Dice& dice)
+inline PriceRules oddRules(Dice& dice)
 {
-    static const Currency currencies[]{{"JPY", 0}, {"EUR", 2}, {"KWD", 3}, {"CLF", 4}, {"XXX", 2}};
-    Scenario made;
-    made.currency = currencies[dice.whole(0, 4)];
-    made.title = dice.coin() ? oddText(dice, 20) : "";
-    made.note = dice.coin() ? oddText(dice, 60) : "";
-    PriceRules& rules = made.rules;
+    PriceRules rules;
     rules.points.step = {dice.whole(1, 500)};
     for (std::int64_t at = dice.whole(0, 99); at < rules.points.step.minor && dice.coin(); at += dice.whole(1, 99))
         rules.points.endings.push_back({at});
@@ -95,10 +92,40 @@ inline Scenario oddScenario(Dice& dice)
         rules.greatestChange = oddPrice(dice);
     if (dice.coin())
         rules.ceiling = oddPrice(dice);
+    if (dice.coin())
+        rules.least = Price{rules.ceiling ? dice.whole(1, int(std::min<std::int64_t>(rules.ceiling->minor, 1'000'000))) : 77};
+    if (dice.coin())
+        rules.greatestTierChangePercent = dice.whole(1, 300) / 7.0;
+    if (dice.coin())
+        rules.greatestTierChange = oddPrice(dice);
+    if (dice.coin())
+        rules.order = OrderKept::grade;
+    if (dice.coin())
+        rules.leastShareAtFloor = dice.whole(1, 7) / 7.0;
+    return rules;
+}
+
+inline Scenario oddScenario(Dice& dice)
+{
+    static const Currency currencies[]{{"JPY", 0}, {"EUR", 2}, {"KWD", 3}, {"CLF", 4}, {"XXX", 2}};
+    Scenario made;
+    made.currency = currencies[dice.whole(0, 4)];
+    made.title = dice.coin() ? oddText(dice, 20) : "";
+    made.note = dice.coin() ? oddText(dice, 60) : "";
+    made.rules = oddRules(dice);
     made.flags = {dice.whole(-300, 300) / 70.0, dice.whole(0, 9), dice.whole(0, 90) / 70.0};
     std::set<std::string> taken;
     for (int i = dice.whole(0, 4); i > 0; --i)
         made.tiers.push_back(oddTier(dice, taken));
+    // Of a site, of a tier, and of ones that are not there.
+    for (const TierCase& tierCase : std::as_const(made.tiers)) {
+        if (dice.coin())
+            setRulesOf(made, {tierCase.tier.site, {}}, oddRules(dice));
+        if (dice.coin())
+            setRulesOf(made, {tierCase.tier.site, tierCase.tier.name}, oddRules(dice));
+    }
+    if (dice.coin())
+        setRulesOf(made, {freshName(dice, taken), dice.coin() ? freshName(dice, taken) : ""}, oddRules(dice));
     return made;
 }
 

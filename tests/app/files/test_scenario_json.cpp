@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // Scenario files: what is written, that it comes back, and that the same scenario is always the same bytes.
 #include "odd_scenario.h"
+#include "rules_json.h"
 #include "scenario_json.h"
 
 #include <QJsonDocument>
@@ -8,6 +9,8 @@
 #include <QStringEncoder>
 #include <QTemporaryDir>
 #include <QtTest>
+
+#include <algorithm>
 
 using namespace rungwright;
 using namespace rungwright::tests;
@@ -28,6 +31,16 @@ private slots:
         scenario.rules.greatestChangePercent = 12.5;
         scenario.rules.greatestChange = Price{1000};
         scenario.rules.ceiling = Price{50000};
+        scenario.rules.least = Price{5000};
+        scenario.rules.greatestTierChangePercent = 2.5;
+        scenario.rules.greatestTierChange = Price{20000};
+        scenario.rules.order = OrderKept::grade;
+        scenario.rules.leastShareAtFloor = 0.1;
+        PriceRules own;
+        own.points.step = {50};
+        setRulesOf(scenario, {"Quay", "Room 4"}, own);
+        own.ceiling = Price{9000};
+        setRulesOf(scenario, {"Quay", ""}, own);
         TierCase tierCase;
         tierCase.tier = {"Quay",
                          "Room 4",
@@ -47,7 +60,7 @@ private slots:
         scenario.tiers = {tierCase, empty, noFloor};
         QCOMPARE(scenarioToJson(scenario), QByteArray(R"({
   "format": "rungwright-scenario",
-  "version": 2,
+  "version": 3,
   "title": "Quay \"one\"",
   "currency": "EUR",
   "note": "line\nend",
@@ -58,8 +71,22 @@ private slots:
     "greatest": "900.00",
     "greatest_change_percent": 12.5,
     "greatest_change": "10.00",
-    "ceiling": "500.00"
+    "ceiling": "500.00",
+    "lowest_asking": "50.00",
+    "greatest_total_change_percent": 2.5,
+    "greatest_total_change": "200.00",
+    "order": "grade",
+    "least_share_at_floor": 0.1
   },
+  "own_rules": [
+    {"site": "Quay", "rules": {
+      "step": "0.50",
+      "ceiling": "90.00"
+    }},
+    {"site": "Quay", "tier": "Room 4", "rules": {
+      "step": "0.50"
+    }}
+  ],
   "flags": {"leans_left": -0.25, "last_units": 2, "gap_share": 0.125},
   "tiers": [
     {
@@ -167,6 +194,66 @@ private slots:
         QCOMPARE(tierCase.candidates.at(0).prices, (std::vector<Price>{{750}, {800}})); // By unit, not by order.
         QCOMPARE(tierCase.tier.units[1].asking.minor, std::int64_t(900));
         QCOMPARE(read.value().rules, PriceRules{});
+    }
+
+    // The nearest rules win whole: the tier's, then the site's, then the scenario's.
+    void nearestRulesWin()
+    {
+        Scenario scenario;
+        scenario.rules.ceiling = Price{1};
+        const Tier tier{"S", "T", {}, {}};
+        QVERIFY(rulesFor(scenario, tier) == scenario.rules && ruleScopeFor(scenario, tier) == RuleScope{});
+        PriceRules other;
+        other.ceiling = Price{2};
+        for (const RuleScope& scope : {RuleScope{"R", ""}, RuleScope{"S", "U"}, RuleScope{"R", "T"}, RuleScope{"Z", "T"}})
+            setRulesOf(scenario, scope, other);
+        QVERIFY(rulesFor(scenario, tier) == scenario.rules);
+        PriceRules site;
+        site.points.step = {50};
+        setRulesOf(scenario, {"S", ""}, site);
+        QVERIFY(rulesFor(scenario, tier) == site); // Whole: the scenario's ceiling does not shine through.
+        PriceRules own;
+        own.ceiling = Price{3};
+        setRulesOf(scenario, {"S", "T"}, own);
+        QVERIFY(rulesFor(scenario, tier) == own && (ruleScopeFor(scenario, tier) == RuleScope{"S", "T"}));
+        QVERIFY(std::ranges::is_sorted(scenario.ownRules, {}, &OwnRules::scope));
+        QCOMPARE(scenario.ownRules.size(), std::size_t(6));
+        setRulesOf(scenario, {"S", "T"}, {});
+        QVERIFY(rulesFor(scenario, tier) == site);
+        setRulesOf(scenario, {"S", ""}, {});
+        QVERIFY(rulesFor(scenario, tier) == scenario.rules && !rulesOf(scenario, {"S", ""}));
+        QCOMPARE(scenario.ownRules.size(), std::size_t(4));
+    }
+
+    void rulesFile()
+    {
+        Dice dice(17);
+        const Currency euro{"EUR", 2};
+        for (int i = 0; i < 200; ++i) {
+            RuleSet rules{oddRules(dice), {}};
+            if (dice.coin())
+                rules.ownRules = {{{"A", ""}, oddRules(dice)}, {{"A", "倉"}, oddRules(dice)}};
+            const QByteArray bytes = rulesToJson(rules, euro);
+            const auto read = rulesFromJson(bytes, QStringLiteral("F"), euro);
+            QVERIFY2(read.ok(), read.ok() ? "" : read.trouble().c_str());
+            QVERIFY(read.value() == rules);
+            QCOMPARE(rulesToJson(read.value(), euro), bytes);
+        }
+        QCOMPARE(rulesToJson({}, euro), QByteArray("{\n  \"format\": \"rungwright-rules\",\n  \"version\": 1,\n  \"currency\": \"EUR\",\n"
+                                                   "  \"rules\": {\n    \"step\": \"0.01\"\n  }\n}\n"));
+        const auto says = [&](const char* from, const char* to, const char* words) {
+            QByteArray bytes = rulesToJson({}, euro);
+            bytes.replace(from, to);
+            const auto read = rulesFromJson(bytes, QStringLiteral("F"), euro);
+            return !read.ok() && read.trouble().find(words) != std::string::npos;
+        };
+        QVERIFY(says("-rules", "-scenario", "F: this is not a file of price rules"));
+        QVERIFY(says("\"version\": 1", "\"version\": 2", "F: version: not a version this program knows; found 2; wanted: 1"));
+        QVERIFY(says("EUR", "JPY", "F: currency: another currency than that of the prices; found 'JPY'; wanted: EUR"));
+        QVERIFY(says("0.01", "0", "F: rules.step: not above 0"));
+        QVERIFY(says("\"step\"", "\"stop\"", "F: rules: a key that is not known; found 'stop'"));
+        QVERIFY(says("\"rules\": {", "\"note\": \"\", \"rules\": {", "F: the document: a key that is not known; found 'note'"));
+        QVERIFY(says("\"version\": 1,", "\"version\": 1", "F:4:")); // A comma is missing before line 4.
     }
 
     void utf16WithMark()

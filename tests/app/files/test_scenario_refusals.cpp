@@ -56,10 +56,10 @@ private slots:
         };
         add("\"rungwright-scenario\"", "\"other\"", "F: this is not a scenario");
         add("\"format\"", "\"formart\"", "F: this is not a scenario");
-        add("\"version\": 1", "\"version\": 3",
-            "F: the scenario is of format version 3, and this program knows versions up to 2. Open it with a newer");
+        add("\"version\": 1", "\"version\": 4",
+            "F: the scenario is of format version 4, and this program knows versions up to 3. Open it with a newer");
         add("\"version\": 1", "\"version\": 1e300", "F: the scenario is of format version 1e+300");
-        add("\"version\": 1", "\"version\": 0", "F: version: not a version; found 0; wanted: a whole number from 1 to 2");
+        add("\"version\": 1", "\"version\": 0", "F: version: not a version; found 0; wanted: a whole number from 1 to 3");
         add("\"version\": 1", "\"version\": 0.5", "F: version: not a version; found 0.5");
         add("\"version\": 1", "\"version\": \"1\"", "F: version: not a version; found '1'");
         add("\"version\": 1,", "", "F: version: not a version; found nothing");
@@ -83,6 +83,26 @@ private slots:
         add("_percent\": 10", "_percent\": \"10\"", "F: rules.greatest_change_percent: not a number in range; found '10'");
         add("\"greatest_change\": \"9\"", "\"greatest_change\": \"-9\"", "F: rules.greatest_change: not above 0");
         add("\"ceiling\": \"800\"", "\"ceiling\": \"8e2\"", "F: rules.ceiling: not a price; found '8e2'");
+        const auto rule = [&](const char* text, const char* words) {
+            add("\"ceiling\": \"800\"", qPrintable(QStringLiteral("\"ceiling\": \"800\", %1").arg(QLatin1String(text))), words);
+        };
+        rule("\"lowest_asking\": \"800.01\"", "F: rules.lowest_asking: above the ceiling; found '800.01'; wanted: at most the ceiling");
+        rule("\"greatest_total_change_percent\": 0", "F: rules.greatest_total_change_percent: not a number in range; found 0");
+        rule("\"greatest_total_change\": \"0\"", "F: rules.greatest_total_change: not above 0; found '0'");
+        rule("\"order\": \"grades\"", "F: rules.order: not an order; found 'grades'; wanted: 'present' or 'grade'");
+        rule("\"order\": 1", "F: rules.order: ");
+        rule("\"least_share_at_floor\": 1.01", "F: rules.least_share_at_floor: not a number in range; found 1.01");
+        const auto own = [&](const char* text, const char* words) {
+            add("\"rules\": {", qPrintable(QStringLiteral("\"own_rules\": %1, \"rules\": {").arg(QLatin1String(text))), words);
+        };
+        own("{}", "F: own_rules: not a list; found an object");
+        own("[{\"rules\": {}}]", "F: own_rules[0].site: ");
+        own("[{\"site\": \"S\", \"tier\": \" \", \"rules\": {}}]", "F: own_rules[0].tier: ");
+        own("[{\"site\": \"S\"}]", "F: own_rules[0].rules: ");
+        own("[{\"site\": \"S\", \"rules\": {\"step\": 1}}]", "F: own_rules[0].rules.step: not a price in quotation marks; found 1");
+        own("[{\"site\": \"S\", \"note\": 1, \"rules\": {}}]", "F: own_rules[0]: a key that is not known; found 'note'");
+        own("[{\"site\": \"S\", \"rules\": {}}, {\"site\": \"S\", \"rules\": {}}]",
+            "F: own_rules[1].site: a site or tier that has its rules already; found 'S'; wanted: each once");
         add("\"ceiling\"", "\"cieling\"", "F: rules: a key that is not known; found 'cieling'");
         add("\"site\": \"S\"", "\"site\": \" \\u00a0\"", "F: tiers[0].site: no name");
         add("\"site\": \"S\", ", "", "F: tiers[0].site: missing");

@@ -39,6 +39,8 @@ inline std::vector<std::int64_t> allowedPrices(const rungwright::Unit& unit, con
             continue;
         if (rules.ceiling && p > today && p > rules.ceiling->minor)
             continue;
+        if (rules.least && p < today && p < rules.least->minor)
+            continue;
         allowed.insert(p);
     }
     return {allowed.begin(), allowed.end()};
@@ -65,5 +67,7 @@ inline rungwright::PriceRules randomRules(std::mt19937_64& random)
         rules.greatestChange = rungwright::Price{static_cast<std::int64_t>(1 + random() % 400)};
     if (random() % 2)
         rules.ceiling = rungwright::Price{static_cast<std::int64_t>(600 + random() % 2000)};
+    if (random() % 2)
+        rules.least = rungwright::Price{static_cast<std::int64_t>(300 + random() % 300)};
     return rules;
 }

@@ -109,11 +109,13 @@ void RulesTest::namesWhatBinds()
     QVERIFY(roomOf(unit, rules).above == Bound::noPricePoint);
     QCOMPARE(roomOf(unit, rules).hi.minor, 10000);
 
-    QVERIFY(snapped(unit, {10000}, {13000}, PriceRules{{{100}, {}, {}, {}}, 10.0, {}, {}}).bound == Bound::changePercent);
-    QVERIFY(snapped(unit, {10000}, {10960}, PriceRules{{{100}, {}, {}, {}}, 10.0, {}, {}}).bound == Bound::none);
-    QVERIFY(snapped(unit, {10000}, {11040}, PriceRules{{{100}, {}, {}, {}}, 10.0, {}, {}}).bound ==
-            Bound::none); // Spacing would do the same.
-    QVERIFY(snapped(unit, {10000}, {11060}, PriceRules{{{100}, {}, {}, {}}, 10.0, {}, {}}).bound == Bound::changePercent);
+    PriceRules tenPercent;
+    tenPercent.points.step = {100};
+    tenPercent.greatestChangePercent = 10.0;
+    QVERIFY(snapped(unit, {10000}, {13000}, tenPercent).bound == Bound::changePercent);
+    QVERIFY(snapped(unit, {10000}, {10960}, tenPercent).bound == Bound::none);
+    QVERIFY(snapped(unit, {10000}, {11040}, tenPercent).bound == Bound::none); // Spacing would do the same.
+    QVERIFY(snapped(unit, {10000}, {11060}, tenPercent).bound == Bound::changePercent);
 }
 
 void RulesTest::aWholePercentIsNotLostToRounding()
@@ -159,8 +161,9 @@ void RulesTest::aUnitThatBreaksARuleMayStay()
 
 void RulesTest::everyReasonHasWords()
 {
-    for (const Bound bound : {Bound::none, Bound::lock, Bound::changePercent, Bound::changeMoney, Bound::ceiling, Bound::leastPoint,
-                              Bound::greatestPoint, Bound::noPricePoint})
+    for (const Bound bound :
+         {Bound::none, Bound::lock, Bound::changePercent, Bound::changeMoney, Bound::ceiling, Bound::least, Bound::leastPoint,
+          Bound::greatestPoint, Bound::noPricePoint, Bound::totalPercent, Bound::totalMoney, Bound::shareAtFloor})
         QVERIFY(!boundReason(bound).empty());
 }
 
