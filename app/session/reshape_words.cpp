@@ -90,9 +90,12 @@ QString obstacleText(const LeastChangeAnswer& answer, const Tier& tier, const Ch
         return reshapeTr("No advertised floor is known, so there is no gap to aim at.");
     case Obstacle::pricePoints:
         return reshapeTr("There is such a ladder, but none on the price points.");
-    default:
-        return reshapeTr("No ladder within the rules is as wished.");
+    case Obstacle::shareAtFloor:
+        return reshapeTr("The rules want %1 units at the advertised floor; only %2 of them can come down to it.")
+            .arg(answer.wantedAtFloor)
+            .arg(answer.reachFloor);
     }
+    return {};
 }
 
 QStringList easingTexts(const LeastChangeAnswer& answer, const ChangeWish& wish, const Currency& currency, const QLocale& locale)
@@ -105,6 +108,8 @@ QStringList easingTexts(const LeastChangeAnswer& answer, const ChangeWish& wish,
         const bool share = wish.target.kind == TargetKind::floorMet;
         if (answer.obstacle == Obstacle::total)
             texts << reshapeTr("Without %1 it could be %2.").arg(phrase, moneyText(easing.reach, currency, locale));
+        else if (answer.obstacle == Obstacle::shareAtFloor)
+            texts << reshapeTr("Without %1 it would be %2.").arg(phrase).arg(static_cast<int>(easing.reach));
         else if (answer.obstacle != Obstacle::target)
             continue;
         else if (easing.family == RuleFamily::total)
