@@ -30,6 +30,8 @@ public:
     Proposer(const ListSample& sample, const ImportMapping& layout) :
         m_records(sampleRecords(sample, layout.encoding, layout.delimiter, kRecords))
     {
+        if (!sample.tail.isEmpty())
+            m_tail = sampleRecords({sample.tail, true}, layout.encoding, layout.delimiter, kRecords);
         ImportMapping& mapping = m_proposal.mapping;
         mapping.encoding = layout.encoding;
         mapping.delimiter = layout.delimiter;
@@ -108,27 +110,46 @@ private:
         constexpr std::size_t mostTried = 20;
         constexpr std::size_t mostRules = 5;
         std::vector<FoundRule> tried;
-        for (const QStringList& row : m_rows) {
+        const auto tryRow = [&](const QStringList& row) {
             const std::optional<FoundRule> found = ruleFor(row);
             if (found && tried.size() < mostTried &&
                 std::none_of(tried.begin(), tried.end(), [&](const FoundRule& one) { return one.rule == found->rule; }))
                 tried.push_back(*found);
-        }
+        };
+        std::for_each(m_rows.begin(), m_rows.end(), tryRow);
+        const SampleRecords last = lastRows();
+        std::for_each(last.begin(), last.end(), tryRow);
         std::erase_if(tried, [this](const FoundRule& found) {
             if (found.lone && standsInUnitRows(found.rule.text, found.at))
                 return true;
-            return std::any_of(m_rows.begin(), m_rows.end(), [&](const QStringList& row) { return isUnit(row) && found.matches(row); });
+            const auto takesUnit = [&](const QStringList& row) { return isUnit(row) && found.matches(row); };
+            return std::any_of(m_rows.begin(), m_rows.end(), takesUnit) || std::any_of(m_tail.begin(), m_tail.end(), takesUnit);
         });
         tried.resize(std::min(tried.size(), mostRules));
         const auto passed = std::stable_partition(m_rows.begin(), m_rows.end(), [&tried](const QStringList& row) {
             return std::none_of(tried.begin(), tried.end(), [&row](const FoundRule& found) { return found.matches(row); });
         });
+        const auto atEnd = std::count_if(last.begin(), last.end(), [&tried](const QStringList& row) {
+            return std::any_of(tried.begin(), tried.end(), [&row](const FoundRule& found) { return found.matches(row); });
+        });
         for (FoundRule& found : tried)
             mapping().skip.push_back(std::move(found.rule));
-        if (passed != m_rows.end())
+        if (passed != m_rows.end() || atEnd > 0)
             note(Words::tr("lines that seem to be no units (totals, footers) will be passed over: %1 in the sample. Look at the rules")
-                     .arg(m_rows.end() - passed));
+                     .arg(m_rows.end() - passed + atEnd));
         m_rows.erase(passed, m_rows.end());
+    }
+
+    // The file's last few lines, when the sample does not reach them. None where most of the tail makes no sense as rows of units: it may
+    // begin inside of quotes.
+    SampleRecords lastRows() const
+    {
+        constexpr std::ptrdiff_t few = 5;
+        const auto units = std::count_if(m_tail.begin(), m_tail.end(), [this](const QStringList& row) { return isUnit(row); });
+        const auto rows = std::ssize(m_tail);
+        if (rows < 2 || 2 * units < rows)
+            return {};
+        return {m_tail.end() - std::min(few, rows - 1), m_tail.end()};
     }
 
     bool isUnit(const QStringList& row) const
@@ -337,6 +358,7 @@ private:
 
     MappingProposal m_proposal;
     SampleRecords m_records;
+    SampleRecords m_tail; ///< Of the file's end, the first one torn; empty when the sample is whole.
     SampleRecords m_rows; ///< Below the header, those of units.
     std::vector<ColumnLook> m_looks;
     std::array<ColumnGuess, kColumnNames.size()> m_guesses;

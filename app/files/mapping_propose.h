@@ -10,14 +10,17 @@
 namespace rungwright
 {
 
-/// The beginning of a file, enough to look at.
+/// The beginning of a file, enough to look at, and its end, where totals stand.
 struct ListSample {
     QByteArray bytes;
-    bool whole = true; ///< False when the file goes on.
+    bool whole = true;    ///< False when the file goes on.
+    QByteArray tail = {}; ///< Unless whole, the last bytes; the first record in it is torn. Only lines that are no units are looked for.
 };
 
 inline constexpr qint64 kSampleBytes = 65'536;
-/// The first kSampleBytes of the file. From a pipe everything is read, since it cannot be read twice (refused beyond 256 MB).
+inline constexpr qint64 kTailBytes = 8'192;
+/// The first kSampleBytes of the file, and its last kTailBytes. From a pipe everything is read, since it cannot be read twice (refused
+/// beyond 256 MB).
 Outcome<ListSample> takeSample(const QString& path, qint64 most = kSampleBytes);
 
 enum class Confidence : unsigned char { none, guess, likely, sure };

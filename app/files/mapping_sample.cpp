@@ -9,6 +9,8 @@
 #include <QFile>
 #include <QFileInfo>
 
+#include <algorithm>
+
 namespace rungwright
 {
 
@@ -31,6 +33,14 @@ Outcome<ListSample> takeSample(const QString& path, qint64 most)
     if (file.error() != QFileDevice::NoError)
         return Trouble{Words::tr("%1: cannot be read: %2").arg(path, file.errorString()).toStdString()};
     sample.whole = file.atEnd();
+    if (!sample.whole) {
+        // From an even place: UTF-16 has two bytes a character, or four.
+        const qint64 from = std::max(most, file.size() - kTailBytes);
+        if (file.seek(from - from % 2))
+            sample.tail = file.readAll();
+        if (file.error() != QFileDevice::NoError)
+            return Trouble{Words::tr("%1: cannot be read: %2").arg(path, file.errorString()).toStdString()};
+    }
     return sample;
 }
 

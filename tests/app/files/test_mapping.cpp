@@ -180,6 +180,28 @@ private slots:
         QCOMPARE(proposal.notes.filter(QStringLiteral("two ways")).size(), qsizetype(ambiguous ? 1 : 0));
     }
 
+    // The sample does not reach the total, but its end is looked at.
+    void proposedRulesSeeTheEnd()
+    {
+        QByteArray rows = "Site,Size,Unit,Rent,Status\n";
+        for (int i = 1; i <= 5000; ++i)
+            rows += "Reed Lane,A,u" + QByteArray::number(i) + ",80.00,free\n";
+        const std::vector<SkipRule> wanted{{SkipRule::Kind::beginsWith, {QStringLiteral("Site"), 1}, QStringLiteral("Total")}};
+        const auto skipOf = [](const QByteArray& bytes) {
+            QTemporaryFile file;
+            if (!file.open() || file.write(bytes) != bytes.size() || !file.flush())
+                qFatal("no temporary file");
+            const ListSample sample = takeSample(file.fileName()).value();
+            if (sample.whole)
+                qFatal("the sample holds the whole file");
+            return proposeMapping(sample).mapping.skip;
+        };
+        QVERIFY(skipOf(rows).empty());
+        QCOMPARE(skipOf(rows + "Total Reed Lane,,5000,400000.00,\n"), wanted);
+        // A tail that begins inside of quotes, and is read as no units at all, proposes nothing.
+        QVERIFY(skipOf(rows + "Reed Lane,A,\"" + QByteArray(9000, 'x') + "\nTotal,,,\n\",80.00,free\n").empty());
+    }
+
     // No rule that would pass over a unit of the sample.
     void proposedRulesLeaveUnitsAlone()
     {
