@@ -155,12 +155,13 @@ void RefreshDialog::fitColumns()
     const int most = fontMetrics().averageCharWidth() * 30;
     int room = table->viewport()->width();
     for (int column = 0; column < m_table.columnCount(); ++column) {
-        header->resizeSection(column, qMin(header->sectionSize(column) + 16, most));
+        header->resizeSection(column, qMin(header->sectionSize(column), most));
         room -= header->sectionSize(column);
     }
-    // What is over goes evenly to all columns, so that figures stay near the names they belong to.
-    for (int column = 0; room > 0 && column < m_table.columnCount(); ++column)
-        header->resizeSection(column, header->sectionSize(column) + room / m_table.columnCount());
+    // What is over goes evenly to all columns, so that figures stay near the names they belong to. Where nothing is, a little air must do.
+    const int more = qMax(room / qMax(m_table.columnCount(), 1), 4);
+    for (int column = 0; column < m_table.columnCount(); ++column)
+        header->resizeSection(column, header->sectionSize(column) + more);
 }
 
 void RefreshDialog::dress()

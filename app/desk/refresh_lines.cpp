@@ -223,7 +223,7 @@ QString RefreshLines::fateText(int row, int column, bool forFile) const
         return money(now.asking, forFile);
     const bool newlyLocked = now.locked && !was.tier.units[unit].locked;
     const bool otherPrice = now.asking != was.tier.units[unit].asking;
-    return newlyLocked ? (otherPrice ? tr("another price, and locked") : tr("locked by the list")) : tr("another price is asked");
+    return newlyLocked ? (otherPrice ? tr("new price, locked") : tr("now locked")) : tr("new price");
 }
 
 QString RefreshLines::sheetText(int row, int column, bool forFile) const

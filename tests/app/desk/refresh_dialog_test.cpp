@@ -174,7 +174,7 @@ void RefreshDialogTest::everyTopicShowsItsLines()
     choose(QStringLiteral("1 kept, clashes with the list"));
     QCOMPARE(row(0), (QStringList{QStringLiteral("Mill Quay"), QStringLiteral("Room 8-10"), QStringLiteral("Lower"),
                                   QStringLiteral("8-10/2"), QStringLiteral("6,100.00"), QStringLiteral("6,000.00"),
-                                  QStringLiteral("6,250.00"), QStringLiteral("another price is asked")}));
+                                  QStringLiteral("6,250.00"), QStringLiteral("new price")}));
     choose(QStringLiteral("2 candidates"));
     QCOMPARE(row(1)[3], QStringLiteral("leaves with its tier"));
     choose(QStringLiteral("1 price sheet"));
