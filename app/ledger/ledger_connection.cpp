@@ -163,6 +163,11 @@ Outcome<bool> Ledger::Connection::prepareForWriting(int wait)
 
 Outcome<bool> Ledger::Connection::migrate(int wait)
 {
+    const auto now = number(QStringLiteral("PRAGMA user_version"), LedgerAct::opening);
+    if (!now.ok())
+        return Trouble{now.trouble()};
+    if (now.value() == newestLedgerForm())
+        return true; // Without waiting for whoever writes.
     if (const auto error = runPatiently(QStringLiteral("BEGIN IMMEDIATE"), wait))
         return trouble(*error, LedgerAct::opening);
     const auto giveUp = [this](const std::string& words) {

@@ -234,7 +234,7 @@ namespace
 // `held` are the sign-offs that say something of the window, and what they say: the last one at or before its start (part 0), those inside
 // (part 1), those at its end (part 2). min() of an aggregate takes the other columns of its row from the row that has the least value.
 const char* const kHeld = R"(
-WITH given(tier, start, until, currency, decimals) AS (SELECT id, ?3, ?4, ?5, ?6 FROM tier WHERE site = ?1 AND name = ?2),
+WITH given(tier, start, until, currency, decimals) AS (SELECT id, ?, ?, ?, ? FROM tier WHERE site = ? AND name = ?),
 held(id, part) AS (
     SELECT * FROM (SELECT s.id, 0 FROM sign_off s JOIN given ON s.tier = given.tier AND s.instant <= start
                    ORDER BY s.instant DESC, s.id DESC LIMIT 1)
@@ -266,8 +266,9 @@ Outcome<LowestOfTier> Ledger::lowestAsked(const std::string& site, const std::st
     LowestOfTier lowest;
     if (m_connection->empty)
         return lowest;
-    const QVariantList values = tierNames(site, tier) << qlonglong{window.from()} << qlonglong{window.until}
-                                                      << QString::fromStdString(currency.code) << currency.decimals;
+    const QVariantList values =
+        QVariantList{qlonglong{window.from()}, qlonglong{window.until}, QString::fromStdString(currency.code), currency.decimals}
+        << tierNames(site, tier);
     LedgerQuery counted(m_connection->database, QString::fromLatin1(kHeld) + QString::fromLatin1(kCounted), values);
     if (counted.next()) {
         lowest.signOffs = counted.query.value(0).toLongLong();

@@ -1,5 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // A save that is killed, or meets a full disk, leaves the old file or the new one whole, never neither.
+#include "own_mounts.h"
 #include "saved_versions.h"
 
 #include <QDir>
@@ -10,7 +11,6 @@
 
 #include <csignal>
 #include <random>
-#include <sched.h>
 #include <sys/mount.h>
 #include <thread>
 #include <unistd.h>
@@ -20,29 +20,6 @@ using namespace rungwright::tests;
 
 namespace
 {
-
-void writeLine(const char* path, const QByteArray& line)
-{
-    QFile file(QString::fromLatin1(path));
-    if (file.open(QIODevice::WriteOnly))
-        file.write(line);
-}
-
-// A mount table of our own, so that what is mounted here is seen by this process and its children only and goes with them. Root may
-// have one; elsewhere a user namespace may give the right. To be called while there is one thread.
-bool ownMountTable()
-{
-    const uid_t user = getuid();
-    const gid_t group = getgid();
-    if (unshare(CLONE_NEWNS) != 0) {
-        if (unshare(CLONE_NEWUSER | CLONE_NEWNS) != 0)
-            return false;
-        writeLine("/proc/self/setgroups", "deny");
-        writeLine("/proc/self/uid_map", "0 " + QByteArray::number(user) + " 1");
-        writeLine("/proc/self/gid_map", "0 " + QByteArray::number(group) + " 1");
-    }
-    return mount("none", "/", nullptr, MS_REC | MS_PRIVATE, nullptr) == 0;
-}
 
 bool s_ownMountTable = false;
 
