@@ -130,6 +130,11 @@ void DeskActions::buildLadder()
     m_needCandidate << add(menu, QStringLiteral("discardCandidateAction"), tr("&Discard the candidate"), {},
                            [&panel] { panel.discardWorked(); });
     menu->addSeparator();
+    m_needScenario << add(menu, QStringLiteral("leastChangeAction"), tr("Change as little as a &target takes"), QKeySequence(tr("Ctrl+T")),
+                          [this] { m_window.showLeastChange(); });
+    m_needScenario << add(menu, QStringLiteral("shapeAction"), tr("Make from a &shape"), QKeySequence(tr("Ctrl+Shift+T")),
+                          [this] { m_window.showShape(); });
+    menu->addSeparator();
     m_needScenario << add(menu, QStringLiteral("lockAction"), tr("&Lock or unlock the selected units"), QKeySequence(tr("Ctrl+L")),
                           [this] { m_window.bench().toggleLock(); });
     QAction* hold = add(menu, QStringLiteral("holdTotalAction"), tr("&Hold the asking total"), QKeySequence(tr("Ctrl+H")), [] {});
@@ -147,9 +152,12 @@ void DeskActions::buildView(AppearanceKeeper* appearance)
                           [this] { m_window.showSideBySide(); });
     m_needScenario << add(menu, QStringLiteral("portfolioAction"), tr("&Portfolio"), QKeySequence(tr("Ctrl+3")),
                           [this] { m_window.showPortfolio(); });
+    m_needScenario << add(menu, QStringLiteral("frontierAction"), tr("&Trade-off"), QKeySequence(tr("Ctrl+4")),
+                          [this] { m_window.showTradeOff(); });
     menu->addSeparator();
     menu->addAction(m_window.worklistDock().toggleViewAction());
     menu->addAction(m_window.figuresDock().toggleViewAction());
+    menu->addAction(m_window.reshapeDock().toggleViewAction());
     add(menu, QStringLiteral("resetLayoutAction"), tr("&Reset the window's layout"), {}, [this] { m_window.resetLayout(); });
     if (!appearance)
         return;

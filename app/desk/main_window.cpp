@@ -10,10 +10,12 @@
 #include "file_names.h"
 #include "flags_dialog.h"
 #include "floor_question.h"
+#include "frontier_page.h"
 #include "help_texts.h"
 #include "picture_file.h"
 #include "portfolio_page.h"
 #include "questions.h"
+#include "reshape_panel.h"
 #include "rules_dialog.h"
 #include "sheet_dialog.h"
 #include "side_by_side_page.h"
@@ -44,7 +46,8 @@ const auto kLayout = QStringLiteral("window/layout");
 const auto kColumns = QStringLiteral("window/worklistColumns");
 const auto kWorklistWanted = QStringLiteral("window/worklist");
 const auto kFiguresWanted = QStringLiteral("window/figures");
-constexpr int kLayoutVersion = 1;
+const auto kReshapeWanted = QStringLiteral("window/reshape");
+constexpr int kLayoutVersion = 2;
 /// Below this width the docks begin as narrow as they can be.
 constexpr int kNarrow = 1360;
 
@@ -103,16 +106,16 @@ void MainWindow::buildPages()
     m_portfolio = new PortfolioPage(m_tiers, m_bench, m_questions);
     m_portfolio->setObjectName(QStringLiteral("portfolioPage"));
     m_pages->addTab(m_portfolio, tr("Portfolio"));
+    m_frontier = new FrontierPage(m_bench, m_questions);
+    m_frontier->setObjectName(QStringLiteral("frontierPage"));
+    m_pages->addTab(m_frontier, tr("Trade-off"));
     m_stack = new QStackedWidget;
     m_stack->addWidget(m_start);
     m_stack->addWidget(m_pages);
     setCentralWidget(m_stack);
 
     // Side by side has a table of the same figures for every ladder and needs the room.
-    connect(m_pages, &QTabWidget::currentChanged, this, [this] {
-        const bool beside = m_pages->currentWidget() == m_sideBySide;
-        m_figuresDock->setVisible(!beside && m_figuresWanted);
-    });
+    connect(m_pages, &QTabWidget::currentChanged, this, &MainWindow::showDocksForPage);
 
     connect(m_start, &StartPage::importWanted, m_files, &FileFlow::askImport);
     connect(m_start, &StartPage::openWanted, m_files, &FileFlow::askOpen);
@@ -121,11 +124,20 @@ void MainWindow::buildPages()
     connect(&m_benchPage->candidates(), &CandidatesPanel::sheetWanted, this, &MainWindow::showSheet);
     connect(m_sideBySide, &SideBySidePage::chosen, this, &MainWindow::showSheet);
     connect(m_portfolio, &PortfolioPage::told, this, &MainWindow::tell);
+    connect(m_frontier, &FrontierPage::told, this, &MainWindow::tell);
     connect(m_portfolio, &PortfolioPage::thresholdsWanted, this, &MainWindow::showThresholds);
     connect(m_portfolio, &PortfolioPage::tierChosen, this, [this](int tier) {
         m_bench.showTier(tier, m_document.tier(tier)->chosen.value_or(-1));
         showBench();
     });
+}
+
+void MainWindow::showDocksForPage()
+{
+    const bool beside = m_pages->currentWidget() == m_sideBySide;
+    m_figuresDock->setVisible(!beside && m_figuresWanted);
+    // What is tried shows on the bench.
+    m_reshapeDock->setVisible(m_pages->currentWidget() == m_benchPage && m_reshapeWanted);
 }
 
 void MainWindow::buildDocks()
@@ -146,9 +158,17 @@ void MainWindow::buildDocks()
     m_figuresDock->setObjectName(QStringLiteral("figuresDock"));
     m_figuresDock->setWidget(m_figures);
     addDockWidget(Qt::RightDockWidgetArea, m_figuresDock);
+    m_reshape = new ReshapePanel(m_bench);
+    m_reshapeDock = new QDockWidget(tr("Reshape"), this);
+    m_reshapeDock->setObjectName(QStringLiteral("reshapeDock"));
+    m_reshapeDock->setWidget(m_reshape);
+    addDockWidget(Qt::RightDockWidgetArea, m_reshapeDock);
+    tabifyDockWidget(m_figuresDock, m_reshapeDock);
+    m_figuresDock->raise();
     // Closed by its button or by the menu: either way the user has said so.
     connect(m_worklistDock->toggleViewAction(), &QAction::triggered, this, [this](bool on) { m_worklistWanted = on; });
     connect(m_figuresDock->toggleViewAction(), &QAction::triggered, this, [this](bool on) { m_figuresWanted = on; });
+    connect(m_reshapeDock->toggleViewAction(), &QAction::triggered, this, [this](bool on) { m_reshapeWanted = on; });
 }
 
 void MainWindow::buildStatus()
@@ -185,6 +205,7 @@ void MainWindow::onOpened()
     m_pages->setCurrentWidget(m_benchPage);
     m_worklistDock->setVisible(m_worklistWanted);
     m_figuresDock->setVisible(m_figuresWanted);
+    m_reshapeDock->setVisible(m_reshapeWanted);
     m_worstWanted = m_tiers.measuring(); // of a large list only then
     showWorst();
     tell(tr("%1 opened.").arg(m_document.displayName()));
@@ -315,6 +336,23 @@ void MainWindow::showSideBySide() { m_pages->setCurrentWidget(m_sideBySide); }
 
 void MainWindow::showPortfolio() { m_pages->setCurrentWidget(m_portfolio); }
 
+void MainWindow::showTradeOff() { m_pages->setCurrentWidget(m_frontier); }
+
+void MainWindow::showLeastChange()
+{
+    showBench();
+    m_reshapeWanted = true;
+    m_reshapeDock->show();
+    m_reshapeDock->raise();
+    m_reshape->showLeastChange();
+}
+
+void MainWindow::showShape()
+{
+    showLeastChange();
+    m_reshape->showShape();
+}
+
 void MainWindow::showThresholds()
 {
     if (m_document.empty())
@@ -339,9 +377,13 @@ void MainWindow::resetLayout()
 {
     addDockWidget(Qt::LeftDockWidgetArea, m_worklistDock);
     addDockWidget(Qt::RightDockWidgetArea, m_figuresDock);
-    m_worklistWanted = m_figuresWanted = true;
+    addDockWidget(Qt::RightDockWidgetArea, m_reshapeDock);
+    tabifyDockWidget(m_figuresDock, m_reshapeDock);
+    m_figuresDock->raise();
+    m_worklistWanted = m_figuresWanted = m_reshapeWanted = true;
     m_worklistDock->setVisible(!m_document.empty());
     m_figuresDock->setVisible(!m_document.empty());
+    m_reshapeDock->setVisible(!m_document.empty());
     const bool narrow = width() < kNarrow;
     resizeDocks({m_worklistDock, m_figuresDock}, narrow ? QList<int>{300, 320} : QList<int>{404, 340}, Qt::Horizontal);
 }
@@ -349,7 +391,8 @@ void MainWindow::resetLayout()
 void MainWindow::restoreLayout()
 {
     if (restoreGeometry(m_settings.value(kGeometry).toByteArray())) {
-        restoreState(m_settings.value(kLayout).toByteArray(), kLayoutVersion);
+        if (!restoreState(m_settings.value(kLayout).toByteArray(), kLayoutVersion))
+            resetLayout(); // of an earlier version, with other docks
         m_worklist->restoreColumns(m_settings.value(kColumns).toByteArray());
     } else {
         const QSize screen = this->screen()->availableSize();
@@ -358,9 +401,11 @@ void MainWindow::restoreLayout()
     }
     m_worklistWanted = m_settings.value(kWorklistWanted, true).toBool();
     m_figuresWanted = m_settings.value(kFiguresWanted, true).toBool();
+    m_reshapeWanted = m_settings.value(kReshapeWanted, true).toBool();
     // Nothing is open yet: the start page has the window to itself.
     m_worklistDock->hide();
     m_figuresDock->hide();
+    m_reshapeDock->hide();
 }
 
 void MainWindow::closeEvent(QCloseEvent* event)
@@ -377,6 +422,7 @@ void MainWindow::closeEvent(QCloseEvent* event)
     m_settings.setValue(kLayout, saveState(kLayoutVersion));
     m_settings.setValue(kWorklistWanted, m_worklistWanted);
     m_settings.setValue(kFiguresWanted, m_figuresWanted);
+    m_settings.setValue(kReshapeWanted, m_reshapeWanted);
     m_settings.setValue(kColumns, m_worklist->saveColumns());
     event->accept();
 }

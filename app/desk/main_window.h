@@ -22,8 +22,10 @@ class AppearanceKeeper;
 class BenchPage;
 class DeskActions;
 class FiguresPanel;
+class FrontierPage;
 class Questions;
 class PortfolioPage;
+class ReshapePanel;
 class SideBySidePage;
 class StartPage;
 class WorklistPanel;
@@ -55,12 +57,16 @@ public:
     void showBench();
     void showSideBySide();
     void showPortfolio();
+    void showTradeOff();
+    void showLeastChange();
+    void showShape();
     void showThresholds();
     void showWorklistExport();
     WorklistPanel& worklist() { return *m_worklist; }
     BenchPage& benchPage() { return *m_benchPage; }
     QDockWidget& worklistDock() { return *m_worklistDock; }
     QDockWidget& figuresDock() { return *m_figuresDock; }
+    QDockWidget& reshapeDock() { return *m_reshapeDock; }
 
 protected:
     void closeEvent(QCloseEvent* event) override;
@@ -71,6 +77,7 @@ private:
     void buildDocks();
     void buildPages();
     void buildStatus();
+    void showDocksForPage();
     void onOpened();
     void showWorst();
     void showSaveState();
@@ -90,14 +97,18 @@ private:
     BenchPage* m_benchPage = nullptr;
     SideBySidePage* m_sideBySide = nullptr;
     PortfolioPage* m_portfolio = nullptr;
+    FrontierPage* m_frontier = nullptr;
     WorklistPanel* m_worklist = nullptr;
     FiguresPanel* m_figures = nullptr;
     QDockWidget* m_worklistDock = nullptr;
     QDockWidget* m_figuresDock = nullptr;
+    ReshapePanel* m_reshape = nullptr;
+    QDockWidget* m_reshapeDock = nullptr;
     DeskActions* m_actions = nullptr;
     int m_undoIndex = 0;
     bool m_worstWanted = false; ///< The worst tier goes onto the bench as soon as it is known.
     bool m_worklistWanted = true;
+    bool m_reshapeWanted = true;
     bool m_figuresWanted = true; ///< Whether the Figures stand beside the bench, which shows them.
     QLabel* m_lastAction = nullptr;
     QLabel* m_saveState = nullptr;
