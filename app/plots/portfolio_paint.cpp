@@ -17,6 +17,8 @@ namespace
 /// Tiers a cell, from where on each shade begins; fewer are drawn one by one.
 constexpr std::array<std::uint32_t, 5> kLevels{3, 6, 12, 25, 50};
 
+constexpr double kShadeSide = 12;
+
 std::size_t levelOf(std::uint32_t count)
 {
     const auto above = std::upper_bound(kLevels.begin(), kLevels.end(), count);
@@ -49,11 +51,12 @@ void PortfolioPlot::paintFrame(QPainter& painter)
     const QFontMetricsF metrics(font());
     painter.setFont(font());
     painter.setPen(look().faintInk);
-    painter.drawText(QPointF(8, kHeadingTop + metrics.ascent()), shareTitle());
     const QRectF in = area();
     const double below = in.bottom() + 8 + metrics.height();
+    // Where the whole sentence has no room, the axis's name has.
+    const QString lean = tr("lean (g1): further left, more prices crowd near the top");
     painter.drawText(QRectF(in.left(), below, in.width(), metrics.height()), Qt::AlignRight | Qt::AlignTop,
-                     tr("lean (g1): further left, more prices crowd near the top"));
+                     metrics.horizontalAdvance(lean) <= in.width() ? lean : tr("lean (g1)"));
     const QString note = leftOutText();
     if (!note.isEmpty()) {
         painter.setPen(look().ink);
@@ -67,44 +70,64 @@ void PortfolioPlot::paintFrame(QPainter& painter)
     painter.restore();
 }
 
+std::vector<PortfolioPlot::LegendPiece> PortfolioPlot::legend() const
+{
+    using Mark = LegendPiece::Mark;
+    std::vector<LegendPiece> pieces{{Mark::none, 0, 0, shareTitle(), false},
+                                    {Mark::filled, 5, 0, tr("leans left or wide gap"), false},
+                                    {Mark::open, 5, 0, tr("neither"), false}};
+    if (!dense()) {
+        pieces.push_back({Mark::none, 0, 0, tr("units on offer:"), true});
+        for (const int units : {1, 10, 50})
+            pieces.push_back({Mark::open, radiusFor(units), 0, QString::number(units), false});
+    } else {
+        pieces.push_back({Mark::none, 0, 0, tr("tiers where many lie together:"), true});
+        for (std::size_t level = 0; level < kLevels.size(); ++level)
+            pieces.push_back({Mark::shade, 0, level, levelText(level), false});
+    }
+    const QFontMetricsF metrics(font());
+    const double right = std::max(viewport().width() - 8.0, 80.0);
+    double x = 8;
+    double y = kHeadingTop;
+    for (LegendPiece& piece : pieces) {
+        const double mark = piece.mark == Mark::none ? 0 : piece.mark == Mark::shade ? kShadeSide + 4 : 2 * piece.size + 4;
+        piece.said = metrics.elidedText(piece.said, Qt::ElideRight, right - 8 - mark);
+        const double width = std::ceil(mark + metrics.horizontalAdvance(piece.said));
+        if (piece.onNewLine || x + width > right) {
+            x = 8;
+            y += metrics.height() + kLegendGap;
+        }
+        piece.place = QRectF(x, y, width, metrics.height());
+        x += width + (&piece == &pieces.front() ? 28 : 14);
+    }
+    return pieces;
+}
+
+int PortfolioPlot::legendLines() const
+{
+    return 1 + qRound((legend().back().place.top() - kHeadingTop) / (QFontMetricsF(font()).height() + kLegendGap));
+}
+
 void PortfolioPlot::paintLegend(QPainter& painter)
 {
+    using Mark = LegendPiece::Mark;
     const QFontMetricsF metrics(font());
-    // Beside the axis's title what the points are, below it their size or, of many tiers, the shades.
-    double x = 8 + metrics.horizontalAdvance(shareTitle()) + 28;
-    double middle = kHeadingTop + 0.5 * metrics.height();
-    const auto text = [&](const QString& said) {
-        painter.setPen(look().faintInk);
-        painter.drawText(QPointF(x, middle + metrics.ascent() - metrics.height() / 2), said);
-        x += metrics.horizontalAdvance(said) + 14;
-    };
     painter.setRenderHint(QPainter::Antialiasing, true);
-    const auto dot = [&](double r, bool filled) {
-        x += r;
-        painter.setPen(QPen(filled ? look().paper : look().onOffer, 1.2));
-        painter.setBrush(filled ? QBrush(look().gapLine) : QBrush(Qt::NoBrush));
-        painter.drawEllipse(QPointF(x, middle), r, r);
-        x += r + 4;
-    };
-    dot(5, true);
-    text(tr("leans left or wide gap"));
-    dot(5, false);
-    text(tr("neither"));
-    x = area().left();
-    middle += metrics.height() + 4;
-    if (!dense()) {
-        text(tr("units on offer:"));
-        for (const int units : {1, 10, 50}) {
-            dot(radiusFor(units), false);
-            text(QString::number(units));
+    for (const LegendPiece& piece : legend()) {
+        const double middle = piece.place.center().y();
+        double x = piece.place.left();
+        if (piece.mark == Mark::shade) {
+            painter.fillRect(QRectF(x, middle - kShadeSide / 2, kShadeSide, kShadeSide), shade(piece.level));
+            x += kShadeSide + 4;
+        } else if (piece.mark != Mark::none) {
+            const bool filled = piece.mark == Mark::filled;
+            painter.setPen(QPen(filled ? look().paper : look().onOffer, 1.2));
+            painter.setBrush(filled ? QBrush(look().gapLine) : QBrush(Qt::NoBrush));
+            painter.drawEllipse(QPointF(x + piece.size, middle), piece.size, piece.size);
+            x += 2 * piece.size + 4;
         }
-        return;
-    }
-    text(tr("tiers where many lie together:"));
-    for (std::size_t level = 0; level < kLevels.size(); ++level) {
-        painter.fillRect(QRectF(x, middle - 6, 12, 12), shade(level));
-        x += 16;
-        text(levelText(level));
+        painter.setPen(look().faintInk);
+        painter.drawText(QPointF(x, piece.place.top() + metrics.ascent()), piece.said);
     }
 }
 
@@ -130,12 +153,20 @@ void PortfolioPlot::paintThresholds(QPainter& painter)
         painter.drawText(rect, alignment, said);
     };
     // Above the area, over its line: no points lie there.
-    const QString left = tr("leans left: below %1").arg(numberText(t.leansLeft));
+    // Where the name and the number have no room, the number has: what it is of stands in the legend.
+    const auto fitted = [&](const QString& said, const QString& number) {
+        return metrics.horizontalAdvance(said) <= in.width() - 8 ? said : number;
+    };
+    const QString from = numberText(t.leansLeft);
+    const QString left = fitted(tr("leans left: below %1").arg(from), tr("below %1").arg(from));
     const double width = metrics.horizontalAdvance(left) + 8;
     const double start = std::clamp(x - width / 2, in.left(), std::max(in.left(), in.right() - width));
     label(QRectF(start, in.top() - metrics.height() - 1, width, metrics.height()), Qt::AlignCenter, left);
-    label(QRectF(in.right() - 200, y - metrics.height() - 1, 196, metrics.height()), Qt::AlignRight | Qt::AlignVCenter,
-          tr("wide gap: from %1").arg(percentText(t.gapShare, true)));
+    const QString share = percentText(t.gapShare, true);
+    const QString wide = fitted(tr("wide gap: from %1").arg(share), tr("from %1").arg(share));
+    const double wideWidth = metrics.horizontalAdvance(wide) + 8;
+    label(QRectF(in.right() - wideWidth - 4, y - metrics.height() - 1, wideWidth, metrics.height()), Qt::AlignRight | Qt::AlignVCenter,
+          wide);
 }
 
 void PortfolioPlot::paintDensity(QPainter& painter)

@@ -124,7 +124,7 @@ void PortfolioPlot::setMargins()
 {
     const int line = fontMetrics().height();
     const int numbers = fontMetrics().horizontalAdvance(QStringLiteral("888.8 %")) + 14;
-    setAreaMargins(QMargins(numbers, kHeadingTop + 3 * line + 8, 16, 2 * line + 14 + noteHeight()));
+    setAreaMargins(QMargins(numbers, kHeadingTop + legendLines() * (line + kLegendGap) + line, 16, 2 * line + 14 + noteHeight()));
 }
 
 void PortfolioPlot::areaChanged()

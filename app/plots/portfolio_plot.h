@@ -58,6 +58,7 @@ protected:
     void focusOutEvent(QFocusEvent* event) override;
 
 private:
+    static constexpr int kLegendGap = 4; ///< Between two of its lines.
     enum class Tiers { others, same };
     void takeRows(Tiers tiers);
     void showHeading();
@@ -78,6 +79,19 @@ private:
     void paintDensity(QPainter& painter);
     void paintPoint(QPainter& painter, int index, bool picked);
     void paintBeyond(QPainter& painter);
+    /// A piece of the legend: a mark with its words behind it, or words alone.
+    struct LegendPiece {
+        enum class Mark { none, filled, open, shade };
+        Mark mark = Mark::none;
+        double size = 0;       ///< A dot's radius.
+        std::size_t level = 0; ///< A shade's.
+        QString said;
+        bool onNewLine = false;
+        QRectF place = {}; ///< Once laid out.
+    };
+    /// The title of the upright axis first. Pieces run on over as many lines as the font and the width ask for.
+    std::vector<LegendPiece> legend() const;
+    int legendLines() const;
     void paintLegend(QPainter& painter);
     void paintRing(QPainter& painter, int index, const QColor& colour, double width);
     QColor shade(std::size_t level) const;
