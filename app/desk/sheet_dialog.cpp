@@ -8,6 +8,7 @@
 #include "plot_words.h"
 #include "questions.h"
 #include "sheet_remarks.h"
+#include "signoff_case.h"
 #include "table_text.h"
 #include "ui_sheet_dialog.h"
 #include "wording.h"
@@ -29,16 +30,6 @@ QString nameOf(const TierCase& tierCase, int candidate)
     return candidate < 0 ? QString() : QString::fromStdString(tierCase.candidates[static_cast<std::size_t>(candidate)].name);
 }
 
-/// What the sheet changes, in unit order.
-SignedSheet signedSheet(const TierCase& tierCase, int candidate)
-{
-    SignedSheet sheet;
-    sheet.candidate = candidate < 0 ? std::string(kCurrentName) : tierCase.candidates[static_cast<std::size_t>(candidate)].name;
-    for (const PriceChange& change : priceChanges(askingPrices(tierCase.tier.units), pricesOf(tierCase, candidate)))
-        sheet.prices.push_back({tierCase.tier.units[change.unit].name, change.before, change.after});
-    return sheet;
-}
-
 /// A name as a title can bear it.
 QString shortName(const QString& name) { return isolated(shownText(name)); }
 
@@ -56,7 +47,7 @@ SheetDialog::SheetDialog(const Document& document, int tier, int candidate, Ques
     QDialog(parent),
     m_questions(questions),
     m_currency(document.scenario().currency),
-    m_rules(document.scenario().rules),
+    m_rules(rulesFor(document.scenario(), document.tier(tier)->tier)),
     m_rows(sheetRows(document.scenario(), *document.tier(tier), candidate)),
     m_signed(signedSheet(*document.tier(tier), candidate)),
     m_model(m_rows, m_currency),
@@ -152,7 +143,7 @@ void SheetDialog::dress()
     QTableView* table = m_ui->rowsTable;
     table->verticalHeader()->setDefaultSectionSize(fontMetrics().height() + 8);
     const int money = fontMetrics().horizontalAdvance(QStringLiteral("+88,888,888.88")) + 16;
-    for (int column = SheetModel::statusColumn; column < SheetModel::columnCount_; ++column)
+    for (int column = SheetModel::statusColumn; column <= SheetModel::percentColumn; ++column)
         table->horizontalHeader()->resizeSection(column, money);
 }
 

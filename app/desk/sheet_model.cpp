@@ -28,9 +28,15 @@ SheetModel::SheetModel(std::vector<SheetRow> rows, const Currency& currency, QOb
     m_changed = static_cast<int>(firstUnchanged - m_rows.begin());
 }
 
+SheetModel::SheetModel(std::vector<SheetRow> rows, const Currency& currency, Broken broken, QObject* parent) :
+    SheetModel(std::move(rows), currency, parent)
+{
+    m_broken = std::move(broken);
+}
+
 int SheetModel::rowCount(const QModelIndex& parent) const { return parent.isValid() ? 0 : static_cast<int>(m_rows.size()); }
 
-int SheetModel::columnCount(const QModelIndex& parent) const { return parent.isValid() ? 0 : columnCount_; }
+int SheetModel::columnCount(const QModelIndex& parent) const { return parent.isValid() ? 0 : m_broken ? ruleColumn + 1 : int(ruleColumn); }
 
 QString SheetModel::text(const SheetRow& row, int column) const
 {
@@ -53,6 +59,10 @@ QString SheetModel::text(const SheetRow& row, int column) const
         return moneyText(row.currentPrice, m_currency);
     case toColumn:
         return moneyText(row.newPrice, m_currency);
+    case ruleColumn: {
+        const auto found = m_broken->find(row.unit);
+        return found == m_broken->end() ? QString() : found->second;
+    }
     default:
         break;
     }
@@ -91,7 +101,7 @@ QVariant SheetModel::data(const QModelIndex& index, int role) const
             return text(row, index.column());
         }
     case Qt::TextAlignmentRole: {
-        const bool figure = index.column() >= fromColumn;
+        const bool figure = index.column() >= fromColumn && index.column() < ruleColumn;
         return QVariant((figure ? Qt::AlignRight : Qt::AlignLeft) | Qt::AlignVCenter);
     }
     case Qt::FontRole: {
@@ -106,10 +116,10 @@ QVariant SheetModel::data(const QModelIndex& index, int role) const
 
 QVariant SheetModel::headerData(int section, Qt::Orientation orientation, int role) const
 {
-    if (orientation != Qt::Horizontal || section < 0 || section >= columnCount_)
+    if (orientation != Qt::Horizontal || section < 0 || section >= columnCount())
         return {};
     if (role == Qt::TextAlignmentRole)
-        return QVariant((section >= fromColumn ? Qt::AlignRight : Qt::AlignLeft) | Qt::AlignVCenter);
+        return QVariant((section >= fromColumn && section < ruleColumn ? Qt::AlignRight : Qt::AlignLeft) | Qt::AlignVCenter);
     if (role != Qt::DisplayRole)
         return {};
     switch (section) {
@@ -123,6 +133,8 @@ QVariant SheetModel::headerData(int section, Qt::Orientation orientation, int ro
         return tr("To");
     case changeColumn:
         return tr("Change");
+    case ruleColumn:
+        return tr("Rule broken");
     default:
         return tr("Percent");
     }

@@ -7,6 +7,9 @@
 #include <QAbstractTableModel>
 #include <QSortFilterProxyModel>
 
+#include <map>
+#include <optional>
+#include <string>
 #include <vector>
 
 namespace rungwright
@@ -17,9 +20,13 @@ class SheetModel : public QAbstractTableModel
 {
     Q_OBJECT
 public:
-    enum Column { unitColumn, statusColumn, fromColumn, toColumn, changeColumn, percentColumn, columnCount_ };
+    enum Column { unitColumn, statusColumn, fromColumn, toColumn, changeColumn, percentColumn, ruleColumn };
+
+    /// Rules broken by unit name, in words: with them comes a column more.
+    using Broken = std::map<std::string, QString>;
 
     SheetModel(std::vector<SheetRow> rows, const Currency& currency, QObject* parent = nullptr);
+    SheetModel(std::vector<SheetRow> rows, const Currency& currency, Broken broken, QObject* parent = nullptr);
 
     int changedCount() const { return m_changed; }
     bool changes(int row) const { return row < m_changed; }
@@ -35,6 +42,7 @@ private:
 
     std::vector<SheetRow> m_rows;
     Currency m_currency;
+    std::optional<Broken> m_broken;
     int m_changed = 0;
 };
 
