@@ -11,6 +11,7 @@ LadderChange ladderChange(std::span<const Unit> units, std::span<const Price> pr
 {
     assert(units.size() == prices.size());
     LadderChange result;
+    double squares = 0;
     for (std::size_t i = 0; i < units.size(); ++i) {
         const Price by = prices[i] - units[i].asking;
         if (units[i].onOffer())
@@ -18,6 +19,7 @@ LadderChange ladderChange(std::span<const Unit> units, std::span<const Price> pr
         if (by == Price{})
             continue;
         ++result.unitsChanged;
+        squares += inMinor(by) * inMinor(by);
         const auto size = std::abs(by.minor);
         const auto greatest = result.greatest ? std::abs(result.greatest->minor) : 0;
         if (size > greatest || (size == greatest && by > *result.greatest))
@@ -27,6 +29,8 @@ LadderChange ladderChange(std::span<const Unit> units, std::span<const Price> pr
         if (std::abs(share) > greatestShare || (std::abs(share) == greatestShare && share > *result.greatestShare))
             result.greatestShare = share;
     }
+    if (!units.empty())
+        result.rootMeanSquare = std::sqrt(squares / static_cast<double>(units.size()));
     return result;
 }
 

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "side_by_side_export.h"
 
+#include "caution.h"
 #include "file_names.h"
 #include "paper_plot.h"
 #include "picture_file.h"
@@ -35,6 +36,9 @@ void SideBySideExport::fill(QMenu& menu)
     menu.addSeparator();
     add(tr("Copy &table"), "copyTableAction", &SideBySideExport::copyTable);
     add(tr("Save table as &CSV…"), "saveTableAction", &SideBySideExport::saveTable);
+    menu.addSeparator();
+    add(tr("Copy prices by &unit"), "copyUnitPricesAction", &SideBySideExport::copyUnitPrices);
+    add(tr("Save prices &by unit as CSV…"), "saveUnitPricesAction", &SideBySideExport::saveUnitPrices);
 }
 
 void SideBySideExport::copyPicture() { m_from.plot.copyPlot(); }
@@ -57,6 +61,20 @@ void SideBySideExport::saveTable()
     const QString path = askPath(tr("Save the table"), QStringLiteral("csv"), tr("Comma-separated table (*.csv)"));
     if (!path.isEmpty())
         report(writeWhole(path, m_from.model.csv()), tr("Table saved: %1").arg(path), tr("The table was not saved."));
+}
+
+void SideBySideExport::copyUnitPrices()
+{
+    rungwright::copyTable(m_from.unitTable, CopyPart::everything);
+    emit told(tr("Prices copied. %1").arg(cautionText()));
+}
+
+void SideBySideExport::saveUnitPrices()
+{
+    const QString path = askPath(tr("Save the prices by unit"), QStringLiteral("csv"), tr("Comma-separated table (*.csv)"));
+    if (!path.isEmpty())
+        report(writeWhole(path, m_from.unitPrices.csv()), tr("Prices saved: %1. %2").arg(path, cautionText()),
+               tr("The prices were not saved."));
 }
 
 QString SideBySideExport::askPath(const QString& title, const QString& suffix, const QString& filter)

@@ -3,6 +3,7 @@
 #pragma once
 
 #include "side_by_side_model.h"
+#include "unit_prices_model.h"
 #include "workbench.h"
 
 #include <QObject>
@@ -24,7 +25,9 @@ public:
     struct From {
         const Workbench& bench;
         const SideBySideModel& model;
+        const UnitPricesModel& unitPrices;
         QTableView& table;
+        QTableView& unitTable;
         PaperPlot& plot;
         Questions& questions;
     };
@@ -32,7 +35,7 @@ public:
     /// Questions are asked over `page`, which owns this object.
     SideBySideExport(const From& from, QWidget* page);
 
-    /// Adds the entries: copy and save the picture, copy and save the table.
+    /// Adds the entries: copy and save the picture, copy and save the table, and the prices by unit.
     void fill(QMenu& menu);
 
 signals:
@@ -43,6 +46,8 @@ private:
     void savePicture();
     void copyTable();
     void saveTable();
+    void copyUnitPrices();
+    void saveUnitPrices();
     /// A file to write; empty when given up.
     QString askPath(const QString& title, const QString& suffix, const QString& filter);
     /// Says that the file stands, or asks the user to look at why it does not.

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "side_by_side_model.h"
 
+#include "claims/ranking.h"
 #include "sheet_cells.h"
 #include "table_text.h"
 
@@ -8,6 +9,7 @@
 
 #include <algorithm>
 #include <array>
+#include <cmath>
 #include <string_view>
 
 namespace rungwright
@@ -79,6 +81,9 @@ SideBySideModel::SideBySideModel(QObject* parent) : QAbstractTableModel(parent)
                        QT_TR_NOOP("the change of one unit's price that is greatest in percent of its price today; may be another unit's"),
                        "share", own, 0},
                       [](const LadderChange& c) { return c.greatestShare; }});
+    m_rows.push_back({{"rms_change", QT_TR_NOOP("Amount of change"), Kind::money, 0, nullptr,
+                       QT_TR_NOOP("root of the mean squared change of all units of the tier against today"), money, own, 0},
+                      [](const LadderChange& c) { return std::optional(c.rootMeanSquare); }});
     for (const FigureRow& figure : figures) {
         if (!isFirst(figure))
             m_rows.push_back({figure});
@@ -90,8 +95,67 @@ void SideBySideModel::show(std::vector<ComparedLadder> ladders, const Currency& 
     beginResetModel();
     m_ladders = std::move(ladders);
     m_currency = currency;
+    rank();
     findBest();
     endResetModel();
+}
+
+SideBySideModel::Row SideBySideModel::rankingRow()
+{
+    Row row{
+        {"ranking", QT_TR_NOOP("Rank by your weights"), Kind::number, 0, nullptr,
+         QT_TR_NOOP("place and points of 100: each figure that has a weight is scaled between its worst (0) and its best (100) among the "
+                    "ladders shown, and the scaled figures are averaged by weight; with other ladders beside it the points change"),
+         "points of 100", "min-max scaling, weighted mean", +1}};
+    row.ranking = true;
+    return row;
+}
+
+void SideBySideModel::rank()
+{
+    std::erase_if(m_rows, [](const Row& row) { return row.ranking; });
+    m_scores.assign(m_ladders.size(), std::nullopt);
+    m_places.assign(m_ladders.size(), 0);
+    if (!m_weights.any())
+        return;
+    std::array<Criterion, 4> criteria;
+    criteria[0].weight = m_weights.gap;
+    criteria[1].weight = m_weights.totalChange;
+    criteria[2].weight = m_weights.amountOfChange;
+    criteria[3].weight = m_weights.floorMet;
+    criteria[3].lowerIsBetter = false;
+    for (const ComparedLadder& ladder : m_ladders) {
+        const std::optional<double> total = amount(ladder.change.askingTotal);
+        criteria[0].values.push_back(ladder.measurement.gap.gap);
+        criteria[1].values.push_back(total ? std::optional(std::abs(*total)) : std::nullopt);
+        criteria[2].values.emplace_back(ladder.change.rootMeanSquare);
+        criteria[3].values.push_back(ladder.measurement.gap.chanceFloorMet);
+    }
+    m_scores = weightedScores(criteria);
+    m_places = placesByScore(m_scores);
+    m_rows.insert(m_rows.begin(), rankingRow());
+}
+
+QString SideBySideModel::rankingText() const
+{
+    if (!m_weights.any())
+        return {};
+    std::vector<std::size_t> order;
+    for (std::size_t c = 0; c < m_ladders.size(); ++c) {
+        if (m_places[c] > 0)
+            order.push_back(c);
+    }
+    std::ranges::stable_sort(order, {}, [this](std::size_t c) { return m_places[c]; });
+    QStringList said;
+    for (const std::size_t c : order)
+        said << tr("%1. %2 (%3)").arg(numberText(m_places[c], 0), m_ladders[c].name, numberText(100.0 * *m_scores[c], 0));
+    return said.isEmpty() ? tr("Nothing can be ranked: a figure with a weight is undefined.") : said.join(tr(", "));
+}
+
+std::optional<std::size_t> SideBySideModel::againstColumn() const
+{
+    const int column = m_against ? columnOf(*m_against) : -1;
+    return column < 0 ? std::nullopt : std::optional(static_cast<std::size_t>(column));
 }
 
 int SideBySideModel::columnOf(int candidate) const
@@ -113,6 +177,8 @@ int SideBySideModel::columnCount(const QModelIndex& parent) const { return paren
 std::optional<double> SideBySideModel::value(const Row& row, std::size_t column) const
 {
     const ComparedLadder& ladder = m_ladders[column];
+    if (row.ranking)
+        return m_scores[column] ? std::optional(100.0 * *m_scores[column]) : std::nullopt;
     return row.change ? row.change(ladder.change) : row.figure.value(ladder.measurement);
 }
 
@@ -121,6 +187,21 @@ QString SideBySideModel::text(const Row& row, std::optional<double> value) const
     const QString plain = figureText(row.figure, value, m_currency);
     const bool isSigned = row.change && row.figure.kind != Kind::count;
     return isSigned && value && *value > 0 ? u'+' + plain : plain;
+}
+
+QString SideBySideModel::shownText(const Row& row, std::size_t column) const
+{
+    const auto one = value(row, column);
+    if (row.ranking)
+        return one ? tr("%1. with %2").arg(numberText(m_places[column], 0), numberText(*one, 0)) : tr("not ranked");
+    const auto against = againstColumn();
+    if (!against || *against == column)
+        return text(row, one);
+    const auto from = value(row, *against);
+    if (!one || !from)
+        return undefinedText();
+    const QString by = figureChangeText(row.figure, from, one, m_currency);
+    return by.isEmpty() ? tr("the same") : by;
 }
 
 void SideBySideModel::findBest()
@@ -156,12 +237,13 @@ QVariant SideBySideModel::data(const QModelIndex& index, int role) const
         return {};
     const Row& row = m_rows[static_cast<std::size_t>(index.row())];
     const auto shown = value(row, static_cast<std::size_t>(index.column()));
+    const QString said = shownText(row, static_cast<std::size_t>(index.column()));
     const bool best = isBest(index.row(), index.column());
     switch (role) {
     case Qt::DisplayRole:
-        return best ? tr("★ best  %1").arg(text(row, shown)) : text(row, shown);
+        return best ? tr("★ best  %1").arg(said) : said;
     case kCopyRole:
-        return text(row, shown);
+        return said;
     case kValueRole:
         return shown ? QVariant(*shown) : QVariant();
     case bestRole:
@@ -177,8 +259,11 @@ QVariant SideBySideModel::data(const QModelIndex& index, int role) const
         return explanation(row);
     case Qt::AccessibleTextRole: {
         const QString name = m_ladders[static_cast<std::size_t>(index.column())].name;
-        const QString said = tr("%1, %2: %3").arg(tr(row.figure.label), name, text(row, shown));
-        return best ? tr("%1, best").arg(said) : said;
+        const auto against = againstColumn();
+        const bool differs = against && !row.ranking && static_cast<int>(*against) != index.column();
+        const QString heard = differs ? tr("%1, %2 against %3: %4").arg(tr(row.figure.label), name, m_ladders[*against].name, said)
+                                      : tr("%1, %2: %3").arg(tr(row.figure.label), name, said);
+        return best ? tr("%1, best").arg(heard) : heard;
     }
     default:
         return {};
@@ -236,7 +321,13 @@ QByteArray SideBySideModel::csv() const
     std::string out = "key,figure,unit";
     for (const ComparedLadder& ladder : m_ladders)
         out += ',' + cell(ladder.name);
-    out += ",best\r\n";
+    out += ",best";
+    const auto against = againstColumn();
+    for (std::size_t c = 0; against && c < m_ladders.size(); ++c) {
+        if (c != *against)
+            out += ',' + cell(tr("%1 minus %2").arg(m_ladders[c].name, m_ladders[*against].name));
+    }
+    out += "\r\n";
     for (std::size_t r = 0; r < m_rows.size(); ++r) {
         const FigureRow& figure = m_rows[r].figure;
         out += std::string(figure.key) + ',' + cell(tr(figure.label)) + ',' + fileUnit(figure, m_currency);
@@ -250,7 +341,17 @@ QByteArray SideBySideModel::csv() const
             if (m_best[r][c])
                 best << m_ladders[c].name;
         }
-        out += ',' + cell(best.join(QStringLiteral("; "))) + "\r\n";
+        out += ',' + cell(best.join(QStringLiteral("; ")));
+        for (std::size_t c = 0; against && c < m_ladders.size(); ++c) {
+            if (c == *against)
+                continue;
+            const auto one = value(m_rows[r], c);
+            const auto from = value(m_rows[r], *against);
+            out += ',';
+            if (one && from)
+                out += plainFigure(*one - *from, figure.kind, m_currency).toStdString();
+        }
+        out += "\r\n";
     }
     return QByteArray::fromStdString(out);
 }

@@ -24,8 +24,20 @@ struct ComparedLadder {
     LadderChange change;
 };
 
+/// How much each thing counts in the ranking, 0 = not at all.
+struct RankingWeights {
+    int gap = 0;            ///< Smaller is better.
+    int totalChange = 0;    ///< Of the asking total, up or down: smaller is better.
+    int amountOfChange = 0; ///< Root-mean-square change per unit: smaller is better.
+    int floorMet = 0;       ///< The chance that the floor is met: greater is better.
+
+    bool any() const { return gap > 0 || totalChange > 0 || amountOfChange > 0 || floorMet > 0; }
+    bool operator==(const RankingWeights&) const = default;
+};
+
 /// Rows: the Figures, the most useful ones first, and what each ladder changes. Figures of which one end is better for the enquirer have
-/// their best marked by a star and the word "best": all of several that show the same, none when all do.
+/// their best marked by a star and the word "best": all of several that show the same, none when all do. With weights there is a row with
+/// each ladder's place and points (see claims/ranking.h). Against one of the ladders, the others' cells show differences from it.
 class SideBySideModel : public QAbstractTableModel
 {
     Q_OBJECT
@@ -36,9 +48,15 @@ public:
 
     void show(std::vector<ComparedLadder> ladders, const Currency& currency);
     const std::vector<ComparedLadder>& ladders() const { return m_ladders; }
+    /// Both take effect with the next show(). Of a ladder that is not shown: as they are.
+    void setWeights(const RankingWeights& weights) { m_weights = weights; }
+    void setAgainst(std::optional<int> candidate) { m_against = candidate; }
+    /// The ranking in one line, best first: "1. Lower end (92), 2. Steeper (40)". Empty without weights.
+    QString rankingText() const;
     /// The column of a candidate, -1 when it is not shown.
     int columnOf(int candidate) const;
-    /// The row of a figure's key; "total_change", "units_changed", "greatest_change", "greatest_change_share" beside those of the Figures.
+    /// The row of a figure's key; "total_change", "units_changed", "greatest_change", "greatest_change_share", "rms_change" and,
+    /// with weights, "ranking" beside those of the Figures.
     int rowOf(const char* key) const;
 
     int rowCount(const QModelIndex& parent = {}) const override;
@@ -47,14 +65,21 @@ public:
     QVariant headerData(int section, Qt::Orientation orientation, int role = Qt::DisplayRole) const override;
 
     /// The table for a file: RFC 4180, CRLF, texts guarded against spreadsheets that would take them for formulas; decimal points, no
-    /// grouping, money in major units, undefined figures empty. Columns: key, figure, unit, each ladder by name, and the names of the best.
+    /// grouping, money in major units, undefined figures empty. Columns: key, figure, unit, each ladder by name, and the names of the best;
+    /// against a ladder, each other one's differences from it in columns of their own.
     QByteArray csv() const;
 
 private:
     struct Row {
         FigureRow figure;
         std::optional<double> (*change)(const LadderChange&) = nullptr; ///< Set for the rows that are not of the Figures.
+        bool ranking = false;
     };
+    static Row rankingRow();
+    void rank();
+    /// What a cell shows: a figure, its difference, a place with its points.
+    QString shownText(const Row& row, std::size_t column) const;
+    std::optional<std::size_t> againstColumn() const;
 
     std::optional<double> value(const Row& row, std::size_t column) const;
     QString text(const Row& row, std::optional<double> value) const;
@@ -66,6 +91,10 @@ private:
     std::vector<ComparedLadder> m_ladders;
     Currency m_currency;
     std::vector<std::vector<bool>> m_best; ///< By row and column.
+    RankingWeights m_weights;
+    std::optional<int> m_against;
+    std::vector<std::optional<double>> m_scores; ///< By column, 0 to 1.
+    std::vector<int> m_places;
 };
 
 } // namespace rungwright

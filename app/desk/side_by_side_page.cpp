@@ -14,6 +14,8 @@
 #include <QHeaderView>
 #include <QSignalBlocker>
 
+#include <algorithm>
+
 namespace rungwright
 {
 
@@ -26,10 +28,12 @@ constexpr int kBetween = 20;
 /// Neither a candidate nor the current ladder.
 constexpr int kNoCandidate = -2;
 
+const auto kWeights = QStringLiteral("sideBySide/weights");
+
 } // namespace
 
-SideBySidePage::SideBySidePage(Workbench& bench, Questions& questions, QWidget* parent) :
-    QWidget(parent), m_bench(bench), m_questions(questions), m_ui(std::make_unique<Ui::SideBySidePage>())
+SideBySidePage::SideBySidePage(Workbench& bench, Questions& questions, QSettings* settings, QWidget* parent) :
+    QWidget(parent), m_bench(bench), m_questions(questions), m_settings(settings), m_ui(std::make_unique<Ui::SideBySidePage>())
 {
     m_ui->setupUi(this);
     m_ui->sideBySideCaution->setText(cautionText());
@@ -41,6 +45,9 @@ SideBySidePage::SideBySidePage(Workbench& bench, Questions& questions, QWidget* 
     connect(m_pickMenu, &PickMenu::ticked, this, &SideBySidePage::pickLadder);
     prepareTable();
     prepareMoves();
+    prepareUnitPrices();
+    prepareWeights();
+    prepareAgainst();
     prepareExport();
     dress();
 
@@ -95,9 +102,73 @@ void SideBySidePage::prepareMoves()
     add(tr("Move column &right"), "moveRightAction", Qt::Key_Right, +1);
 }
 
+void SideBySidePage::prepareUnitPrices()
+{
+    QTableView* table = m_ui->unitPricesTable;
+    table->setModel(&m_unitPrices);
+    QHeaderView* header = table->horizontalHeader();
+    header->setHighlightSections(false);
+    header->setSectionResizeMode(QHeaderView::Stretch);
+    header->setTextElideMode(Qt::ElideMiddle);
+    makeCopyable(*table);
+    connect(m_ui->unitPricesBox, &QCheckBox::toggled, this, [this](bool on) {
+        m_ui->tables->setCurrentWidget(on ? m_ui->unitPricesTable : m_ui->sideBySideTable);
+        m_ui->againstBox->setEnabled(!on);
+        alignPlot();
+    });
+}
+
+void SideBySidePage::prepareWeights()
+{
+    const QStringList kept = m_settings ? m_settings->value(kWeights).toStringList() : QStringList();
+    QSpinBox* const boxes[] = {m_ui->weightGapBox, m_ui->weightTotalBox, m_ui->weightAmountBox, m_ui->weightFloorBox};
+    qsizetype i = 0;
+    for (QSpinBox* box : boxes) {
+        box->setValue(kept.value(i++).toInt());
+        box->setToolTip(tr("0: does not count. Each figure is scaled between its worst (0) and its best (100) among the ladders shown;\n"
+                           "the scaled figures are averaged by weight. With other ladders beside it a ladder's points change."));
+        connect(box, qOverload<int>(&QSpinBox::valueChanged), this, [this] {
+            const RankingWeights w = weights();
+            if (m_settings)
+                m_settings->setValue(kWeights, QStringList{QString::number(w.gap), QString::number(w.totalChange),
+                                                           QString::number(w.amountOfChange), QString::number(w.floorMet)});
+            refresh();
+        });
+    }
+}
+
+RankingWeights SideBySidePage::weights() const
+{
+    return {m_ui->weightGapBox->value(), m_ui->weightTotalBox->value(), m_ui->weightAmountBox->value(), m_ui->weightFloorBox->value()};
+}
+
+void SideBySidePage::prepareAgainst()
+{
+    connect(m_ui->againstBox, qOverload<int>(&QComboBox::activated), this, [this](int index) {
+        const QVariant candidate = m_ui->againstBox->itemData(index);
+        m_against = candidate.isValid() ? std::optional(candidate.toString()) : std::nullopt;
+        refresh();
+    });
+}
+
+/// The ladders shown, in the order of the columns; one that is shown no longer is no longer compared with.
+void SideBySidePage::showAgainst()
+{
+    QComboBox* box = m_ui->againstBox;
+    box->clear();
+    box->addItem(tr("as they are"));
+    for (const ComparedLadder& ladder : m_model.ladders()) {
+        const QString name = ladder.candidate < 0 ? QString(QLatin1String("")) : ladder.name;
+        box->addItem(tr("against “%1”").arg(ladder.name), name);
+        if (m_against == name)
+            box->setCurrentIndex(box->count() - 1);
+    }
+}
+
 void SideBySidePage::prepareExport()
 {
-    auto* ways = new SideBySideExport({m_bench, m_model, *m_ui->sideBySideTable, *m_ui->sideBySidePlot, m_questions}, this);
+    auto* ways = new SideBySideExport(
+        {m_bench, m_model, m_unitPrices, *m_ui->sideBySideTable, *m_ui->unitPricesTable, *m_ui->sideBySidePlot, m_questions}, this);
     connect(ways, &SideBySideExport::told, this, &SideBySidePage::told);
     auto* menu = new QMenu(m_ui->exportButton);
     menu->setObjectName(QStringLiteral("exportMenu"));
@@ -112,8 +183,9 @@ void SideBySidePage::dress()
     m_ui->sideBySideTitle->setFont(strong);
     QTableView* table = m_ui->sideBySideTable;
     table->verticalHeader()->setDefaultSectionSize(fontMetrics().height() + 8);
+    m_ui->unitPricesTable->verticalHeader()->setDefaultSectionSize(fontMetrics().height() + 8);
     // The rows that a choice turns on show at once.
-    table->setMinimumHeight(6 * (fontMetrics().height() + 8));
+    m_ui->tables->setMinimumHeight(6 * (fontMetrics().height() + 8));
 }
 
 SideBySidePage::TierKey SideBySidePage::tierKey() const
@@ -163,6 +235,8 @@ void SideBySidePage::refresh()
     pick().update(names, m_bench.candidate());
     showPick(names);
     const bool sameTier = m_shownTier == tierKey() && !m_model.ladders().empty();
+    if (!sameTier)
+        m_against.reset(); // a name means another ladder elsewhere
     m_shownTier = tierKey();
     showLadders(sameTier ? selectedCandidate() : kNoCandidate);
     m_ui->stack->setCurrentWidget(m_ui->comparePage);
@@ -210,7 +284,20 @@ void SideBySidePage::showLadders(int selected)
     QTableView* table = m_ui->sideBySideTable;
     const int row = std::max(0, table->currentIndex().row());
     straightenHeader();
+    std::optional<int> against;
+    for (const ComparedLadder& ladder : ladders) {
+        if (m_against && (ladder.candidate < 0 ? m_against->isEmpty() : *m_against == ladder.name))
+            against = ladder.candidate;
+    }
+    if (!against)
+        m_against.reset();
+    m_model.setAgainst(against);
+    m_model.setWeights(weights());
+    m_unitPrices.show(tierCase.tier, ladders, m_bench.currency());
     m_model.show(std::move(ladders), m_bench.currency());
+    showAgainst();
+    m_ui->rankingLabel->setText(weights().any() ? m_model.rankingText() : tr("Set weights to rank the ladders."));
+    m_ui->rankingLabel->setToolTip(m_ui->rankingLabel->text());
 
     // No figure is cut; where that takes more room than there is, the table scrolls.
     int widest = fontMetrics().averageCharWidth() * 10;

@@ -4,8 +4,10 @@
 
 #include "ladder_pick.h"
 #include "side_by_side_model.h"
+#include "unit_prices_model.h"
 #include "workbench.h"
 
+#include <QSettings>
 #include <QWidget>
 
 #include <map>
@@ -28,8 +30,8 @@ class SideBySidePage : public QWidget
 {
     Q_OBJECT
 public:
-    /// Both outlive the page.
-    SideBySidePage(Workbench& bench, Questions& questions, QWidget* parent = nullptr);
+    /// All outlive the page. The weights of the ranking are kept in the settings, when there are any.
+    SideBySidePage(Workbench& bench, Questions& questions, QSettings* settings = nullptr, QWidget* parent = nullptr);
     ~SideBySidePage() override;
 
     /// Candidates in the order of the columns, -1 = the current ladder; empty while there is nothing to compare.
@@ -52,6 +54,11 @@ private:
     void prepareTable();
     void prepareExport();
     void prepareMoves();
+    void prepareUnitPrices();
+    void prepareWeights();
+    void prepareAgainst();
+    void showAgainst();
+    RankingWeights weights() const;
     void dress();
     void refresh();
     void showPick(const QStringList& names);
@@ -74,7 +81,10 @@ private:
 
     Workbench& m_bench;
     Questions& m_questions;
+    QSettings* m_settings;
     SideBySideModel m_model;
+    UnitPricesModel m_unitPrices;
+    std::optional<QString> m_against; ///< The candidate the figures are differences from, by name; empty = the current ladder.
     PickMenu* m_pickMenu = nullptr;
     std::map<TierKey, LadderPick> m_picks;
     TierKey m_shownTier;

@@ -3,6 +3,8 @@
 #include "compared_tier.h"
 #include "read_table.h"
 #include "side_by_side_model.h"
+#include "table_text.h"
+#include "unit_prices_model.h"
 
 #include <QAbstractItemModelTester>
 #include <QRandomGenerator>
@@ -71,7 +73,7 @@ private slots:
         SideBySideModel model;
         for (const FigureRow& figure : figureRows())
             QVERIFY2(model.rowOf(figure.key) >= 0, figure.key);
-        QCOMPARE(model.rowCount(), static_cast<int>(figureRows().size()) + 4);
+        QCOMPARE(model.rowCount(), static_cast<int>(figureRows().size()) + 5);
     }
 
     void laddersThatShowTheSameShareTheMark()
@@ -149,6 +151,96 @@ private slots:
         QCOMPARE(line("units_changed"), (QStringList{QStringLiteral("units"), QStringLiteral("0"), QStringLiteral("1"), QString()}));
         // 5 / 70 to the eight decimals of the file.
         QCOMPARE(line("gap_share")[2], QStringLiteral("0.07142857"));
+    }
+
+    void theAmountOfChangeIsTheRootMeanSquare()
+    {
+        const Scenario scenario = comparedScenario();
+        SideBySideModel model;
+        model.show({compared(scenario, -1), compared(scenario, 0), compared(scenario, 1)}, scenario.currency);
+        const int row = model.rowOf("rms_change");
+        QCOMPARE(model.index(row, 0).data().toString(), QStringLiteral("0.00"));
+        // By hand, four units: sqrt(10^2 / 4) = 5.00; sqrt((5^2 + 8^2) / 4) = 4.717.
+        QCOMPARE(model.index(row, 1).data().toString(), QStringLiteral("+5.00"));
+        QCOMPARE(model.index(row, 2).data().toString(), QStringLiteral("+4.72"));
+    }
+
+    void differencesAgainstALadder()
+    {
+        const Scenario scenario = comparedScenario();
+        SideBySideModel model;
+        const QAbstractItemModelTester tester(&model, QAbstractItemModelTester::FailureReportingMode::QtTest);
+        model.setAgainst(-1);
+        model.show({compared(scenario, -1), compared(scenario, 0), compared(scenario, 1)}, scenario.currency);
+        const int gap = model.rowOf("gap");
+        QCOMPARE(model.index(gap, 0).data().toString(), QStringLiteral("12.50")); // what the others are held against stays as it is
+        QCOMPARE(model.index(gap, 1).data().toString(), QStringLiteral("★ best  −7.50"));
+        QCOMPARE(model.index(gap, 2).data().toString(), QStringLiteral("+0.25"));
+        QCOMPARE(model.index(model.rowOf("inversions"), 1).data(kCopyRole).toString(), QStringLiteral("the same"));
+        QVERIFY(model.index(gap, 2).data(Qt::AccessibleTextRole).toString().contains(QStringLiteral("against current")));
+        const auto lines = readTable(model.csv());
+        QCOMPARE(lines[0].mid(7), (QStringList{QStringLiteral("Lower end minus current"), QStringLiteral("Steeper minus current")}));
+        QCOMPARE(lines[std::size_t(gap) + 1].mid(7), (QStringList{QStringLiteral("-7.50"), QStringLiteral("0.25")}));
+        model.setAgainst(2); // not shown
+        model.show({compared(scenario, -1), compared(scenario, 0)}, scenario.currency);
+        QCOMPARE(model.index(gap, 0).data().toString(), QStringLiteral("12.50"));
+        QCOMPARE(model.index(gap, 1).data().toString(), QStringLiteral("★ best  5.00"));
+    }
+
+    void aRankingByTheUsersWeights()
+    {
+        const Scenario scenario = comparedScenario();
+        SideBySideModel model;
+        const QAbstractItemModelTester tester(&model, QAbstractItemModelTester::FailureReportingMode::QtTest);
+        QCOMPARE(model.rowOf("ranking"), -1);
+        // By hand. Gaps 12.50, 5.00, 12.75 scale to 0.25/7.75, 1, 0; amounts of change 0, 5.00, 4.717 to 1, 0, 0.0566; with weights 3 and
+        // 1: (3 x 0.03226 + 1) / 4 = 0.2742, 0.75, 0.01415.
+        RankingWeights weights;
+        weights.gap = 3;
+        weights.amountOfChange = 1;
+        model.setWeights(weights);
+        model.show({compared(scenario, -1), compared(scenario, 0), compared(scenario, 1)}, scenario.currency);
+        const int row = model.rowOf("ranking");
+        QCOMPARE(row, 0);
+        QCOMPARE(model.index(row, 0).data().toString(), QStringLiteral("2. with 27"));
+        QCOMPARE(model.index(row, 1).data().toString(), QStringLiteral("★ best  1. with 75"));
+        QCOMPARE(model.index(row, 2).data().toString(), QStringLiteral("3. with 1"));
+        QCOMPARE(model.rankingText(), QStringLiteral("1. Lower end (75), 2. current (27), 3. Steeper (1)"));
+        // Only what stays as it is counts: the current ladder, with nothing changed.
+        weights = {};
+        weights.totalChange = 1;
+        model.setWeights(weights);
+        model.show({compared(scenario, -1), compared(scenario, 0), compared(scenario, 1)}, scenario.currency);
+        QVERIFY(model.rankingText().startsWith(QStringLiteral("1. current (100), 2. Steeper (70)"))); // 3.00 of 10.00
+        model.setWeights({});
+        model.show({compared(scenario, -1), compared(scenario, 0)}, scenario.currency);
+        QCOMPARE(model.rowOf("ranking"), -1);
+        QVERIFY(model.rankingText().isEmpty());
+    }
+
+    void pricesByUnit()
+    {
+        const Scenario scenario = comparedScenario();
+        UnitPricesModel model;
+        const QAbstractItemModelTester tester(&model, QAbstractItemModelTester::FailureReportingMode::QtTest);
+        model.show(scenario.tiers.front().tier, {compared(scenario, 1), compared(scenario, -1), compared(scenario, 2)}, scenario.currency);
+        QCOMPARE(model.rowCount(), 4);
+        QCOMPARE(model.columnCount(), 5); // unit, status, today, Steeper, Same bottom
+        const auto cells = [&](int row) {
+            QStringList said;
+            for (int column = 0; column < model.columnCount(); ++column)
+                said << model.index(row, column).data().toString();
+            return said;
+        };
+        QCOMPARE(cells(0), (QStringList{QStringLiteral("A-1"), QStringLiteral("on offer"), QStringLiteral("80.00"),
+                                        QStringLiteral("85.00 ▲"), QStringLiteral("70.00 ▼")}));
+        QCOMPARE(cells(3), (QStringList{QStringLiteral("=B-4"), QStringLiteral("closed"), QStringLiteral("110.00"),
+                                        QStringLiteral("110.00"), QStringLiteral("110.00")}));
+        const auto lines = readTable(model.csv());
+        QCOMPARE(lines[0], (QStringList{QStringLiteral("unit"), QStringLiteral("status"), QStringLiteral("current"),
+                                        QStringLiteral("Steeper"), QStringLiteral("Same bottom")}));
+        QCOMPARE(lines[4], (QStringList{QStringLiteral("'=B-4"), QStringLiteral("closed"), QStringLiteral("110.00"),
+                                        QStringLiteral("110.00"), QStringLiteral("110.00")}));
     }
 };
 

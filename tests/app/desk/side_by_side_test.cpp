@@ -6,8 +6,11 @@
 #include "refresh.h"
 #include "side_by_side_page.h"
 #include "side_by_side_plot.h"
+#include "table_text.h"
 
+#include <QCheckBox>
 #include <QClipboard>
+#include <QComboBox>
 #include <QGuiApplication>
 #include <QHeaderView>
 #include <QImage>
@@ -17,6 +20,7 @@
 #include <QPushButton>
 #include <QRadioButton>
 #include <QSignalSpy>
+#include <QSpinBox>
 #include <QStackedWidget>
 #include <QTableView>
 #include <QTemporaryDir>
@@ -296,7 +300,73 @@ private slots:
         QVERIFY(!QGuiApplication::clipboard()->image().isNull());
     }
 
+    void fourAreComparedAgainstOneByKeys()
+    {
+        m_document->begin(comparedScenario(), {}, true);
+        QCOMPARE(m_page->shownCandidates(), (Ladders{-1, 0, 1, 2}));
+        auto& against = child<QComboBox>("againstBox");
+        QCOMPARE(against.count(), 5);
+        against.setFocus();
+        QTest::keyClick(&against, Qt::Key_Down); // against the current ladder
+        QCOMPARE(cell("gap", 1), QStringLiteral("−7.50"));
+        QTest::keyClick(&child<QComboBox>("againstBox"), Qt::Key_Down); // against Lower end
+        QCOMPARE(cell("gap", 0), QStringLiteral("+7.50"));
+        QCOMPARE(cell("gap", 1), QStringLiteral("5.00"));
+        // It goes with its ladder, wherever that moves, and ends when the ladder goes.
+        table().setFocus();
+        table().setCurrentIndex(table().model()->index(0, 1));
+        QTest::keyClick(&table(), Qt::Key_Right, Qt::AltModifier);
+        QCOMPARE(cell("gap", 2), QStringLiteral("5.00"));
+        QCOMPARE(cell("gap", 0), QStringLiteral("+7.50"));
+        m_document->discardCandidate(0, 0);
+        QCOMPARE(against.currentIndex(), 0);
+        QCOMPARE(cell("gap", 0), QStringLiteral("12.50"));
+    }
+
+    void weightsAreSetByKeysAndRank()
+    {
+        m_document->begin(comparedScenario(), {}, true);
+        QCOMPARE(child<QLabel>("rankingLabel").text(), QStringLiteral("Set weights to rank the ladders."));
+        auto& gap = child<QSpinBox>("weightGapBox");
+        gap.setFocus();
+        QTest::keyClick(&gap, Qt::Key_Up);
+        QVERIFY2(child<QLabel>("rankingLabel").text().startsWith(QStringLiteral("1. Lower end (100), 1. Same bottom (100), 3. current")),
+                 qPrintable(child<QLabel>("rankingLabel").text()));
+        QVERIFY(gap.hasFocus());
+        QCOMPARE(cell("ranking", 1), QStringLiteral("1. with 100"));
+        QTest::keyClick(&gap, Qt::Key_Down);
+        QCOMPARE(child<QLabel>("rankingLabel").text(), QStringLiteral("Set weights to rank the ladders."));
+    }
+
+    void pricesByUnitAreShownAndLeaveWithTheCaution()
+    {
+        m_document->begin(comparedScenario(), {}, true);
+        auto& units = child<QTableView>("unitPricesTable");
+        QVERIFY(!units.isVisible());
+        QTest::mouseClick(&child<QCheckBox>("unitPricesBox"), Qt::LeftButton, {}, QPoint(8, 8));
+        QTRY_VERIFY(units.isVisible());
+        QVERIFY(!table().isVisible());
+        QCOMPARE(units.model()->index(0, 3).data().toString(), QStringLiteral("70.00 ▼")); // A-1 on Lower end
+        QSignalSpy told(m_page.get(), &SideBySidePage::told);
+        const QTemporaryDir folder;
+        m_answers.path = folder.filePath(QStringLiteral("prices"));
+        trigger("saveUnitPricesAction");
+        QCOMPARE(told.count(), 1);
+        QVERIFY(told.at(0).at(0).toString().contains(cautionText()));
+        const auto lines = readTable(content(folder.filePath(QStringLiteral("prices.csv"))));
+        QCOMPARE(lines.size(), std::size_t(5));
+        trigger("copyUnitPricesAction");
+        QVERIFY(QGuiApplication::clipboard()->text().contains(QStringLiteral("'=B-4")));
+        QVERIFY(told.at(1).at(0).toString().contains(cautionText()));
+    }
+
 private:
+    /// What a cell is copied as: without the mark of the best.
+    QString cell(const char* key, int column)
+    {
+        const auto& model = dynamic_cast<const SideBySideModel&>(*table().model());
+        return model.index(model.rowOf(key), column).data(kCopyRole).toString();
+    }
     template <class T>
     T& child(const char* name)
     {
