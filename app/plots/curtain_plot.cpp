@@ -136,7 +136,7 @@ void CurtainPlot::paintAbove(QPainter& painter)
     if (m_bench->tierCase()->tier.hasFloor() && floorY >= area().top() && floorY <= area().bottom())
         paintFloorLine(painter, area().left(), area().right(), floorY, look());
     const Qt::PenCapStyle cap = m_bench->worked().model == ModelKind::fitted ? Qt::FlatCap : Qt::SquareCap;
-    if (m_bench->candidate() >= 0)
+    if (m_bench->candidate() >= 0 || m_bench->gesture() == Workbench::Gesture::trial)
         m_current.paintLine(painter, QPen(look().trace, 1.2, Qt::SolidLine, cap, Qt::MiterJoin));
     m_worked.paintLine(painter, QPen(look().gapLine, 1.8, Qt::SolidLine, cap, Qt::MiterJoin));
     if (!m_label.isNull()) {

@@ -53,6 +53,8 @@ void LadderPlot::mousePressEvent(QMouseEvent* event)
         return;
     }
     event->accept();
+    if (m_bench->gesture() == Workbench::Gesture::trial)
+        emit told(tr("First keep what is tried (Enter), or give it up (Esc)."));
     if (m_bench->gesture() != Workbench::Gesture::none)
         return;
     m_hand = Hand::empty; // A release may have gone elsewhere.

@@ -67,6 +67,11 @@ void LadderPlot::keyPressEvent(QKeyEvent* event)
     const bool extend = modifiers == Qt::ShiftModifier;
     const bool control = modifiers == Qt::ControlModifier;
 
+    const bool enter = event->key() == Qt::Key_Return || event->key() == Qt::Key_Enter;
+    if (enter && m_bench->gesture() == Workbench::Gesture::trial) {
+        m_bench->finishGesture();
+        return;
+    }
     if (event->key() == Qt::Key_Escape) {
         if (m_hand == Hand::rubber) {
             m_rubber = QRectF();

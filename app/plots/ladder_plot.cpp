@@ -91,8 +91,7 @@ void LadderPlot::onReset()
         const auto any = [&tier](auto what) { return std::any_of(tier.units.begin(), tier.units.end(), what); };
         m_legend.setKey(any([](const Unit& u) { return u.status == Status::reserved; }),
                         any([](const Unit& u) { return u.status == Status::closed; }), any([](const Unit& u) { return u.locked; }));
-        m_legend.setLadders(priceAxisTitle(m_bench->currency()), isolated(m_bench->candidateName()),
-                            m_bench->candidate() >= 0 ? tr("current") : QString());
+        nameLadders();
         m_priceTicks->setCurrency(m_bench->currency());
         setPictureHeading(benchHeading(*m_bench));
     }
@@ -121,11 +120,21 @@ void LadderPlot::onGestureChanged()
     if (!shows())
         return;
     markMovers();
-    if (m_bench->gesture() == Workbench::Gesture::trial) // Today's ladder stays in sight, whatever is tried.
+    if (m_bench->gesture() == Workbench::Gesture::trial) { // Today's ladder stays in sight, whatever is tried.
         sortLadder(m_bench->tierCase()->tier.units, m_bench->currentPrices(), Among::all, m_behind);
+        nameLadders();
+        redrawAll();
+    }
     placeRungs();
     arrange(m_scene);
     marksChanged();
+}
+
+void LadderPlot::nameLadders()
+{
+    const bool trial = m_bench->gesture() == Workbench::Gesture::trial;
+    m_legend.setLadders(priceAxisTitle(m_bench->currency()), trial ? tr("trial") : isolated(m_bench->candidateName()),
+                        trial || m_bench->candidate() >= 0 ? tr("current") : QString());
 }
 
 void LadderPlot::markMovers()

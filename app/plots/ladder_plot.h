@@ -91,6 +91,7 @@ private:
     void onMoving();
     void onGestureChanged();
     void markMovers();
+    void nameLadders();
     void onSelectionChanged();
     void describe();
 

@@ -46,7 +46,8 @@ void LadderPlot::arrange(Scene& scene)
     LabelRoom room(area(), m_points, m_size.grip + 2);
     layOutBandLabels(scene, room);
     scene.handle = QPointF();
-    if (m_bendUnit >= 0 && area().height() > 120) {
+    const bool trial = m_bench->gesture() == Workbench::Gesture::trial; // Which is not bent.
+    if (m_bendUnit >= 0 && area().height() > 120 && !trial) {
         const QPointF rung = rungPosition(static_cast<std::uint32_t>(m_bendUnit));
         QPointF handle = rung + QPointF(-16, -26);
         if (handle.y() < area().top() + 10)

@@ -199,7 +199,7 @@ std::pair<double, double> ThinningPlot::heightsBetween(double from, double to) c
         }
     };
     see(m_worked);
-    if (m_bench->candidate() >= 0)
+    if (m_bench->candidate() >= 0 || m_bench->gesture() == Workbench::Gesture::trial)
         see(m_current);
     return {top, bottom};
 }
@@ -268,7 +268,7 @@ void ThinningPlot::paintAbove(QPainter& painter)
         return;
     painter.save();
     painter.setRenderHint(QPainter::Antialiasing, true);
-    if (m_bench->candidate() >= 0)
+    if (m_bench->candidate() >= 0 || m_bench->gesture() == Workbench::Gesture::trial)
         paintStretches(painter, m_current, m_currentStarts, QPen(look().trace, 1.2, Qt::SolidLine, Qt::FlatCap));
     paintStretches(painter, m_worked, m_workedStarts, QPen(look().gapLine, 1.8, Qt::SolidLine, Qt::FlatCap));
     if (!m_knob.isNull()) {

@@ -32,6 +32,7 @@ private slots:
 
     void draggingTheTargetSolvesLive();
     void escGivesUpAndKeepsNothing();
+    void theLadderWaitsForTheTrial();
     void aTargetOutOfReachSaysWhatBinds();
     void theTotalMayChangeOrBeFree();
     void aTierWithoutFloorSaysSo();
@@ -172,6 +173,22 @@ void ReshapeGuiTest::escGivesUpAndKeepsNothing()
     QCOMPARE(undo().count(), 0);
     // The slider stays where it was, so that one more step goes on from there.
     QVERIFY(slider.value() < slider.maximum());
+}
+
+void ReshapeGuiTest::theLadderWaitsForTheTrial()
+{
+    showLeastChange();
+    auto& slider = in<QSlider>(form(), "targetSlider");
+    for (int i = 0; i < 20; ++i)
+        QTest::keyClick(&slider, Qt::Key_Left);
+    const auto tried = worked();
+    const auto unit = desk().unitOnOffer(0);
+    DeskFixture::drag(desk().ladder(), desk().rung(unit), desk().rung(unit) + QPoint(0, 30));
+    QCOMPARE(worked(), tried);
+    QVERIFY(desk().child<QLabel>("lastAction").text().contains(QStringLiteral("keep what is tried")));
+    QTest::keyClick(&desk().ladder(), Qt::Key_Return);
+    QCOMPARE(undo().count(), 1);
+    QCOMPARE(bench().tierCase()->candidates.back().prices, tried);
 }
 
 void ReshapeGuiTest::aTargetOutOfReachSaysWhatBinds()

@@ -66,7 +66,7 @@ private slots:
         QSignalSpy chosen(&on.plot, &FrontierPlot::candidateChosen);
         const QPointF at = on.plot.placeOf(12);
         hoverTo(on.plot, at);
-        QVERIFY(on.plot.accessibleDescription().startsWith(QStringLiteral("gap 18.00 (26 %), typical change 14.40 a unit")));
+        QVERIFY(on.plot.accessibleDescription().startsWith(QStringLiteral("gap 18.00 (26\u00a0%), typical change 14.40 a unit")));
         press(on.plot, at);
         release(on.plot, at);
         QCOMPARE(taken.count(), 1);
