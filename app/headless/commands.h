@@ -18,6 +18,10 @@ ExitStatus sheet(const Request& request);
 /// The bench of one tier as PNG, SVG or PDF.
 ExitStatus picture(const Request& request);
 
+/// Least change of the chosen tiers under price rules: candidates in a scenario, or a price sheet. Tiers without a ladder as wished are
+/// told, each with its reason.
+ExitStatus reshape(const Request& request);
+
 struct Command {
     const char* word;
     const char* summary;

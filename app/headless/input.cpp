@@ -68,13 +68,9 @@ Outcome<Scenario> fromMappedList(const Request& request)
     const Outcome<MappingProfile> profile = loadMapping(request.mapping);
     if (!profile)
         return Trouble{profile.trouble()};
-    QFile file(request.file);
-    constexpr qint64 enoughToTell = 8192;
-    // A pipe is opened once only, by who reads it.
-    if (QFileInfo(request.file).isFile() && file.open(QIODevice::ReadOnly) && looksLikeScenario(file.peek(enoughToTell), request.file))
+    if (isScenarioFile(request.file))
         return trouble(
             QStringLiteral("%1: is a scenario, which is read as it is; --mapping is for a list of another system").arg(request.file));
-    file.close();
     MappedListResult mapped =
         loadMappedList(request.file, profile.value().mapping, request.floors, {request.currency, request.withoutBadRows});
     for (const QString& note : mapped.notes)
@@ -92,6 +88,13 @@ Outcome<Scenario> fromScenario(const QByteArray& bytes, const Request& request)
 }
 
 } // namespace
+
+bool isScenarioFile(const QString& path)
+{
+    QFile file(path);
+    constexpr qint64 enoughToTell = 8192;
+    return QFileInfo(path).isFile() && file.open(QIODevice::ReadOnly) && looksLikeScenario(file.peek(enoughToTell), path);
+}
 
 void sayColumnsNotUsed(const QString& file, const QStringList& columns)
 {

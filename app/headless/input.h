@@ -15,6 +15,9 @@ namespace rungwright
 /// A scenario has its own currency: another one in --currency is refused, since its prices are in minor units of the first.
 Outcome<Scenario> openInput(const Request& request);
 
+/// Whether a regular file holds a scenario, told from its beginning.
+bool isScenarioFile(const QString& path);
+
 /// The note on columns that a unit list has and the tool has no use for; none when there are none.
 void sayColumnsNotUsed(const QString& file, const QStringList& columns);
 

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "commands.h"
 
+#include "caution.h"
 #include "figures_list.h"
 #include "measure_text.h"
 #include "selection.h"
@@ -20,7 +21,10 @@ ExitStatus measure(const Request& request)
     const Currency& currency = scenario.currency;
     const auto written =
         writeToStandardOutput(request.json ? measurementsToJson(all, currency) : measurementsToText(all, currency, QLocale()).toUtf8());
-    return written ? ExitStatus::done : refuse(ExitStatus::cannotWrite, written.trouble());
+    if (!written)
+        return refuse(ExitStatus::cannotWrite, written.trouble());
+    say(cautionText());
+    return ExitStatus::done;
 }
 
 } // namespace rungwright

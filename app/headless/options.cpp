@@ -36,6 +36,16 @@ constexpr std::array kOptions{
     OptionText{"out", "FILE", "Where to write; scan without it writes to standard output."},
     OptionText{"threads", "N", "How many threads work at a time; without it as many as there are processors. The result is the same."},
     OptionText{"without-bad-rows", "", "Take a unit list without its refused rows."},
+    OptionText{"rules", "RULES", "Price rules (*.rules.json) in place of the scenario's own. A scenario made from a unit list keeps them."},
+    OptionText{"gap", "X", "Target: a disappointment gap of at most the amount X."},
+    OptionText{"gap-share", "P", "Target: a gap of at most P percent of the advertised floor."},
+    OptionText{"floor-met", "Q", "Target: the floor met by at least Q percent of enquirers."},
+    OptionText{"hold-total", "", "Keep the asking total of the units on offer. This is so unless another total is asked for."},
+    OptionText{"total-change", "P", "Change the asking total of the units on offer by P percent."},
+    OptionText{"free-total", "", "Let the asking total become what it likes within the rules."},
+    OptionText{"order", "ORDER", "Keep the 'present' order of prices, or 'grade' order; without it what the rules say."},
+    OptionText{"taken-stay", "", "Units that are not on offer keep their prices."},
+    OptionText{"sheet", "SHEET", "Write a price sheet (CSV) in place of a scenario."},
     OptionText{"mapping", "PROFILE", "Read FILE, a list of another system, as the saved import mapping PROFILE (*.mapping.json) says."},
     OptionText{"floors", "FLOORS", "The floors of a mapped list, where its mapping takes them from a file (site, tier, advertised_floor)."},
 };
@@ -191,6 +201,12 @@ Outcome<Request> readRequest(const Command& command, const QStringList& argument
         return trouble(command, QStringLiteral("--floors is for a mapped list: --mapping is missing"));
     if (const QString wrong = readValues(values, request); !wrong.isEmpty())
         return trouble(command, wrong);
+    if (command.run == reshape) {
+        const QString wrong = readReshapeWish([&](const char* name) { return values.text(name); },
+                                              [&](const char* name) { return values.flag(name); }, request.reshape);
+        if (!wrong.isEmpty())
+            return trouble(command, wrong);
+    }
     return request;
 }
 
@@ -211,7 +227,8 @@ QString helpText()
     for (const Command& command : commands())
         text += QStringLiteral("  %1  %2\n").arg(QLatin1String(command.word), -8).arg(QLatin1String(command.summary));
     text += QStringLiteral("\n"
-                           "Exit status: 0 done; 2 wrong usage; 3 input refused; 4 cannot write. Messages go to standard error.\n");
+                           "Exit status: 0 done; 2 wrong usage; 3 input refused; 4 cannot write; 5 some tiers have no ladder as wished\n"
+                           "(reshape). Messages go to standard error.\n");
     return text;
 }
 

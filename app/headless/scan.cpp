@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "commands.h"
 
+#include "caution.h"
 #include "fast_unit_list.h"
 #include "file_kind.h"
 #include "in_parallel.h"
@@ -94,7 +95,10 @@ ExitStatus scan(const Request& request)
     }
     const WriteUndisturbed undisturbed(QFile::encodeName(request.out).toStdString());
     const auto written = request.out.isEmpty() ? writeToStandardOutput(worklist->pieces()) : writeOut(request.out, worklist->pieces());
-    return written ? ExitStatus::done : refuse(ExitStatus::cannotWrite, written.trouble());
+    if (!written)
+        return refuse(ExitStatus::cannotWrite, written.trouble());
+    say(cautionText());
+    return ExitStatus::done;
 }
 
 } // namespace rungwright

@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "program.h"
 
+#include "caution.h"
+
 #include <QFile>
 #include <QProcess>
 
@@ -48,6 +50,8 @@ Ran runInShell(const QString& script, const QStringList& arguments)
     process.start(QStringLiteral("bash"), QStringList{QStringLiteral("-c"), script, QStringLiteral(RUNGWRIGHT_PROGRAM)} + arguments);
     return finished(process);
 }
+
+QByteArray caution() { return cautionText().toUtf8() + '\n'; }
 
 QString sample(const char* name) { return QStringLiteral(RUNGWRIGHT_SAMPLES "/") + QString::fromLatin1(name); }
 

@@ -21,6 +21,9 @@ Ran run(const QStringList& arguments, const QString& standardOutput = {});
 /// The same from a shell, with the program as "$0": `script` is bash, `arguments` are "$@".
 Ran runInShell(const QString& script, const QStringList& arguments);
 
+/// What a command that hands figures or prices out says last, on standard error.
+QByteArray caution();
+
 /// The path of a sample.
 QString sample(const char* name);
 
