@@ -154,6 +154,8 @@ void DeskActions::buildView(AppearanceKeeper* appearance)
                           [this] { m_window.showPortfolio(); });
     m_needScenario << add(menu, QStringLiteral("frontierAction"), tr("&Trade-off"), QKeySequence(tr("Ctrl+4")),
                           [this] { m_window.showTradeOff(); });
+    m_needScenario << add(menu, QStringLiteral("historyAction"), tr("&History"), QKeySequence(tr("Ctrl+6")),
+                          [this] { m_window.showHistory(); });
     menu->addSeparator();
     menu->addAction(m_window.worklistDock().toggleViewAction());
     menu->addAction(m_window.figuresDock().toggleViewAction());

@@ -28,6 +28,7 @@ QString keysText()
                 "Arrows: the next tier by gap share or lean. Space: pick it or let it go. Shift with an arrow: pick on the way.\n"
                 "Ctrl+1, Ctrl+2, Ctrl+3: bench, side by side, portfolio. Ctrl+R: refresh from a new list.\n"
                 "Ctrl+Shift+R: price rules.\n"
+                "Ctrl+6: history of the tier's sign-offs. In its plots Left, Right: the sign-off before, the next. F5: read again.\n"
                 "Every plot: right click to copy or save. Every table: right click or Ctrl+C to copy.");
 }
 

@@ -12,6 +12,7 @@
 #include "floor_question.h"
 #include "frontier_page.h"
 #include "help_texts.h"
+#include "history_page.h"
 #include "picture_file.h"
 #include "portfolio_page.h"
 #include "questions.h"
@@ -109,6 +110,10 @@ void MainWindow::buildPages()
     m_frontier = new FrontierPage(m_bench, m_questions);
     m_frontier->setObjectName(QStringLiteral("frontierPage"));
     m_pages->addTab(m_frontier, tr("Trade-off"));
+    m_history = new HistoryPage(m_bench, m_questions);
+    m_history->setObjectName(QStringLiteral("historyPage"));
+    m_pages->addTab(m_history, tr("History"));
+    connect(m_history, &HistoryPage::told, this, &MainWindow::tell);
     m_stack = new QStackedWidget;
     m_stack->addWidget(m_start);
     m_stack->addWidget(m_pages);
@@ -116,6 +121,12 @@ void MainWindow::buildPages()
 
     // Side by side has a table of the same figures for every ladder and needs the room.
     connect(m_pages, &QTabWidget::currentChanged, this, &MainWindow::showDocksForPage);
+
+    // The history shows figures of other days and needs the room, too.
+    connect(m_pages, &QTabWidget::currentChanged, this, [this] {
+        if (m_pages->currentWidget() == m_history)
+            m_figuresDock->hide();
+    });
 
     connect(m_start, &StartPage::importWanted, m_files, &FileFlow::askImport);
     connect(m_start, &StartPage::openWanted, m_files, &FileFlow::askOpen);
@@ -335,6 +346,8 @@ void MainWindow::showBench() { m_pages->setCurrentWidget(m_benchPage); }
 void MainWindow::showSideBySide() { m_pages->setCurrentWidget(m_sideBySide); }
 
 void MainWindow::showPortfolio() { m_pages->setCurrentWidget(m_portfolio); }
+
+void MainWindow::showHistory() { m_pages->setCurrentWidget(m_history); }
 
 void MainWindow::showTradeOff() { m_pages->setCurrentWidget(m_frontier); }
 

@@ -22,6 +22,7 @@ class AppearanceKeeper;
 class BenchPage;
 class DeskActions;
 class FiguresPanel;
+class HistoryPage;
 class FrontierPage;
 class Questions;
 class PortfolioPage;
@@ -57,6 +58,7 @@ public:
     void showBench();
     void showSideBySide();
     void showPortfolio();
+    void showHistory();
     void showTradeOff();
     void showLeastChange();
     void showShape();
@@ -97,6 +99,7 @@ private:
     BenchPage* m_benchPage = nullptr;
     SideBySidePage* m_sideBySide = nullptr;
     PortfolioPage* m_portfolio = nullptr;
+    HistoryPage* m_history = nullptr;
     FrontierPage* m_frontier = nullptr;
     WorklistPanel* m_worklist = nullptr;
     FiguresPanel* m_figures = nullptr;

@@ -102,11 +102,11 @@ private slots:
         QVERIFY(prices.accessibleDescription().contains(QStringLiteral("3 sign-offs")));
 
         // The latest is chosen, with its changes and checks.
-        auto& changes = desk.child<QTableView>("changesTable");
+        auto& changes = desk.child<QTableView>("historyChangesTable");
         QTRY_COMPARE(changes.model()->rowCount(), 4);
         QCOMPARE(cellOf(changes, 0, 0), QString::fromStdString(last.units[0].unit));
         QVERIFY(desk.child<QLabel>("entrySentence").text().contains(QStringLiteral("Cy Moor")));
-        auto& checks = desk.child<QTableView>("checksTable");
+        auto& checks = desk.child<QTableView>("historyChecksTable");
         QCOMPARE(checks.model()->rowCount(), 2);
         QVERIFY(cellOf(checks, 1, 0).contains(QStringLiteral("look at this")));
 
@@ -199,7 +199,7 @@ private slots:
         QVERIFY(recordAll(ledgerPathFor(desk.window->document().path()), {entryFor(desk.bench(), 3, 2, Price{500}, "Ada, \"Q\"")}));
         QTest::keyClick(desk.window.get(), Qt::Key_6, Qt::ControlModifier);
         QTRY_COMPARE(desk.child<QTableView>("signOffTable").model()->rowCount(), 1);
-        QTRY_COMPARE(desk.child<QTableView>("changesTable").model()->rowCount(), 2);
+        QTRY_COMPARE(desk.child<QTableView>("historyChangesTable").model()->rowCount(), 2);
         QVERIFY(desk.child<QLabel>("historyCaution").isVisible());
         QVERIFY(!desk.child<QLabel>("historyCaution").text().isEmpty());
         desk.questions.nextPath = desk.folder.filePath(QStringLiteral("list"));
@@ -227,8 +227,8 @@ private slots:
         QVERIFY(recordAll(ledgerPathFor(desk.window->document().path()), {entryFor(desk.bench(), 3, 2, Price{500}, "Ada")}));
         QTest::keyClick(desk.window.get(), Qt::Key_6, Qt::ControlModifier);
         QTRY_COMPARE(desk.child<QTableView>("signOffTable").model()->rowCount(), 1);
-        for (const char* name : {"pricesPlot", "gapPlot", "signOffTable", "changesTable", "checksTable", "lowestTable", "todayTable",
-                                 "unitChooser", "daysSpin"})
+        for (const char* name : {"pricesPlot", "gapPlot", "signOffTable", "historyChangesTable", "historyChecksTable", "lowestTable",
+                                 "todayTable", "unitChooser", "daysSpin"})
             QVERIFY2(!desk.child<QWidget>(name).accessibleName().isEmpty(), name);
         QStringList reached;
         desk.child<QWidget>("unitChooser").setFocus();
@@ -236,7 +236,7 @@ private slots:
             QTest::keyClick(desk.window->focusWidget(), Qt::Key_Tab);
             reached << desk.window->focusWidget()->objectName();
         }
-        for (const char* name : {"rereadButton", "historyExportButton", "pricesPlot", "gapPlot", "signOffTable", "changesTable"})
+        for (const char* name : {"rereadButton", "historyExportButton", "pricesPlot", "gapPlot", "signOffTable", "historyChangesTable"})
             QVERIFY2(reached.contains(QLatin1String(name)), qPrintable(QLatin1String(name) + QStringLiteral(": ") + reached.join(u' ')));
     }
 };
