@@ -1,11 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-// The worklist and the portfolio picture as a person uses them, at a handful and at hundreds of tiers.
-#include "app/session/invented_portfolio.h"
-#include "desk_fixture.h"
-#include "portfolio_plot.h"
+// The worklist as a person uses it, at a handful and at hundreds of tiers.
 #include "read_table.h"
-#include "refresh.h"
-#include "worklist_panel.h"
+#include "worklist_fixture.h"
 
 #include <QAbstractItemModelTester>
 #include <QClipboard>
@@ -16,17 +12,16 @@
 #include <QPushButton>
 #include <QScrollBar>
 #include <QSpinBox>
-#include <QTabWidget>
 #include <QToolButton>
 
 using namespace rungwright;
 
-class WorklistGuiTest : public QObject
+class WorklistGuiTest : public WorklistFixture
 {
     Q_OBJECT
 private slots:
-    void init() { m_desk = std::make_unique<DeskFixture>(); }
-    void cleanup() { m_desk.reset(); }
+    void init() { start(); }
+    void cleanup() { end(); }
 
     void modelIsSoundThroughEverything();
     void largeListsShowAtOnceAndFillIn();
@@ -40,32 +35,6 @@ private slots:
     void chosenColumnsAreRemembered();
     void exportIsWhatIsShown();
     void copiesCarryTheCaution();
-    void boxInThePortfolioFiltersAndEscClears();
-    void clickInThePortfolioOpensTheBench();
-    void aTierHiddenByTheFilterIsTheOneMarked();
-    void aRefreshSelectsWhatIsOnTheBench_data();
-    void aRefreshSelectsWhatIsOnTheBench();
-
-private:
-    DeskFixture& desk() { return *m_desk; }
-    MainWindow& window() { return *m_desk->window; }
-    Document& document() { return window().document(); }
-    WorklistPanel& panel() { return window().worklist(); }
-    WorklistModel& model() { return panel().model(); }
-    QTableView& table() { return panel().table(); }
-    void begin(int tiers, int units = 16)
-    {
-        const QString path = desk().folder.filePath(QStringLiteral("portfolio-%1.rungs.json").arg(tiers));
-        Document writer;
-        writer.begin(inventedPortfolio(tiers, units), {}, false);
-        QVERIFY(writer.saveTo(path).ok());
-        QVERIFY(desk().open(path));
-        QTRY_VERIFY(!model().list().measuring());
-        QCoreApplication::processEvents();
-    }
-    QPoint cell(int row, int column) { return table().visualRect(model().index(row, column)).center(); }
-    void key(Qt::Key k, Qt::KeyboardModifiers m = {}) { QTest::keyClick(&window(), k, m); }
-    std::unique_ptr<DeskFixture> m_desk;
 };
 
 void WorklistGuiTest::modelIsSoundThroughEverything()
@@ -372,133 +341,6 @@ void WorklistGuiTest::copiesCarryTheCaution()
     QVERIFY(lines[1].startsWith(model().index(0, 0).data().toString() + QLatin1Char('\t')));
     QVERIFY(lines[3].isEmpty());
     QVERIFY(lines[4].contains(QStringLiteral("regulated")) && !lines[4].contains(QLatin1Char('\t')));
-}
-
-void WorklistGuiTest::boxInThePortfolioFiltersAndEscClears()
-{
-    begin(150);
-    key(Qt::Key_3, Qt::ControlModifier);
-    auto& plot = desk().child<PortfolioPlot>("portfolioPlot");
-    QTRY_VERIFY(plot.isVisible());
-    QCoreApplication::processEvents();
-    const QPoint from = plot.area().topLeft().toPoint() + QPoint(2, 2);
-    const QPoint to = plot.area().center().toPoint();
-    DeskFixture::drag(plot, from, to);
-    const int picked = model().list().pickedCount();
-    QVERIFY(picked > 2 && picked < 150);
-    QCOMPARE(model().rowCount(), picked);
-    auto& chip = desk().child<QToolButton>("pickedChip");
-    QVERIFY(chip.isVisible());
-    QVERIFY(chip.text().contains(QString::number(picked)));
-    QTest::keyClick(&plot, Qt::Key_Escape);
-    QCOMPARE(model().rowCount(), 150);
-    QVERIFY(!chip.isVisible());
-    DeskFixture::drag(plot, from, to);
-    QCOMPARE(model().rowCount(), picked);
-    QTest::mouseClick(&chip, Qt::LeftButton);
-    QCOMPARE(model().rowCount(), 150);
-}
-
-void WorklistGuiTest::clickInThePortfolioOpensTheBench()
-{
-    begin(60);
-    key(Qt::Key_3, Qt::ControlModifier);
-    auto& plot = desk().child<PortfolioPlot>("portfolioPlot");
-    QTRY_VERIFY(plot.isVisible());
-    QCoreApplication::processEvents();
-    const int tier = plot.points().points[7].tier;
-    const QPoint at = plot.placeOf(tier).toPoint();
-    QTest::mouseMove(&plot, at);
-    QTest::mouseClick(&plot, Qt::LeftButton, {}, at);
-    // Another may lie nearer to that pixel; it is the one the picture names.
-    const int found = plot.points().points[static_cast<std::size_t>(plot.shape().nearest(at, 9))].tier;
-    QCOMPARE(desk().bench().tier(), found);
-    QCOMPARE(model().tierAt(table().currentIndex().row()), found);
-    QCOMPARE(desk().child<QTabWidget>("pages").currentWidget()->objectName(), QStringLiteral("benchPage"));
-}
-
-void WorklistGuiTest::aTierHiddenByTheFilterIsTheOneMarked()
-{
-    begin(60);
-    WorklistWish wish = model().wish();
-    wish.setWords(QStringLiteral("15"));
-    model().setWish(wish);
-    QVERIFY(model().rowCount() > 1 && model().rowCount() < 60);
-    const int shown = model().tierAt(0);
-    QTest::mouseClick(table().viewport(), Qt::LeftButton, {}, cell(0, WorklistModel::gapColumn));
-    QCOMPARE(desk().bench().tier(), shown);
-    key(Qt::Key_3, Qt::ControlModifier);
-    auto& plot = desk().child<PortfolioPlot>("portfolioPlot");
-    QTRY_VERIFY(plot.isVisible());
-    QCoreApplication::processEvents();
-    int hidden = -1;
-    for (const PortfolioPoint& p : plot.points().points) {
-        const int nearest = plot.shape().nearest(plot.placeOf(p.tier).toPoint(), 9);
-        if (model().rowOf({p.tier, 0}) < 0 && plot.points().points[static_cast<std::size_t>(nearest)].tier == p.tier)
-            hidden = p.tier;
-    }
-    QVERIFY(hidden >= 0);
-    QTest::mouseClick(&plot, Qt::LeftButton, {}, plot.placeOf(hidden).toPoint());
-    QCOMPARE(desk().bench().tier(), hidden);
-    QVERIFY(!table().currentIndex().isValid());
-    QVERIFY(panel().selectedTiers().empty());
-    key(Qt::Key_M, Qt::ControlModifier);
-    QVERIFY(document().tier(hidden)->seen);
-    QVERIFY(!document().tier(shown)->seen);
-    // The one that was selected can be had again by a click.
-    QTest::mouseClick(table().viewport(), Qt::LeftButton, {}, cell(0, WorklistModel::gapColumn));
-    QCOMPARE(desk().bench().tier(), shown);
-    // An edit of a hidden tier leads there too; and the keys go on from where they were.
-    document().setFloor(hidden, Price{1234});
-    QCOMPARE(desk().bench().tier(), hidden);
-    QVERIFY(panel().selectedTiers().empty());
-    key(Qt::Key_Down, Qt::AltModifier);
-    QCOMPARE(desk().bench().tier(), shown);
-    // While the bench stays with a hidden tier, a site that is selected stays so.
-    panel().setGrouped(true);
-    panel().foldAll(true);
-    QTest::mouseClick(table().viewport(), Qt::LeftButton, {}, cell(0, WorklistModel::gapColumn));
-    const std::vector<int> ofSite = panel().selectedTiers();
-    QVERIFY(!ofSite.empty());
-    desk().bench().setHoldTotal(!desk().bench().holdsTotal());
-    QCOMPARE(panel().selectedTiers(), ofSite);
-}
-
-void WorklistGuiTest::aRefreshSelectsWhatIsOnTheBench_data()
-{
-    QTest::addColumn<QString>("words");
-    QTest::addColumn<bool>("isShown");
-    QTest::newRow("all shown") << QString() << true;
-    QTest::newRow("shown by the filter") << QStringLiteral("3") << true;
-    QTest::newRow("hidden; the next tier is shown") << QStringLiteral("5") << false;
-}
-
-void WorklistGuiTest::aRefreshSelectsWhatIsOnTheBench()
-{
-    QFETCH(QString, words);
-    QFETCH(bool, isShown);
-    begin(8); // one site, Room 1 m² to Room 15 m²
-    WorklistWish wish = model().wish();
-    wish.setWords(words);
-    model().setWish(wish);
-    desk().bench().showTier(1); // Room 3 m²
-    QCOMPARE(model().rowOf({1, 0}) >= 0, isShown);
-    RefreshPlan plan;
-    plan.currency = document().scenario().currency;
-    plan.before = document().scenario().tiers;
-    for (std::size_t i = 1; i < plan.before.size(); ++i)
-        plan.after.push_back(plan.before[i]);
-    QVERIFY(document().refresh(plan, QStringLiteral("a.csv")));
-    for (const int tier : {0, 1, 0}) { // then undone, and done again
-        QCOMPARE(desk().bench().tier(), tier);
-        QCOMPARE(desk().bench().tierCase()->tier.name, std::string("Room 3 m²"));
-        QCOMPARE(table().currentIndex().isValid(), isShown);
-        QCOMPARE(panel().selectedTiers(), isShown ? std::vector{tier} : std::vector<int>());
-        if (tier == 0)
-            document().undoStack().undo();
-        else
-            document().undoStack().redo();
-    }
 }
 
 QTEST_MAIN(WorklistGuiTest)
