@@ -59,6 +59,10 @@ public:
 signals:
     /// A scenario is on the desk.
     void opened();
+    /// The first rows of a long list that is being read, to be brought in as a new scenario; `name` is the file's. Comes again and again.
+    void readingRows(const QString& name, const rungwright::ListSoFar& list);
+    /// No more of these: the list is on the desk, or nothing comes of it for now.
+    void readingOver();
     void recentChanged();
     /// A sentence for the status bar.
     void told(const QString& sentence);
@@ -85,7 +89,9 @@ private:
     // Lists.
     void bringIn(Intake intake);
     void showForm(Intake intake);
+    void showProposed(Intake intake);
     void read(Intake intake);
+    TellSoFar tellerFor(const Intake& intake);
     void listRead(Intake intake, ReadList list);
     void showRefused(Intake intake, const ReadList& list);
     /// False when the user gave up, or the list is being read once more.
@@ -106,6 +112,7 @@ private:
     SaveFlow m_saving;
     LongWork m_work;
     QPointer<QDialog> m_dialog;   ///< The question on the way that is open now.
+    int m_reading = 0;            ///< Which list is being read: what an earlier one tells late is dropped.
     std::uint64_t m_askedFor = 0; ///< The document's revision for which the user was asked about unsaved changes.
 };
 

@@ -42,6 +42,27 @@ void FileFlow::bringIn(Intake intake)
 
 void FileFlow::showForm(Intake intake)
 {
+    if (!intake.look.ownFormat || !intake.look.readable) {
+        showProposed(std::move(intake));
+        return;
+    }
+    // Of our own format, but something is wrong with it: nothing was proposed yet.
+    m_work.start<MappingProposal>(
+        tr("Looking at the columns of %1 …").arg(QFileInfo(intake.request.path).fileName()),
+        [sample = intake.look.sample](const LongWork::Progress&) { return proposeMapping(sample); },
+        [this, intake](std::optional<MappingProposal> proposal) mutable {
+            if (!proposal) {
+                giveUp();
+                return;
+            }
+            intake.look.proposal = std::move(*proposal);
+            intake.look.ownFormat = false;
+            showProposed(std::move(intake));
+        });
+}
+
+void FileFlow::showProposed(Intake intake)
+{
     ImportStart start;
     start.path = intake.request.path;
     start.sample = intake.look.sample;
@@ -69,13 +90,36 @@ void FileFlow::read(Intake intake)
 {
     m_work.start<ReadList>(
         tr("Reading %1 …").arg(QFileInfo(intake.request.path).fileName()),
-        [request = intake.request](const LongWork::Progress& progress) { return readList(request, progress); },
+        [request = intake.request, tell = tellerFor(intake)](const LongWork::Progress& progress) {
+            return readList(request, progress, tell);
+        },
         [this, intake](std::optional<ReadList> list) mutable {
+            ++m_reading;
+            // Where it comes onto the desk, its rows follow in the same place without a gap.
+            if (!list || !list->said.clean())
+                emit readingOver();
             if (list)
                 listRead(std::move(intake), std::move(*list));
             else
                 giveUp();
+            if (!m_work.busy())
+                emit readingOver();
         });
+}
+
+TellSoFar FileFlow::tellerFor(const Intake& intake)
+{
+    if (intake.purpose != Purpose::fresh)
+        return {};
+    return [this, reading = ++m_reading, name = QFileInfo(intake.request.path).fileName()](const ListSoFar& list) {
+        QMetaObject::invokeMethod(
+            this,
+            [this, reading, name, list] {
+                if (reading == m_reading)
+                    emit readingRows(name, list);
+            },
+            Qt::QueuedConnection);
+    };
 }
 
 void FileFlow::listRead(Intake intake, ReadList list)

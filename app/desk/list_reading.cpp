@@ -40,12 +40,12 @@ FirstLook lookAt(const QString& path)
     const bool wide = guess.encoding == TextEncoding::utf16le || guess.encoding == TextEncoding::utf16be;
     look.readable = !look.sample.bytes.trimmed().isEmpty() && (wide || !look.sample.bytes.contains('\0'));
     look.ownFormat = !look.readable || (utf8 && isOwnFormat(look.sample.bytes));
-    if (look.readable)
+    if (look.readable && !look.ownFormat)
         look.proposal = proposeMapping(look.sample);
     return look;
 }
 
-ReadList readList(const ListRequest& request, const Progress& progress)
+ReadList readList(const ListRequest& request, const Progress& progress, const TellSoFar& tell)
 {
     ReadList read;
     if (request.mapping) {
@@ -67,7 +67,7 @@ ReadList readList(const ListRequest& request, const Progress& progress)
         read.said = std::move(mapped.list);
         read.notes = std::move(mapped.notes);
     } else if (request.bytes.isEmpty()) {
-        read.said = loadUnitList(request.path, request.options, progress);
+        read.said = loadUnitList(request.path, request.options, progress, tell);
     } else {
         read.said = readUnitList(request.bytes, request.path, request.options, progress);
     }

@@ -2,6 +2,7 @@
 // What goes on off the window's thread when a file is brought in: looking at it, reading it. No widgets.
 #pragma once
 
+#include "list_so_far.h"
 #include "mapped_list.h"
 #include "mapping_propose.h"
 #include "scenario.h"
@@ -16,11 +17,11 @@ namespace rungwright
 /// A file looked at for the first time.
 struct FirstLook {
     bool isScenario = false;
-    bool ownFormat = false; ///< A unit list of our own format, plainly.
-    bool readable = true;   ///< False for what is no text at all: then the unit list reader has the words for it.
-    ListSample sample;      ///< Of a list.
-    MappingProposal proposal;
-    QString trouble; ///< Not empty: it cannot be read.
+    bool ownFormat = false;   ///< A unit list of our own format, plainly.
+    bool readable = true;     ///< False for what is no text at all: then the unit list reader has the words for it.
+    ListSample sample;        ///< Of a list.
+    MappingProposal proposal; ///< Of a list that is not of our own format; of one that is, proposeMapping() makes it once it is wanted.
+    QString trouble;          ///< Not empty: it cannot be read.
 };
 FirstLook lookAt(const QString& path);
 
@@ -42,7 +43,8 @@ struct ReadList {
     std::size_t tierCount = 0;
     QStringList notes; ///< What a mapping passed over, and the like.
 };
-ReadList readList(const ListRequest& request, const Progress& progress);
+/// `tell` hears of the rows of a long list while it is read, from the calling thread.
+ReadList readList(const ListRequest& request, const Progress& progress, const TellSoFar& tell = {});
 
 /// A scenario read from a file.
 struct ReadScenario {

@@ -16,6 +16,7 @@
 #include "picture_file.h"
 #include "portfolio_page.h"
 #include "questions.h"
+#include "reading_rows.h"
 #include "reshape_panel.h"
 #include "rules_dialog.h"
 #include "sheet_dialog.h"
@@ -29,6 +30,7 @@
 #include <QCoreApplication>
 #include <QDockWidget>
 #include <QFileInfo>
+#include <QElapsedTimer>
 #include <QMimeData>
 #include <QProgressBar>
 #include <QScreen>
@@ -36,6 +38,7 @@
 #include <QStatusBar>
 #include <QTabWidget>
 
+#include <QTimer>
 namespace rungwright
 {
 
@@ -67,6 +70,8 @@ MainWindow::MainWindow(Questions& questions, QSettings& settings, const QString&
 
     connect(m_files, &FileFlow::opened, this, &MainWindow::onOpened);
     connect(m_files, &FileFlow::told, this, &MainWindow::tell);
+    connect(m_files, &FileFlow::readingRows, this, &MainWindow::onReadingRows);
+    connect(m_files, &FileFlow::readingOver, this, &MainWindow::onReadingOver);
     connect(&m_files->saving(), &SaveFlow::writingChanged, this, [this](bool writing) {
         m_savingBar->setVisible(writing);
         showSaveState();
@@ -88,6 +93,12 @@ MainWindow::MainWindow(Questions& questions, QSettings& settings, const QString&
     showSaveState();
     showModelInUse();
 }
+    for (QWidget* part : {static_cast<QWidget*>(m_worklistDock), static_cast<QWidget*>(m_figuresDock), static_cast<QWidget*>(m_pages)}) {
+        m_toPolish.append(part);
+        for (QWidget* inner : part->findChildren<QWidget*>())
+            m_toPolish.append(inner);
+    }
+    QTimer::singleShot(0, this, &MainWindow::polishAhead);
 
 MainWindow::~MainWindow() = default;
 
@@ -167,6 +178,7 @@ void MainWindow::buildDocks()
     m_figures = new FiguresPanel(m_bench);
     m_figuresDock = new QDockWidget(tr("Figures"), this);
     m_figuresDock->setObjectName(QStringLiteral("figuresDock"));
+    m_readingRows = new ReadingRows(*m_worklist);
     m_figuresDock->setWidget(m_figures);
     addDockWidget(Qt::RightDockWidgetArea, m_figuresDock);
     m_reshape = new ReshapePanel(m_bench);
@@ -224,10 +236,40 @@ void MainWindow::onOpened()
 }
 
 void MainWindow::showWorst()
+    m_readingRows->end();
 {
     const int worst = m_tiers.worstTier();
     if (worst >= 0)
         m_bench.showTier(worst, m_document.tier(worst)->chosen.value_or(-1));
+}
+
+void MainWindow::onReadingRows(const QString& name, const ListSoFar& list)
+{
+    if (!m_worklistWanted)
+        return;
+    m_worklistDock->show();
+    m_readingRows->showRows(name, list);
+}
+
+void MainWindow::onReadingOver()
+{
+    m_readingRows->end();
+    if (m_document.empty())
+        m_worklistDock->hide(); // the start page has the window to itself again
+}
+
+/// Styling the bench takes longer than a few frames. It is done bit by bit while the start page is looked at, so that opening has not to.
+void MainWindow::polishAhead()
+{
+    constexpr int sliceMs = 4;
+    QElapsedTimer clock;
+    clock.start();
+    while (!m_toPolish.isEmpty() && clock.elapsed() < sliceMs) {
+        if (const QPointer<QWidget> next = m_toPolish.takeFirst())
+            next->ensurePolished();
+    }
+    if (!m_toPolish.isEmpty())
+        QTimer::singleShot(0, this, &MainWindow::polishAhead);
 }
 
 void MainWindow::tell(const QString& sentence)

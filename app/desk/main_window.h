@@ -26,6 +26,7 @@ class HistoryPage;
 class FrontierPage;
 class Questions;
 class PortfolioPage;
+class ReadingRows;
 class ReshapePanel;
 class SideBySidePage;
 class StartPage;
@@ -83,6 +84,9 @@ private:
     void onOpened();
     void showWorst();
     void showSaveState();
+    void onReadingRows(const QString& name, const ListSoFar& list);
+    void onReadingOver();
+    void polishAhead();
     void showModelInUse();
     void tell(const QString& sentence);
     void restoreLayout();
@@ -105,12 +109,14 @@ private:
     FiguresPanel* m_figures = nullptr;
     QDockWidget* m_worklistDock = nullptr;
     QDockWidget* m_figuresDock = nullptr;
+    ReadingRows* m_readingRows = nullptr;
     ReshapePanel* m_reshape = nullptr;
     QDockWidget* m_reshapeDock = nullptr;
     DeskActions* m_actions = nullptr;
     int m_undoIndex = 0;
     bool m_worstWanted = false; ///< The worst tier goes onto the bench as soon as it is known.
     bool m_worklistWanted = true;
+    QList<QPointer<QWidget>> m_toPolish; ///< What no one has seen yet.
     bool m_reshapeWanted = true;
     bool m_figuresWanted = true; ///< Whether the Figures stand beside the bench, which shows them.
     QLabel* m_lastAction = nullptr;

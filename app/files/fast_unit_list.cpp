@@ -8,6 +8,7 @@
 #include "plain_csv.h"
 
 #include <algorithm>
+#include <chrono>
 #include <optional>
 
 namespace rungwright
@@ -130,12 +131,39 @@ std::optional<Currency> settled(const std::optional<Currency>& named, const QStr
     return named ? *named : currency;
 }
 
+/// Tells of what is read: at once, and then a few times a second.
+class Teller
+{
+public:
+    explicit Teller(const FastSettings& settings) : m_settings(settings) {}
+
+    void look(const FastUnitList& list, double share)
+    {
+        if (!m_settings.tell || list.units.units() == 0 || !(share > 0 && share < 1))
+            return;
+        const auto now = Clock::now();
+        const double so = std::chrono::duration<double, std::milli>(now - m_start).count();
+        if (so < m_next || so * (1 - share) / share < m_settings.tellWhenLeftMs)
+            return;
+        m_next = so + kEveryMs;
+        m_settings.tell({list.currency, list.units.units(), list.units.tiers(), list.units.firstTiers(kTiersToldSoFar)});
+    }
+
+private:
+    using Clock = std::chrono::steady_clock;
+    static constexpr double kEveryMs = 100;
+    const FastSettings& m_settings;
+    Clock::time_point m_start = Clock::now();
+    double m_next = 0;
+};
+
 } // namespace
 
 FastEnd readFast(QIODevice& device, const UnitListOptions& options, KeepUnits keep, const FastSettings& settings, const Progress& progress,
                  FastUnitList& out)
 {
     const auto whole = static_cast<double>(std::max<qint64>(1, device.size()));
+    Teller teller(settings);
     Pieces pieces(device, settings.pieceSize);
     std::vector<char> first;
     std::size_t length = 0;
@@ -153,8 +181,10 @@ FastEnd readFast(QIODevice& device, const UnitListOptions& options, KeepUnits ke
     PieceReaders readers(*begin.header, *currency, keep, threadsFor(settings.threads), out.units);
     bool goesWell = readers.add(first, marked ? 3 : 0, length, PlainRows::Begins::withHeader);
     while (goesWell) {
-        if (progress && !progress(std::min(1.0, static_cast<double>(pieces.soFar()) / whole)))
+        const double share = std::min(1.0, static_cast<double>(pieces.soFar()) / whole);
+        if (progress && !progress(share))
             return FastEnd::cancelled;
+        teller.look(out, share);
         if (pieces.atEnd())
             break;
         std::vector<char>& next = readers.buffer();

@@ -3,6 +3,7 @@
 // it gives up, and the careful reader (unit_list.h) starts anew and finds the words for it.
 #pragma once
 
+#include "list_so_far.h"
 #include "unit_columns.h"
 #include "unit_list.h"
 
@@ -14,6 +15,8 @@ namespace rungwright
 struct FastSettings {
     unsigned threads = 0;               ///< 0: as many as the machine has.
     std::size_t pieceSize = 128 * 1024; ///< Bytes read at a time. Tests take few.
+    TellSoFar tell = {};                ///< Called by the calling thread.
+    int tellWhenLeftMs = 100;           ///< Only while about so much time is left at least.
 };
 
 /// A list that was read: what a UnitListResult says of the file as a whole, and the units, grouped by tier.

@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "unit_columns.h"
 
+#include "list_so_far.h"
+
 #include <algorithm>
 #include <bit>
 #include <cmath>
@@ -64,6 +66,15 @@ bool UnitColumns::group()
         place += kMostRows;
     }
     return m_rows > 0;
+}
+
+std::vector<TierSoFar> UnitColumns::firstTiers(std::size_t most) const
+{
+    std::vector<TierSoFar> first;
+    first.reserve(std::min(most, m_tiers.size()));
+    for (std::size_t i = 0; i < std::min(most, m_tiers.size()); ++i)
+        first.push_back({m_tiers[i].site, m_tiers[i].name, {m_tiers[i].floor}, m_tiers[i].units});
+    return first;
 }
 
 bool UnitColumns::namesDiffer(std::size_t tier, std::vector<std::uint64_t>& scratch) const

@@ -16,6 +16,8 @@
 namespace rungwright
 {
 
+struct TierSoFar;
+
 /// What of a list is kept. For figures alone a unit needs no name, only to be told from the others of its tier, and no area.
 enum class KeepUnits : unsigned char { whole, forFigures };
 
@@ -74,6 +76,8 @@ public:
 
     std::size_t tiers() const { return m_tiers.size(); }
     std::size_t units() const { return m_rows; }
+    /// The first tiers as far as they are appended, before or after group(). For the thread that appends.
+    std::vector<TierSoFar> firstTiers(std::size_t most) const;
     /// False when two units of the tier have the same name or, hardly ever, only names of the same hash. `scratch` is the caller's.
     bool namesDiffer(std::size_t tier, std::vector<std::uint64_t>& scratch) const;
     /// Puts the tier into `out`, whose storage is used again. Without names where none were kept.

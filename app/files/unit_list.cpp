@@ -3,6 +3,7 @@
 
 #include "csv_records.h"
 #include "fast_unit_list.h"
+#include "list_so_far.h"
 #include "unit_rows.h"
 #include "whole_file.h"
 #include "words.h"
@@ -137,12 +138,15 @@ UnitListResult readDevice(QIODevice& device, const QString& fileName, const Unit
 }
 
 /// The fast way where it goes, else the careful one, which then starts anew. What progress tells never goes back.
-UnitListResult readEitherWay(QIODevice& device, const QString& fileName, const UnitListOptions& options, const Progress& progress)
+UnitListResult readEitherWay(QIODevice& device, const QString& fileName, const UnitListOptions& options, const Progress& progress,
+                             const TellSoFar& tell = {})
 {
     double most = 0;
     const Progress forward = [&](double share) { return progress(most = std::max(most, share)); };
     UnitListResult result;
-    switch (readFastResult(device, options, {}, progress ? forward : Progress(), result)) {
+    FastSettings settings;
+    settings.tell = tell;
+    switch (readFastResult(device, options, settings, progress ? forward : Progress(), result)) {
     case FastEnd::done:
         return result;
     case FastEnd::cancelled:
@@ -186,6 +190,11 @@ UnitListResult readUnitListCarefully(const QByteArray& bytes, const QString& fil
 
 UnitListResult loadUnitList(const QString& path, const UnitListOptions& options, const Progress& progress)
 {
+    return loadUnitList(path, options, progress, {});
+}
+
+UnitListResult loadUnitList(const QString& path, const UnitListOptions& options, const Progress& progress, const TellSoFar& tell)
+{
     QFile file(path);
     if (QFileInfo(path).isDir() || !file.open(QIODevice::ReadOnly)) {
         UnitListResult result;
@@ -194,7 +203,7 @@ UnitListResult loadUnitList(const QString& path, const UnitListOptions& options,
         return result;
     }
     if (!file.isSequential())
-        return readEitherWay(file, path, options, progress);
+        return readEitherWay(file, path, options, progress, tell);
     // A pipe cannot be read twice, so it is kept, and a device that never ends is not waited for.
     const Outcome<QByteArray> bytes = readRest(file, kLargestPipe);
     if (bytes.ok())
