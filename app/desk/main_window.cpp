@@ -326,11 +326,23 @@ void MainWindow::showSheet(int candidate)
 
 void MainWindow::showRules()
 {
-    if (m_document.empty())
+    if (!m_bench.tierCase())
         return;
-    auto* dialog = new RulesDialog(m_document.scenario().rules, m_document.scenario().currency, this);
+    auto* dialog = new RulesDialog(m_document.scenario(), m_bench.tierCase()->tier, this);
     dialog->setAttribute(Qt::WA_DeleteOnClose);
-    connect(dialog, &QDialog::accepted, this, [this, dialog] { m_document.setRules(dialog->rules()); });
+    connect(dialog, &QDialog::accepted, this, [this, dialog] {
+        const auto changes = dialog->changes();
+        if (changes.size() > 1)
+            m_document.undoStack().beginMacro(tr("Change the price rules"));
+        for (const RulesDialog::Change& change : changes) {
+            if (change.rules)
+                m_document.setRules(change.scope, *change.rules);
+            else
+                m_document.dropRules(change.scope);
+        }
+        if (changes.size() > 1)
+            m_document.undoStack().endMacro();
+    });
     dialog->open();
 }
 
