@@ -154,6 +154,8 @@ void DeskActions::buildView(AppearanceKeeper* appearance)
                           [this] { m_window.showPortfolio(); });
     m_needScenario << add(menu, QStringLiteral("frontierAction"), tr("&Trade-off"), QKeySequence(tr("Ctrl+4")),
                           [this] { m_window.showTradeOff(); });
+    m_needScenario << add(menu, QStringLiteral("signOffAction"), tr("Sign-&off"), QKeySequence(tr("Ctrl+5")),
+                          [this] { m_window.showSignOff(); });
     m_needScenario << add(menu, QStringLiteral("historyAction"), tr("&History"), QKeySequence(tr("Ctrl+6")),
                           [this] { m_window.showHistory(); });
     menu->addSeparator();

@@ -26,7 +26,7 @@ QString keysText()
                 "tiers as seen. Ctrl+F: filter. Ctrl+G: group by site; Left, Right: fold and unfold a site.\n"
                 "In the portfolio: click a tier to work on it, drag a box to pick tiers for the worklist, Esc to show all again.\n"
                 "Arrows: the next tier by gap share or lean. Space: pick it or let it go. Shift with an arrow: pick on the way.\n"
-                "Ctrl+1, Ctrl+2, Ctrl+3: bench, side by side, portfolio. Ctrl+R: refresh from a new list.\n"
+                "Ctrl+1, Ctrl+2, Ctrl+3: bench, side by side, portfolio. Ctrl+5: sign-off. Ctrl+R: refresh from a new list.\n"
                 "Ctrl+Shift+R: price rules.\n"
                 "Ctrl+6: history of the tier's sign-offs. In its plots Left, Right: the sign-off before, the next. F5: read again.\n"
                 "Every plot: right click to copy or save. Every table: right click or Ctrl+C to copy.");

@@ -21,6 +21,7 @@
 #include "rules_dialog.h"
 #include "sheet_dialog.h"
 #include "side_by_side_page.h"
+#include "signoff_page.h"
 #include "start_page.h"
 #include "wording.h"
 #include "worklist_export_dialog.h"
@@ -111,13 +112,17 @@ void MainWindow::buildPages()
     m_pages->setDocumentMode(true);
     m_benchPage = new BenchPage(m_bench, m_questions);
     m_benchPage->setObjectName(QStringLiteral("benchPage"));
-    m_sideBySide = new SideBySidePage(m_bench, m_questions);
+    m_sideBySide = new SideBySidePage(m_bench, m_questions, &m_settings);
     m_sideBySide->setObjectName(QStringLiteral("sideBySidePage"));
     m_pages->addTab(m_benchPage, tr("Bench"));
     m_pages->addTab(m_sideBySide, tr("Side by side"));
     m_portfolio = new PortfolioPage(m_tiers, m_bench, m_questions);
     m_portfolio->setObjectName(QStringLiteral("portfolioPage"));
     m_pages->addTab(m_portfolio, tr("Portfolio"));
+    m_signOff = new SignOffPage(m_bench, m_questions, m_settings,
+                                [this] { return m_files->save() && m_files->saving().finishWriting(); });
+    m_signOff->setObjectName(QStringLiteral("signOffPage"));
+    m_pages->addTab(m_signOff, tr("Sign-off"));
     m_frontier = new FrontierPage(m_bench, m_questions);
     m_frontier->setObjectName(QStringLiteral("frontierPage"));
     m_pages->addTab(m_frontier, tr("Trade-off"));
@@ -130,7 +135,7 @@ void MainWindow::buildPages()
     m_stack->addWidget(m_pages);
     setCentralWidget(m_stack);
 
-    // Side by side has a table of the same figures for every ladder and needs the room.
+    // Side by side has a table of the same figures for every ladder, the sign-off its own; both need the room.
     connect(m_pages, &QTabWidget::currentChanged, this, &MainWindow::showDocksForPage);
 
     // The history shows figures of other days and needs the room, too.
@@ -146,6 +151,7 @@ void MainWindow::buildPages()
     connect(&m_benchPage->candidates(), &CandidatesPanel::sheetWanted, this, &MainWindow::showSheet);
     connect(m_sideBySide, &SideBySidePage::chosen, this, &MainWindow::showSheet);
     connect(m_portfolio, &PortfolioPage::told, this, &MainWindow::tell);
+    connect(m_signOff, &SignOffPage::told, this, &MainWindow::tell);
     connect(m_frontier, &FrontierPage::told, this, &MainWindow::tell);
     connect(m_portfolio, &PortfolioPage::thresholdsWanted, this, &MainWindow::showThresholds);
     connect(m_portfolio, &PortfolioPage::tierChosen, this, [this](int tier) {
@@ -156,7 +162,7 @@ void MainWindow::buildPages()
 
 void MainWindow::showDocksForPage()
 {
-    const bool beside = m_pages->currentWidget() == m_sideBySide;
+    const bool beside = m_pages->currentWidget() == m_sideBySide || m_pages->currentWidget() == m_signOff;
     m_figuresDock->setVisible(!beside && m_figuresWanted);
     // What is tried shows on the bench.
     m_reshapeDock->setVisible(m_pages->currentWidget() == m_benchPage && m_reshapeWanted);
@@ -419,6 +425,8 @@ void MainWindow::showShape()
     showLeastChange();
     m_reshape->showShape();
 }
+
+void MainWindow::showSignOff() { m_pages->setCurrentWidget(m_signOff); }
 
 void MainWindow::showThresholds()
 {

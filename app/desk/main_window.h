@@ -29,6 +29,7 @@ class PortfolioPage;
 class ReadingRows;
 class ReshapePanel;
 class SideBySidePage;
+class SignOffPage;
 class StartPage;
 class WorklistPanel;
 
@@ -59,6 +60,7 @@ public:
     void showBench();
     void showSideBySide();
     void showPortfolio();
+    void showSignOff();
     void showHistory();
     void showTradeOff();
     void showLeastChange();
@@ -103,6 +105,7 @@ private:
     BenchPage* m_benchPage = nullptr;
     SideBySidePage* m_sideBySide = nullptr;
     PortfolioPage* m_portfolio = nullptr;
+    SignOffPage* m_signOff = nullptr;
     HistoryPage* m_history = nullptr;
     FrontierPage* m_frontier = nullptr;
     WorklistPanel* m_worklist = nullptr;
