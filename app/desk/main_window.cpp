@@ -30,8 +30,8 @@
 #include <QCloseEvent>
 #include <QCoreApplication>
 #include <QDockWidget>
-#include <QFileInfo>
 #include <QElapsedTimer>
+#include <QFileInfo>
 #include <QMimeData>
 #include <QProgressBar>
 #include <QScreen>
@@ -94,12 +94,12 @@ MainWindow::MainWindow(Questions& questions, QSettings& settings, const QString&
     showSaveState();
     showModelInUse();
 }
-    for (QWidget* part : {static_cast<QWidget*>(m_worklistDock), static_cast<QWidget*>(m_figuresDock), static_cast<QWidget*>(m_pages)}) {
-        m_toPolish.append(part);
-        for (QWidget* inner : part->findChildren<QWidget*>())
-            m_toPolish.append(inner);
-    }
-    QTimer::singleShot(0, this, &MainWindow::polishAhead);
+for (QWidget* part : {static_cast<QWidget*>(m_worklistDock), static_cast<QWidget*>(m_figuresDock), static_cast<QWidget*>(m_pages)}) {
+    m_toPolish.append(part);
+    for (QWidget* inner : part->findChildren<QWidget*>())
+        m_toPolish.append(inner);
+}
+QTimer::singleShot(0, this, &MainWindow::polishAhead);
 
 MainWindow::~MainWindow() = default;
 
@@ -119,8 +119,7 @@ void MainWindow::buildPages()
     m_portfolio = new PortfolioPage(m_tiers, m_bench, m_questions);
     m_portfolio->setObjectName(QStringLiteral("portfolioPage"));
     m_pages->addTab(m_portfolio, tr("Portfolio"));
-    m_signOff = new SignOffPage(m_bench, m_questions, m_settings,
-                                [this] { return m_files->save() && m_files->saving().finishWriting(); });
+    m_signOff = new SignOffPage(m_bench, m_questions, m_settings, [this] { return m_files->save() && m_files->saving().finishWriting(); });
     m_signOff->setObjectName(QStringLiteral("signOffPage"));
     m_pages->addTab(m_signOff, tr("Sign-off"));
     m_frontier = new FrontierPage(m_bench, m_questions);
@@ -241,8 +240,7 @@ void MainWindow::onOpened()
     showSaveState();
 }
 
-void MainWindow::showWorst()
-    m_readingRows->end();
+void MainWindow::showWorst() m_readingRows->end();
 {
     const int worst = m_tiers.worstTier();
     if (worst >= 0)

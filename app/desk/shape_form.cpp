@@ -179,13 +179,10 @@ void ShapeForm::showLean(double lean)
 
 void ShapeForm::showChoices()
 {
-    m_ui->kindPages->setCurrentIndex(m_ui->kindBox->currentIndex());
-    // As high as the page that is shown, not as the highest of them.
-    for (int i = 0; i < m_ui->kindPages->count(); ++i) {
-        const bool shown = i == m_ui->kindPages->currentIndex();
-        m_ui->kindPages->widget(i)->setSizePolicy(QSizePolicy::Preferred, shown ? QSizePolicy::Maximum : QSizePolicy::Ignored);
-    }
-    m_ui->kindPages->updateGeometry();
+    m_ui->leanPage->setVisible(kind() == oneLean);
+    m_ui->betaPage->setVisible(kind() == twoWeights);
+    m_ui->evenPage->setVisible(kind() == evenSteps);
+    m_ui->stepsPage->setVisible(kind() == priceSteps);
     const bool ends = kind() != priceSteps;
     for (QWidget* widget : std::initializer_list<QWidget*>{m_ui->floorLabel, m_ui->floorSpin, m_ui->topLabel, m_ui->topSpin})
         widget->setVisible(ends);

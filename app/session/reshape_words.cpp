@@ -112,6 +112,8 @@ QStringList easingTexts(const LeastChangeAnswer& answer, const ChangeWish& wish,
             texts << reshapeTr("Without %1 it would be %2.").arg(phrase).arg(static_cast<int>(easing.reach));
         else if (answer.obstacle != Obstacle::target)
             continue;
+        else if (!share && easing.reach < 0.5 && easing.family != RuleFamily::total) // How far below the floor tells nobody anything.
+            texts << reshapeTr("Without %1 there need be no gap.").arg(phrase);
         else if (easing.family == RuleFamily::total)
             texts << (share ? reshapeTr("With the asking total free it could be %1.")
                             : reshapeTr("With the asking total free the gap could be %1."))
