@@ -38,8 +38,8 @@
 #include <QStackedWidget>
 #include <QStatusBar>
 #include <QTabWidget>
-
 #include <QTimer>
+
 namespace rungwright
 {
 
@@ -70,9 +70,9 @@ MainWindow::MainWindow(Questions& questions, QSettings& settings, const QString&
     m_actions = new DeskActions(*this, appearance);
 
     connect(m_files, &FileFlow::opened, this, &MainWindow::onOpened);
-    connect(m_files, &FileFlow::told, this, &MainWindow::tell);
     connect(m_files, &FileFlow::readingRows, this, &MainWindow::onReadingRows);
     connect(m_files, &FileFlow::readingOver, this, &MainWindow::onReadingOver);
+    connect(m_files, &FileFlow::told, this, &MainWindow::tell);
     connect(&m_files->saving(), &SaveFlow::writingChanged, this, [this](bool writing) {
         m_savingBar->setVisible(writing);
         showSaveState();
@@ -93,13 +93,13 @@ MainWindow::MainWindow(Questions& questions, QSettings& settings, const QString&
     restoreLayout();
     showSaveState();
     showModelInUse();
+    for (QWidget* part : {static_cast<QWidget*>(m_worklistDock), static_cast<QWidget*>(m_figuresDock), static_cast<QWidget*>(m_pages)}) {
+        m_toPolish.append(part);
+        for (QWidget* inner : part->findChildren<QWidget*>())
+            m_toPolish.append(inner);
+    }
+    QTimer::singleShot(0, this, &MainWindow::polishAhead);
 }
-for (QWidget* part : {static_cast<QWidget*>(m_worklistDock), static_cast<QWidget*>(m_figuresDock), static_cast<QWidget*>(m_pages)}) {
-    m_toPolish.append(part);
-    for (QWidget* inner : part->findChildren<QWidget*>())
-        m_toPolish.append(inner);
-}
-QTimer::singleShot(0, this, &MainWindow::polishAhead);
 
 MainWindow::~MainWindow() = default;
 
@@ -119,12 +119,13 @@ void MainWindow::buildPages()
     m_portfolio = new PortfolioPage(m_tiers, m_bench, m_questions);
     m_portfolio->setObjectName(QStringLiteral("portfolioPage"));
     m_pages->addTab(m_portfolio, tr("Portfolio"));
-    m_signOff = new SignOffPage(m_bench, m_questions, m_settings, [this] { return m_files->save() && m_files->saving().finishWriting(); });
-    m_signOff->setObjectName(QStringLiteral("signOffPage"));
-    m_pages->addTab(m_signOff, tr("Sign-off"));
     m_frontier = new FrontierPage(m_bench, m_questions);
     m_frontier->setObjectName(QStringLiteral("frontierPage"));
     m_pages->addTab(m_frontier, tr("Trade-off"));
+    m_signOff = new SignOffPage(m_bench, m_questions, m_settings,
+                                [this] { return m_files->save() && m_files->saving().finishWriting(); });
+    m_signOff->setObjectName(QStringLiteral("signOffPage"));
+    m_pages->addTab(m_signOff, tr("Sign-off"));
     m_history = new HistoryPage(m_bench, m_questions);
     m_history->setObjectName(QStringLiteral("historyPage"));
     m_pages->addTab(m_history, tr("History"));
@@ -141,6 +142,7 @@ void MainWindow::buildPages()
     connect(m_pages, &QTabWidget::currentChanged, this, [this] {
         if (m_pages->currentWidget() == m_history)
             m_figuresDock->hide();
+    m_reshapeDock->hide();
     });
 
     connect(m_start, &StartPage::importWanted, m_files, &FileFlow::askImport);
@@ -150,8 +152,8 @@ void MainWindow::buildPages()
     connect(&m_benchPage->candidates(), &CandidatesPanel::sheetWanted, this, &MainWindow::showSheet);
     connect(m_sideBySide, &SideBySidePage::chosen, this, &MainWindow::showSheet);
     connect(m_portfolio, &PortfolioPage::told, this, &MainWindow::tell);
-    connect(m_signOff, &SignOffPage::told, this, &MainWindow::tell);
     connect(m_frontier, &FrontierPage::told, this, &MainWindow::tell);
+    connect(m_signOff, &SignOffPage::told, this, &MainWindow::tell);
     connect(m_portfolio, &PortfolioPage::thresholdsWanted, this, &MainWindow::showThresholds);
     connect(m_portfolio, &PortfolioPage::tierChosen, this, [this](int tier) {
         m_bench.showTier(tier, m_document.tier(tier)->chosen.value_or(-1));
@@ -176,6 +178,7 @@ void MainWindow::buildDocks()
         if (std::exchange(m_worstWanted, false) && m_bench.tier() == 0 && !m_document.undoStack().canUndo())
             showWorst();
     });
+    m_readingRows = new ReadingRows(*m_worklist);
     m_worklistDock = new QDockWidget(tr("Worklist"), this);
     m_worklistDock->setObjectName(QStringLiteral("worklistDock"));
     m_worklistDock->setWidget(m_worklist);
@@ -183,7 +186,6 @@ void MainWindow::buildDocks()
     m_figures = new FiguresPanel(m_bench);
     m_figuresDock = new QDockWidget(tr("Figures"), this);
     m_figuresDock->setObjectName(QStringLiteral("figuresDock"));
-    m_readingRows = new ReadingRows(*m_worklist);
     m_figuresDock->setWidget(m_figures);
     addDockWidget(Qt::RightDockWidgetArea, m_figuresDock);
     m_reshape = new ReshapePanel(m_bench);
@@ -234,17 +236,11 @@ void MainWindow::onOpened()
     m_worklistDock->setVisible(m_worklistWanted);
     m_figuresDock->setVisible(m_figuresWanted);
     m_reshapeDock->setVisible(m_reshapeWanted);
+    m_readingRows->end();
     m_worstWanted = m_tiers.measuring(); // of a large list only then
     showWorst();
     tell(tr("%1 opened.").arg(m_document.displayName()));
     showSaveState();
-}
-
-void MainWindow::showWorst() m_readingRows->end();
-{
-    const int worst = m_tiers.worstTier();
-    if (worst >= 0)
-        m_bench.showTier(worst, m_document.tier(worst)->chosen.value_or(-1));
 }
 
 void MainWindow::onReadingRows(const QString& name, const ListSoFar& list)
@@ -274,6 +270,13 @@ void MainWindow::polishAhead()
     }
     if (!m_toPolish.isEmpty())
         QTimer::singleShot(0, this, &MainWindow::polishAhead);
+}
+
+void MainWindow::showWorst()
+{
+    const int worst = m_tiers.worstTier();
+    if (worst >= 0)
+        m_bench.showTier(worst, m_document.tier(worst)->chosen.value_or(-1));
 }
 
 void MainWindow::tell(const QString& sentence)
@@ -405,8 +408,6 @@ void MainWindow::showSideBySide() { m_pages->setCurrentWidget(m_sideBySide); }
 
 void MainWindow::showPortfolio() { m_pages->setCurrentWidget(m_portfolio); }
 
-void MainWindow::showHistory() { m_pages->setCurrentWidget(m_history); }
-
 void MainWindow::showTradeOff() { m_pages->setCurrentWidget(m_frontier); }
 
 void MainWindow::showLeastChange()
@@ -423,6 +424,8 @@ void MainWindow::showShape()
     showLeastChange();
     m_reshape->showShape();
 }
+
+void MainWindow::showHistory() { m_pages->setCurrentWidget(m_history); }
 
 void MainWindow::showSignOff() { m_pages->setCurrentWidget(m_signOff); }
 
@@ -478,7 +481,6 @@ void MainWindow::restoreLayout()
     // Nothing is open yet: the start page has the window to itself.
     m_worklistDock->hide();
     m_figuresDock->hide();
-    m_reshapeDock->hide();
 }
 
 void MainWindow::closeEvent(QCloseEvent* event)

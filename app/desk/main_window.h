@@ -22,8 +22,8 @@ class AppearanceKeeper;
 class BenchPage;
 class DeskActions;
 class FiguresPanel;
-class HistoryPage;
 class FrontierPage;
+class HistoryPage;
 class Questions;
 class PortfolioPage;
 class ReadingRows;
@@ -60,11 +60,11 @@ public:
     void showBench();
     void showSideBySide();
     void showPortfolio();
-    void showSignOff();
-    void showHistory();
     void showTradeOff();
     void showLeastChange();
     void showShape();
+    void showHistory();
+    void showSignOff();
     void showThresholds();
     void showWorklistExport();
     WorklistPanel& worklist() { return *m_worklist; }
@@ -84,11 +84,11 @@ private:
     void buildStatus();
     void showDocksForPage();
     void onOpened();
-    void showWorst();
-    void showSaveState();
     void onReadingRows(const QString& name, const ListSoFar& list);
     void onReadingOver();
     void polishAhead();
+    void showWorst();
+    void showSaveState();
     void showModelInUse();
     void tell(const QString& sentence);
     void restoreLayout();
@@ -105,21 +105,21 @@ private:
     BenchPage* m_benchPage = nullptr;
     SideBySidePage* m_sideBySide = nullptr;
     PortfolioPage* m_portfolio = nullptr;
-    SignOffPage* m_signOff = nullptr;
-    HistoryPage* m_history = nullptr;
     FrontierPage* m_frontier = nullptr;
+    HistoryPage* m_history = nullptr;
+    SignOffPage* m_signOff = nullptr;
     WorklistPanel* m_worklist = nullptr;
+    ReadingRows* m_readingRows = nullptr;
     FiguresPanel* m_figures = nullptr;
     QDockWidget* m_worklistDock = nullptr;
     QDockWidget* m_figuresDock = nullptr;
-    ReadingRows* m_readingRows = nullptr;
     ReshapePanel* m_reshape = nullptr;
     QDockWidget* m_reshapeDock = nullptr;
     DeskActions* m_actions = nullptr;
+    QList<QPointer<QWidget>> m_toPolish; ///< What no one has seen yet.
     int m_undoIndex = 0;
     bool m_worstWanted = false; ///< The worst tier goes onto the bench as soon as it is known.
     bool m_worklistWanted = true;
-    QList<QPointer<QWidget>> m_toPolish; ///< What no one has seen yet.
     bool m_reshapeWanted = true;
     bool m_figuresWanted = true; ///< Whether the Figures stand beside the bench, which shows them.
     QLabel* m_lastAction = nullptr;
