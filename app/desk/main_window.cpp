@@ -142,7 +142,6 @@ void MainWindow::buildPages()
     connect(m_pages, &QTabWidget::currentChanged, this, [this] {
         if (m_pages->currentWidget() == m_history)
             m_figuresDock->hide();
-    m_reshapeDock->hide();
     });
 
     connect(m_start, &StartPage::importWanted, m_files, &FileFlow::askImport);
@@ -481,6 +480,7 @@ void MainWindow::restoreLayout()
     // Nothing is open yet: the start page has the window to itself.
     m_worklistDock->hide();
     m_figuresDock->hide();
+    m_reshapeDock->hide();
 }
 
 void MainWindow::closeEvent(QCloseEvent* event)

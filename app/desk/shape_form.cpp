@@ -55,9 +55,8 @@ void ShapeForm::connectFields()
     };
     connect(m_ui->kindBox, &QComboBox::currentIndexChanged, this, [this] {
         showChoices();
-        // Price steps have to be written down first.
-        if (!m_showing && (kind() != priceSteps || readSteps().ok()))
-            tryNow();
+        if (!m_showing)
+            tryNow(); // steps that are not written down yet are asked for
     });
     connect(m_ui->leanSlider, &QSlider::valueChanged, this, [this](int place) {
         if (m_showing)
