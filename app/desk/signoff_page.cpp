@@ -39,8 +39,10 @@ SignOffPage::SignOffPage(Workbench& bench, Questions& questions, QSettings& sett
     m_ui->setupUi(this);
     m_ui->signOffCaution->setText(cautionText());
     m_ui->signOffResult->hide();
-    m_ui->signOffSplitter->setStretchFactor(0, 6);
-    m_ui->signOffSplitter->setStretchFactor(1, 5);
+    m_ui->signOffSplitter->setStretchFactor(0, 1);
+    m_ui->signOffSplitter->setStretchFactor(1, 1);
+    m_ui->claimsArea->setMinimumWidth(fontMetrics().averageCharWidth() * 54); // nothing in it is cut
+    m_ui->signOffSplitter->setSizes({520, 480});
     prepareTable();
     prepareChecks();
     preparePlaces();

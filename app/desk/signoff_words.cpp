@@ -228,7 +228,7 @@ QString SignOffWords::keySentence(const SignOffCase& c)
         c.change.askingTotal
             ? tr("the asking total on offer changes by %1").arg(signedMoneyText(inMinor(*c.change.askingTotal), c.currency))
             : tr("nothing is on offer");
-    return tr("%1 %2 of %3 units get a new price; %4.")
+    return tr("%1 New prices for %2 of %3 units; %4.")
         .arg(gap, wholeNumber(c.change.unitsChanged), wholeNumber(c.tier.units.size()),
              c.change.askingTotal == Price{} ? tr("the asking total on offer stays") : total);
 }

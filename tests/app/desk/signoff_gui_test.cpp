@@ -102,7 +102,7 @@ void SignOffGuiTest::theChosenLadderIsShown()
     // By hand, see compared_tier.h: 12.50 to 5.00; A-1 from 80.00 to 70.00 is the one change.
     QCOMPARE(
         m_desk->child<QLabel>("keySentence").text(),
-        QStringLiteral("The gap narrows from 12.50 to 5.00. 1 of 4 units get a new price; the asking total on offer changes by −10.00."));
+        QStringLiteral("The gap narrows from 12.50 to 5.00. New prices for 1 of 4 units; the asking total on offer changes by −10.00."));
     m_desk->window->document().chooseCandidate(0, 1);
     QTRY_COMPARE(page().shown()->ladder, QStringLiteral("Steeper"));
 }
