@@ -126,7 +126,7 @@ void RulesDialog::showScope(int at)
     const auto index = static_cast<std::size_t>(at);
     const bool own = m_drafts[index].now.has_value();
     m_ui->ownBox->setChecked(own);
-    m_ui->ownBox->setEnabled(at > 0); // The scenario always has some.
+    m_ui->ownBox->setVisible(at > 0); // The scenario always has some.
     fill(*m_drafts[static_cast<std::size_t>(inForceAt(at))].now);
     for (const Field& field : m_fields)
         field.edit->setEnabled(own);
