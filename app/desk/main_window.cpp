@@ -122,8 +122,7 @@ void MainWindow::buildPages()
     m_frontier = new FrontierPage(m_bench, m_questions);
     m_frontier->setObjectName(QStringLiteral("frontierPage"));
     m_pages->addTab(m_frontier, tr("Trade-off"));
-    m_signOff = new SignOffPage(m_bench, m_questions, m_settings,
-                                [this] { return m_files->save() && m_files->saving().finishWriting(); });
+    m_signOff = new SignOffPage(m_bench, m_questions, m_settings, [this] { return m_files->save() && m_files->saving().finishWriting(); });
     m_signOff->setObjectName(QStringLiteral("signOffPage"));
     m_pages->addTab(m_signOff, tr("Sign-off"));
     m_history = new HistoryPage(m_bench, m_questions);
