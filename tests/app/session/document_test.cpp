@@ -20,6 +20,7 @@ class DocumentTest : public QObject
 private slots:
     void firstEditOfTheCurrentLadderMakesACandidate();
     void everyEditIsOneStep();
+    void rulesOfAScopeAreSteps();
     void marksFloorsAndSheetsAreSteps();
     void aRefreshTakesThePlansTiersWhileTheyFit();
     void fortyStepsAreUndoneToTheByte();
@@ -83,6 +84,39 @@ void DocumentTest::everyEditIsOneStep()
     document.setRules(rules);
     document.chooseCandidate(0, 0);
     QCOMPARE(document.undoStack().count(), 9);
+}
+
+void DocumentTest::rulesOfAScopeAreSteps()
+{
+    Document document;
+    document.begin(inventedScenario(), {}, true);
+    QList<QByteArray> states{scenarioToJson(document.scenario())};
+    connect(&document, &Document::changed, this, [&](const DocumentChange& change) {
+        QVERIFY(change.kind == DocumentChange::Kind::rules);
+        states << scenarioToJson(document.scenario());
+    });
+    const Tier& tier = document.tier(0)->tier;
+    const RuleScope site{tier.site, {}};
+    const RuleScope own{tier.site, tier.name};
+    PriceRules rules;
+    rules.ceiling = Price{20000};
+    document.setRules(site, rules);
+    QVERIFY(rulesFor(document.scenario(), tier) == rules);
+    rules.leastShareAtFloor = 0.1;
+    document.setRules(own, rules);
+    document.setRules(own, rules); // changes nothing
+    QVERIFY(rulesFor(document.scenario(), tier) == rules);
+    document.dropRules(site);
+    document.dropRules(site); // nothing left to drop
+    QVERIFY(rulesFor(document.scenario(), tier) == rules);
+    document.dropRules(own);
+    QCOMPARE(document.undoStack().count(), 4);
+    QCOMPARE(states.last(), states.first());
+    for (int step = 3; step >= 0; --step) {
+        const QByteArray wanted = states.at(step);
+        document.undoStack().undo();
+        QCOMPARE(scenarioToJson(document.scenario()), wanted);
+    }
 }
 
 void DocumentTest::marksFloorsAndSheetsAreSteps()
