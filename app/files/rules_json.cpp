@@ -185,7 +185,12 @@ Outcome<RuleSet> rulesFromJson(const QByteArray& json, const QString& fileName, 
     const QJsonObject object = document.object();
     if (!document.isObject() || object.value(RuleKey("format")).toString() != RuleKey("rungwright-rules"))
         return refused(Words::tr("%1: this is not a file of price rules: it lacks \"format\": \"rungwright-rules\"").arg(fileName));
-    if (const QJsonValue version = object.value(RuleKey("version")); version != QJsonValue(kRulesVersion))
+    const QJsonValue version = object.value(RuleKey("version"));
+    if (version.isDouble() && version.toDouble() > kRulesVersion)
+        return refused(
+            Words::tr("%1: the rules are of format version %2, and this program knows versions up to %3. Open them with a newer Rungwright")
+                .arg(fileName, shownValue(version), QString::number(kRulesVersion)));
+    if (version != QJsonValue(kRulesVersion))
         return refused(Words::tr("%1: version: not a version this program knows; found %2; wanted: %3")
                            .arg(fileName, shownValue(version), QString::number(kRulesVersion)));
     JsonTrouble trouble;

@@ -40,8 +40,9 @@ std::optional<ExitStatus> refuseTarget(const Request& request, bool isScenario)
     if (sameFile(request.file, target))
         return request.out.isEmpty() || !isScenario ? std::optional(overwrites("FILE")) : std::nullopt;
     // Another scenario may hold work that nobody meant to give away.
-    if (!request.out.isEmpty() && isScenarioFile(target))
-        return overwrites("another scenario; name a new file, or give that scenario as FILE");
+    if (isScenarioFile(target))
+        return overwrites(request.out.isEmpty() ? "a scenario; name a new file"
+                                                : "another scenario; name a new file, or give that scenario as FILE");
     return std::nullopt;
 }
 
@@ -52,7 +53,7 @@ std::string freeName(const TierCase& tierCase, const QString& wanted)
     };
     std::string name = wanted.toStdString();
     for (int n = 2; taken(name); ++n)
-        name = QStringLiteral("%1 %2").arg(wanted).arg(n).toStdString();
+        name = QStringLiteral("%1 %2").arg(wanted, QString::number(n)).toStdString();
     return name;
 }
 
@@ -100,9 +101,12 @@ public:
         }
         if (!answer.targetMet || answer.totalMiss != Price{0})
             tell(tier, roundingText(answer, currency));
-        // What is less than a step of the total no price points could give.
-        const Price miss = std::max(answer.totalMiss, -answer.totalMiss);
-        tally.missed += !answer.targetMet || miss >= rules.points.step ? 1 : 0;
+        const bool misses = !answer.targetMet || missesTotal(tier, rules, answer);
+        if (misses && answer.changed == 0) {
+            ++tally.without;
+            return;
+        }
+        tally.missed += misses ? 1 : 0;
         if (answer.changed == 0) {
             ++tally.unchanged;
             m_done.push_back({at, -1});
@@ -133,6 +137,20 @@ private:
         std::size_t tier;
         int candidate; ///< -1: nothing had to change.
     };
+
+    /// A wished total may be missed by less than a step of the price points, which could not give it; a rule may not be broken by that
+    /// either.
+    static bool missesTotal(const Tier& tier, const PriceRules& rules, const LeastChangeAnswer& answer)
+    {
+        Price today;
+        for (const Unit& unit : tier.units) {
+            if (unit.status == Status::vacant)
+                today += unit.asking;
+        }
+        const auto room = totalRoomOf(today, rules);
+        const Price miss = std::max(answer.totalMiss, -answer.totalMiss);
+        return miss >= rules.points.step || (room && (answer.total < room->least || answer.total > room->most));
+    }
 
     static void tell(const Tier& tier, const QString& sentence)
     {
@@ -179,6 +197,20 @@ ExitStatus reshape(const Request& request)
         }
     }
 
+    // A misspelt name would bind nothing, and nobody would know.
+    if (rules) {
+        for (const OwnRules& own : rules->ownRules) {
+            const bool known = std::ranges::any_of(std::as_const(scenario.tiers), [&](const TierCase& one) {
+                return one.tier.site == own.scope.site && (own.scope.tier.empty() || one.tier.name == own.scope.tier);
+            });
+            if (!known)
+                say(QStringLiteral("%1: the rules of '%2' bind nothing: there is no such %3 in %4")
+                        .arg(request.reshape.rules,
+                             utf8Text(own.scope.tier.empty() ? own.scope.site : own.scope.site + " / " + own.scope.tier),
+                             own.scope.tier.empty() ? QStringLiteral("site") : QStringLiteral("tier"), request.file));
+        }
+    }
+
     Reshaping reshaping(request, scenario, rules ? &*rules : nullptr, target.value());
     // The ladders point into the tiers, in their order.
     std::size_t at = 0;
@@ -196,13 +228,10 @@ ExitStatus reshape(const Request& request)
                       QStringLiteral("%1: not written, for no tier has a ladder as wished").arg(file).toStdString());
     if (const Outcome<bool> written = reshaping.write(); !written)
         return refuse(ExitStatus::cannotWrite, written.trouble());
-    QString said = QStringLiteral("%1: %2 tiers reshaped, %3 already as wished, %4 without a ladder as wished")
-                       .arg(file)
-                       .arg(tally.reshaped)
-                       .arg(tally.unchanged)
-                       .arg(tally.without);
+    QString said = QStringLiteral("%1: tiers reshaped: %2, already as wished: %3, without a ladder as wished: %4")
+                       .arg(file, QString::number(tally.reshaped), QString::number(tally.unchanged), QString::number(tally.without));
     if (tally.missed > 0)
-        said += QStringLiteral(", %1 that miss it on the price points").arg(tally.missed);
+        said += QStringLiteral(", reshaped but missing it on the price points: %1").arg(tally.missed);
     say(said);
     say(cautionText());
     return incomplete ? ExitStatus::tiersWithout : ExitStatus::done;

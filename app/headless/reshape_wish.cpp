@@ -96,8 +96,10 @@ QString readReshapeWish(const OptionValue& text, const OptionFlag& flag, Reshape
         wish.order = *typed == QLatin1String("grade") ? OrderKept::grade : OrderKept::present;
     }
     wish.takenStay = flag("taken-stay");
-    if (!wish.gap && wish.target.kind == TargetKind::none && wish.total.changePercent == 0 && wish.order != OrderKept::grade)
-        return QStringLiteral("nothing is wished for: give a target (--gap, --gap-share or --floor-met), --total-change or --order grade");
+    if (!wish.gap && wish.target.kind == TargetKind::none && wish.total.changePercent == 0 && wish.order != OrderKept::grade &&
+        wish.rules.isEmpty())
+        return QStringLiteral(
+            "nothing is wished for: give a target (--gap, --gap-share or --floor-met), --total-change, --order or --rules");
     return {};
 }
 

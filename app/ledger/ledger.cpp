@@ -91,8 +91,8 @@ Outcome<Ledger> Ledger::open(const QString& path, For use, int wait)
     bool connected = connection->connectTo(path, use == For::reading ? patience + QStringLiteral(";QSQLITE_OPEN_READONLY") : patience);
     Outcome<bool> known =
         connected ? connection->recognize() : Outcome<bool>(connection->trouble(connection->database.lastError(), LedgerAct::opening));
-    // SQLite wants to write a little beside the file even to read it. Where that is not allowed and nobody else can be writing, the file
-    // is read as it stands.
+    // SQLite wants to write a little beside the file even to read it. Where that is not allowed, the file is read as it stands
+    // at this moment: somebody with more rights may go on writing, and is not waited for.
     if (!known.ok() && use == For::reading && !folder.isWritable() && QFileInfo(path + QStringLiteral("-wal")).size() == 0) {
         const QString url = QString::fromLatin1(QUrl::fromLocalFile(file.absoluteFilePath()).toEncoded()) + QStringLiteral("?immutable=1");
         connected = connection->connectTo(url, QStringLiteral("QSQLITE_OPEN_READONLY;QSQLITE_OPEN_URI"));
@@ -248,6 +248,8 @@ Outcome<bool> Ledger::check() const
             if (said != QStringLiteral("ok"))
                 return Trouble{LedgerWords::tr("%1: is damaged: %2").arg(path(), said).toStdString()};
         }
+        if (query.lastError().isValid())
+            return m_connection->trouble(query.lastError(), LedgerAct::reading);
     }
     return true;
 }

@@ -17,7 +17,7 @@ namespace rungwright
 {
 
 /// Where the ledger of a scenario file is: "north.rungs.json" -> "north.ledger.sqlite" in the same folder. Empty for a scenario that has
-/// no file of its own yet (no path, or one inside the program).
+/// no file of its own yet (no path, or one inside the program). "north.json" and "north.rungs.json" in one folder share a ledger.
 QString ledgerPathFor(const QString& scenarioPath);
 
 /// A sign-off in one line. Instants are milliseconds since 1970-01-01T00:00:00Z.
@@ -73,7 +73,7 @@ struct PriorWindow {
 struct LowestAsked {
     std::string unit;
     std::optional<Price> lowest; ///< Nothing when nothing is known of the window.
-    std::int64_t seen = 0;       ///< The sign-off that first shows it within the window: its id.
+    std::int64_t seen = 0;       ///< A sign-off that shows it within the window: its id.
     bool whole = false;          ///< Known from the window's start on; else only from the first sign-off in it.
     bool operator==(const LowestAsked&) const = default;
 };
@@ -86,7 +86,8 @@ struct LowestOfTier {
 
 /// An open ledger. Belongs to the thread that opened it; another thread or window opens one of its own on the same file: readers never
 /// wait, and writers wait up to five seconds for each other. What goes wrong is told with the path, the reason and a remedy; a failed
-/// call leaves the file as it was. Needs a QCoreApplication.
+/// call leaves the file as it was. In a folder that may only be read, it shows what was there when it was opened. On a network drive, one
+/// machine at a time: SQLite's log is shared by memory. Needs a QCoreApplication.
 class Ledger
 {
 public:

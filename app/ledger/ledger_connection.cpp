@@ -143,6 +143,10 @@ Outcome<bool> Ledger::Connection::recognize()
     if (application.value() != kLedgerApplication)
         return say(LedgerWords::tr("is a database of another program, not a price ledger. Nothing was changed. Move it aside, or save the "
                                    "scenario under another name"));
+    if (form.value() < 1)
+        return say(LedgerWords::tr("is damaged: there is no form %1 of a ledger. Nothing was changed. Move it aside, and put your latest "
+                                   "backup in its place")
+                       .arg(form.value()));
     if (form.value() > newestLedgerForm())
         return say(LedgerWords::tr("was written by a newer Rungwright (form %1; this one knows up to %2). Nothing was changed. Open it "
                                    "with the newer one, or update this one")

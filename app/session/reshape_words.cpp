@@ -156,7 +156,8 @@ QString roundingText(const LeastChangeAnswer& answer, const Currency& currency, 
     else if (answer.cost > 0 && answer.leastCost <= 0)
         said << reshapeTr("Only the price points ask for these changes.");
     else if (answer.changed > 0)
-        said << reshapeTr("Rounding to price points costs nothing.");
+        said << (answer.cost <= answer.leastCost * (1 + 1e-9) ? reshapeTr("Rounding to price points costs nothing.")
+                                                              : reshapeTr("Rounding to price points costs next to nothing."));
     if (!answer.targetMet)
         said << reshapeTr("The price points leave the target just out of reach.");
     if (answer.totalMiss != Price{})

@@ -282,7 +282,7 @@ void Workbench::leftTo(int left)
 
 bool Workbench::beginTrial(const QString& name)
 {
-    if (!tierCase())
+    if (!tierCase() || (m_gesture != Gesture::none && m_gesture != Gesture::trial))
         return false;
     m_trialName = name;
     return m_gesture == Gesture::trial || startGesture(Gesture::trial, {});
@@ -290,9 +290,9 @@ bool Workbench::beginTrial(const QString& name)
 
 void Workbench::tryPrices(std::span<const Price> prices)
 {
-    assert(prices.size() == m_startPrices.size());
     if (m_gesture != Gesture::trial)
         return;
+    assert(prices.size() == m_startPrices.size());
     m_reshaped.prices.assign(prices.begin(), prices.end());
     reshaped();
 }

@@ -28,6 +28,18 @@ Limits within(const Limits& a, const Limits& b)
     return std::pair(std::max(a->first, b->first), std::min(a->second, b->second));
 }
 
+/// A wished total rounds to the nearest minor unit and a rule's room inwards: one unit between them is no contradiction.
+Limits heldTo(const Limits& wished, const Limits& ruled)
+{
+    if (wished && ruled && wished->first == wished->second) {
+        if (wished->first - ruled->second == Price{1})
+            return std::pair(ruled->second, ruled->second);
+        if (ruled->first - wished->first == Price{1})
+            return std::pair(ruled->first, ruled->first);
+    }
+    return wished;
+}
+
 bool excluded(const Limits& limits) { return limits && limits->first > limits->second; }
 
 } // namespace
@@ -46,7 +58,8 @@ std::optional<std::pair<Price, Price>> totalLimits(Price today, const TotalWish&
 std::optional<std::pair<Price, Price>> totalLimits(Price today, const TotalWish& wish, const PriceRules& rules)
 {
     const auto room = totalRoomOf(today, rules);
-    return within(totalLimits(today, wish), room ? std::optional(std::pair(room->least, room->most)) : std::nullopt);
+    const Limits ruled = room ? Limits(std::pair(room->least, room->most)) : std::nullopt;
+    return within(heldTo(totalLimits(today, wish), ruled), ruled);
 }
 
 Obstacle LeastChange::setGoal(const Tier& tier, const PriceRules& rules, const ChangeWish& wish)
@@ -56,6 +69,7 @@ Obstacle LeastChange::setGoal(const Tier& tier, const PriceRules& rules, const C
     m_goal.wished = totalLimits(m_chain.total, wish.total);
     if (const auto room = totalRoomOf(m_chain.total, rules))
         m_goal.ruled = std::pair(room->least, room->most);
+    m_goal.wished = heldTo(m_goal.wished, m_goal.ruled);
     if (const auto limits = within(m_goal.wished, m_goal.ruled)) {
         m_goal.totalLeast = limits->first;
         m_goal.totalMost = limits->second;

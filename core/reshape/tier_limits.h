@@ -26,14 +26,16 @@ TierLimits tierLimitsOf(const Tier& tier, const PriceRules& rules);
 Bound oversteppedLimit(const Tier& tier, const TierLimits& limits, std::span<const Price> start, std::span<const Price> prices);
 
 /// Makes a gesture of `amount`, or as much of it as the tier's limits let it go. `make(part)` fills `out` for a part of the amount, between
-/// 0 and it; it moves every price one way, further for more. What is held back has the limit as its bound. Allocates nothing.
+/// 0 and it; where it moves every price one way, further for more, it goes as far as the limits let it. A gesture that moves others the
+/// other way, to hold a total, stays inside the limits, but may stop short of the furthest. What is held back has the limit it would
+/// overstep next as its bound. Allocates nothing.
 template <class Make>
 void makeWithin(const Tier& tier, const TierLimits& limits, std::span<const Price> start, std::int64_t amount, Make make, Reshaped& out)
 {
     make(amount);
     if (!limits.any())
         return;
-    const Bound bound = oversteppedLimit(tier, limits, start, out.prices);
+    Bound bound = oversteppedLimit(tier, limits, start, out.prices);
     if (bound == Bound::none)
         return;
     std::int64_t good = 0;
@@ -41,7 +43,13 @@ void makeWithin(const Tier& tier, const TierLimits& limits, std::span<const Pric
     while (bad - good > 1 || good - bad > 1) {
         const std::int64_t middle = good + (bad - good) / 2;
         make(middle);
-        (oversteppedLimit(tier, limits, start, out.prices) == Bound::none ? good : bad) = middle;
+        const Bound at = oversteppedLimit(tier, limits, start, out.prices);
+        if (at == Bound::none) {
+            good = middle;
+        } else {
+            bad = middle;
+            bound = at;
+        }
     }
     make(good);
     out.bound = bound;

@@ -58,10 +58,10 @@ int main(int count, char** words)
             if (!ledger.record(inventedEntry(i, units)).ok())
                 return 1;
         }
-        std::printf("%d sign-offs of %d units recorded: %.2f ms each, synced to the disk\n", signOffs, units,
+        std::printf("{\"sign_offs\": %d, \"units\": %d, \"record_ms\": %.2f, ", signOffs, units,
                     static_cast<double>(timer.elapsed()) / signOffs);
     }
-    std::printf("file: %.1f MB\n", static_cast<double>(QFileInfo(path).size()) / 1e6);
+    std::printf("\"file_mb\": %.1f, ", static_cast<double>(QFileInfo(path).size()) / 1e6);
     const auto opened = Ledger::open(path, Ledger::For::reading);
     if (!opened.ok())
         return 1;
@@ -75,16 +75,17 @@ int main(int count, char** words)
     const auto lowest = ledger.lowestAsked(first.site, first.tier, first.currency, window).value();
     if (!lowest.tier || lowest.units.size() != static_cast<std::size_t>(units))
         return 2;
-    std::printf("history of the tier read: %.1f ms\n", middleOfFive([&] { (void)ledger.history(first.site, first.tier); }));
-    std::printf("history of a unit read: %.1f ms\n", middleOfFive([&] { (void)ledger.unitHistory(first.site, first.tier, "U1"); }));
-    std::printf("lowest prices of 30 days (%lld sign-offs): %.1f ms\n", static_cast<long long>(lowest.signOffs),
+    std::printf("\"tier_history_ms\": %.1f, ", middleOfFive([&] { (void)ledger.history(first.site, first.tier); }));
+    std::printf("\"unit_history_ms\": %.1f, ", middleOfFive([&] { (void)ledger.unitHistory(first.site, first.tier, "U1"); }));
+    std::printf("\"sign_offs_of_30_days\": %lld, \"lowest_30_days_ms\": %.1f, ", static_cast<long long>(lowest.signOffs),
                 middleOfFive([&] { (void)ledger.lowestAsked(first.site, first.tier, first.currency, window); }));
     window.days = 3650;
-    std::printf("lowest prices of all time: %.1f ms\n",
+    std::printf("\"lowest_ever_ms\": %.1f, ",
                 middleOfFive([&] { (void)ledger.lowestAsked(first.site, first.tier, first.currency, window); }));
-    std::printf("opening, reading one entry: %.1f ms\n", middleOfFive([&] {
+    std::printf("\"entry_ms\": %.1f, ", middleOfFive([&] {
                     const auto again = Ledger::open(path, Ledger::For::reading);
-                    (void)again.value().entry(lines.back().id);
+                    if (again.ok())
+                        (void)again.value().entry(lines.back().id);
                 }));
 
     HistoryPicture picture;
@@ -100,11 +101,11 @@ int main(int count, char** words)
     picture.series = {floor, cheapest};
     HistoryPlot plot;
     plot.resize(1000, 300);
-    std::printf("plot filled and painted: %.1f ms\n", middleOfFive([&] {
+    std::printf("\"plot_ms\": %.1f, ", middleOfFive([&] {
                     plot.setPicture(picture);
                     plot.grab();
                 }));
-    std::printf("another sign-off chosen and painted: %.1f ms\n", middleOfFive([&] {
+    std::printf("\"choose_ms\": %.1f}\n", middleOfFive([&] {
                     plot.choose(lines[lines.size() / 2].id);
                     plot.grab();
                 }));

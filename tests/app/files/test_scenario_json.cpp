@@ -248,7 +248,8 @@ private slots:
             return !read.ok() && read.trouble().find(words) != std::string::npos;
         };
         QVERIFY(says("-rules", "-scenario", "F: this is not a file of price rules"));
-        QVERIFY(says("\"version\": 1", "\"version\": 2", "F: version: not a version this program knows; found 2; wanted: 1"));
+        QVERIFY(says("\"version\": 1", "\"version\": 2",
+                     "F: the rules are of format version 2, and this program knows versions up to 1. Open them with a newer Rungwright"));
         QVERIFY(says("EUR", "JPY", "F: currency: another currency than that of the prices; found 'JPY'; wanted: EUR"));
         QVERIFY(says("0.01", "0", "F: rules.step: not above 0"));
         QVERIFY(says("\"step\"", "\"stop\"", "F: rules: a key that is not known; found 'stop'"));

@@ -100,6 +100,19 @@ private slots:
         refuses(path, "newer Rungwright (form 99; this one knows up to 1)", "update this one");
     }
 
+    void ofNoForm()
+    {
+        for (const int form : {-1, 0}) {
+            const QTemporaryDir folder;
+            const QString path = madeIn(folder);
+            {
+                const Raw raw(path);
+                QVERIFY(raw.run(QStringLiteral("PRAGMA user_version = %1").arg(form)));
+            }
+            refuses(path, "is damaged: there is no form", "Move it aside");
+        }
+    }
+
     void ofAnotherProgram()
     {
         const QTemporaryDir folder;

@@ -4,6 +4,7 @@
 
 #include "claims/checks.h"
 
+#include <cmath>
 #include <random>
 
 using namespace rungwright;

@@ -4,6 +4,8 @@
 
 #include "claims/ranking.h"
 
+#include <cmath>
+
 using namespace rungwright;
 
 class RankingTest : public QObject
