@@ -94,6 +94,7 @@ void FrontierPlot::paintCurveLine(QPainter& painter) const
 void FrontierPlot::paintNamed(QPainter& painter) const
 {
     std::vector<QPointF> obstacles;
+    obstacles.reserve(static_cast<std::size_t>(points() + marks()));
     for (int i = 0; i < points(); ++i)
         obstacles.push_back(placeOf(i));
     for (int i = 0; i < marks(); ++i)
