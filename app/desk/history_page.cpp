@@ -9,6 +9,7 @@
 #include "refresh_words.h"
 #include "sheet_cells.h"
 #include "signed_check.h"
+#include "signoff_words.h"
 #include "table_text.h"
 #include "ui_history_page.h"
 #include "whole_file.h"
@@ -43,15 +44,13 @@ CellsModel::Cell changeCell(Price before, Price after, const Currency& currency)
 
 QString checkWords(CheckOutcome outcome)
 {
-    switch (outcome) {
-    case CheckOutcome::holds:
-        return HistoryPage::tr("✓ holds");
-    case CheckOutcome::lookAtThis:
-        return HistoryPage::tr("! look at this");
-    case CheckOutcome::notChecked:
-        break;
-    }
-    return HistoryPage::tr("– not checked");
+    // In the words and signs of the sign-off itself.
+    ClaimOutcome claim = ClaimOutcome::notChecked;
+    if (outcome == CheckOutcome::holds)
+        claim = ClaimOutcome::holds;
+    else if (outcome == CheckOutcome::lookAtThis)
+        claim = ClaimOutcome::lookAtThis;
+    return SignOffWords::outcomeSign(claim) + QLatin1Char(' ') + SignOffWords::outcome(claim);
 }
 
 std::int64_t nowInstant() { return QDateTime::currentMSecsSinceEpoch(); }
@@ -120,7 +119,8 @@ void HistoryPage::prepareWaysOut()
 {
     for (PaperPlot* plot : {static_cast<PaperPlot*>(m_ui->pricesPlot), static_cast<PaperPlot*>(m_ui->gapPlot)}) {
         plot->setAskPath([this](QWidget* over, const QString& title, const QString& suggestion, const QString& filter) {
-            return m_questions.savePath(over, title, suggestion, filter);
+            const QString path = m_questions.savePath(over, title, suggestion, filter);
+            return path.isEmpty() ? path : withSuffix(path, QStringLiteral("png"));
         });
         connect(plot, &PaperPlot::told, this, &HistoryPage::told);
         connect(plot, &PaperPlot::saveFailed, this,
@@ -213,7 +213,8 @@ void HistoryPage::onRead()
     }
     const QScopedValueRollback<bool> filling(m_filling, true);
     const int row = m_ui->signOffTable->currentIndex().row();
-    const std::int64_t chosen = row >= 0 && row < m_signOffs.rowCount() ? m_signOffs.line(row).id : m_read.lines.back().id;
+    // The newest is followed; an older one that was chosen stays.
+    const std::int64_t chosen = row > 0 && row < m_signOffs.rowCount() ? m_signOffs.line(row).id : m_read.lines.back().id;
     m_signOffs.show(m_read.lines);
     m_ui->historyStack->setCurrentWidget(m_ui->historyShown);
     showTitle();
@@ -232,8 +233,10 @@ void HistoryPage::choose(std::int64_t id)
     const int row = m_signOffs.rowOf(id);
     if (row < 0)
         return;
-    m_ui->signOffTable->setCurrentIndex(m_signOffs.index(row, 0));
-    onSelected();
+    if (m_ui->signOffTable->currentIndex().row() == row)
+        onSelected(); // the table has nothing to tell
+    else
+        m_ui->signOffTable->setCurrentIndex(m_signOffs.index(row, 0));
 }
 
 void HistoryPage::onSelected()
@@ -430,11 +433,10 @@ void HistoryPage::showEntry()
 
 void HistoryPage::savePicture(PaperPlot* plot)
 {
-    if (!m_bench.tierCase())
+    if (m_ui->historyStack->currentWidget() != m_ui->historyShown)
         return;
-    const Tier& tier = m_bench.tierCase()->tier;
-    const QString name =
-        fileNameFrom({QString::fromStdString(tier.site), QString::fromStdString(tier.name), plot->accessibleName()}, QStringLiteral("png"));
+    const QString name = fileNameFrom(
+        {QString::fromStdString(m_read.ask.site), QString::fromStdString(m_read.ask.tier), plot->accessibleName()}, QStringLiteral("png"));
     const QString chosen = m_questions.savePath(this, tr("Save the picture"), name, pictureFilter());
     if (chosen.isEmpty())
         return;
@@ -448,10 +450,10 @@ void HistoryPage::savePicture(PaperPlot* plot)
 
 void HistoryPage::saveTable(const QAbstractItemModel& model, const QString& what)
 {
-    if (!m_bench.tierCase())
+    if (m_ui->historyStack->currentWidget() != m_ui->historyShown)
         return;
-    const Tier& tier = m_bench.tierCase()->tier;
-    const QString name = fileNameFrom({QString::fromStdString(tier.site), QString::fromStdString(tier.name), what}, QStringLiteral("csv"));
+    const QString name =
+        fileNameFrom({QString::fromStdString(m_read.ask.site), QString::fromStdString(m_read.ask.tier), what}, QStringLiteral("csv"));
     const QString chosen = m_questions.savePath(this, tr("Save the table"), name, tr("Comma-separated table (*.csv)"));
     if (chosen.isEmpty())
         return;

@@ -134,14 +134,7 @@ void MainWindow::buildPages()
     m_stack->addWidget(m_pages);
     setCentralWidget(m_stack);
 
-    // Side by side has a table of the same figures for every ladder, the sign-off its own; both need the room.
     connect(m_pages, &QTabWidget::currentChanged, this, &MainWindow::showDocksForPage);
-
-    // The history shows figures of other days and needs the room, too.
-    connect(m_pages, &QTabWidget::currentChanged, this, [this] {
-        if (m_pages->currentWidget() == m_history)
-            m_figuresDock->hide();
-    });
 
     connect(m_start, &StartPage::importWanted, m_files, &FileFlow::askImport);
     connect(m_start, &StartPage::openWanted, m_files, &FileFlow::askOpen);
@@ -152,6 +145,7 @@ void MainWindow::buildPages()
     connect(m_portfolio, &PortfolioPage::told, this, &MainWindow::tell);
     connect(m_frontier, &FrontierPage::told, this, &MainWindow::tell);
     connect(m_signOff, &SignOffPage::told, this, &MainWindow::tell);
+    connect(m_signOff, &SignOffPage::recorded, m_history, &HistoryPage::reread);
     connect(m_portfolio, &PortfolioPage::thresholdsWanted, this, &MainWindow::showThresholds);
     connect(m_portfolio, &PortfolioPage::tierChosen, this, [this](int tier) {
         m_bench.showTier(tier, m_document.tier(tier)->chosen.value_or(-1));
@@ -161,10 +155,13 @@ void MainWindow::buildPages()
 
 void MainWindow::showDocksForPage()
 {
-    const bool beside = m_pages->currentWidget() == m_sideBySide || m_pages->currentWidget() == m_signOff;
+    // Side by side has a table of the same figures for every ladder, the sign-off its own, and the history those of other days; all
+    // need the room.
+    const QWidget* page = m_pages->currentWidget();
+    const bool beside = page == m_sideBySide || page == m_signOff || page == m_history;
     m_figuresDock->setVisible(!beside && m_figuresWanted);
     // What is tried shows on the bench.
-    m_reshapeDock->setVisible(m_pages->currentWidget() == m_benchPage && m_reshapeWanted);
+    m_reshapeDock->setVisible(page == m_benchPage && m_reshapeWanted);
 }
 
 void MainWindow::buildDocks()
@@ -203,14 +200,14 @@ void MainWindow::buildStatus()
 {
     m_lastAction = new QLabel;
     m_lastAction->setObjectName(QStringLiteral("lastAction"));
-    m_lastAction->setAccessibleName(tr("Last action"));
+    m_lastAction->setAccessibleDescription(tr("Last action"));
     m_lastAction->setTextFormat(Qt::PlainText);
     m_saveState = new QLabel;
     m_saveState->setObjectName(QStringLiteral("saveState"));
-    m_saveState->setAccessibleName(tr("Saved or not"));
+    m_saveState->setAccessibleDescription(tr("Saved or not"));
     m_modelInUse = new QLabel;
     m_modelInUse->setObjectName(QStringLiteral("modelInUse"));
-    m_modelInUse->setAccessibleName(tr("Availability model in use"));
+    m_modelInUse->setAccessibleDescription(tr("Availability model in use"));
     m_savingBar = new QProgressBar;
     m_savingBar->setObjectName(QStringLiteral("savingBar"));
     m_savingBar->setAccessibleName(tr("Saving"));
@@ -460,6 +457,8 @@ void MainWindow::resetLayout()
     m_reshapeDock->setVisible(!m_document.empty());
     const bool narrow = width() < kNarrow;
     resizeDocks({m_worklistDock, m_figuresDock}, narrow ? QList<int>{300, 320} : QList<int>{404, 340}, Qt::Horizontal);
+    if (!m_document.empty())
+        showDocksForPage();
 }
 
 void MainWindow::restoreLayout()

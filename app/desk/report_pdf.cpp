@@ -27,7 +27,7 @@ namespace
 {
 
 constexpr int kMostPages = 4;
-/// A note longer than this is cut: the whole of it stands in the ledger.
+/// A note longer than this is cut, and the report says so.
 constexpr int kMostNote = 600;
 constexpr std::array kKeyFigures{"gap", "gap_share", "expected_cheapest", "chance_floor_met", "asking_total"};
 
@@ -74,7 +74,7 @@ private:
                 .arg(m_site, m_tier, floorText(m_case.tier.advertisedFloor, m_case.currency), QString::fromStdString(m_case.currency.code)),
             Weight::plain, 1.15);
         p.gap(4);
-        const QString who = m_frame.who.isEmpty() ? tr("Not signed") : tr("Signed by %1").arg(isolated(shownText(m_frame.who, 120)));
+        const QString who = m_frame.who.isEmpty() ? tr("Nobody named") : tr("Prepared by %1").arg(isolated(shownText(m_frame.who, 120)));
         QString line = tr("%1 · %2 · %3").arg(who, m_frame.when, SignOffWords::model(m_case));
         if (!m_case.scenario.isEmpty())
             line += tr(" · scenario “%1”").arg(isolated(shownText(m_case.scenario, 120)));
@@ -83,7 +83,7 @@ private:
             p.gap(4);
             const bool cut = m_frame.note.size() > kMostNote;
             const QString note = cut ? m_frame.note.left(kMostNote) + QStringLiteral("…") : m_frame.note;
-            p.paragraph(cut ? tr("Note: %1 (The whole note is in the ledger.)").arg(note) : tr("Note: %1").arg(note));
+            p.paragraph(cut ? tr("Note: %1 (The note is cut here.)").arg(note) : tr("Note: %1").arg(note));
         }
         p.gap(10);
         p.paragraph(SignOffWords::keySentence(m_case), Weight::strong, 1.15);
@@ -108,7 +108,7 @@ private:
                                  figureChangeText(row, was, is, m_case.currency)));
     }
 
-    void drawFigureHead() { m_pages->row(figureCells(QString(), tr("Today"), tr("Signed"), tr("Change")), Weight::faint); }
+    void drawFigureHead() { m_pages->row(figureCells(QString(), tr("Today"), tr("New"), tr("Change")), Weight::faint); }
 
     void drawKeyFigures()
     {
@@ -126,7 +126,7 @@ private:
     void drawPicture()
     {
         ReportPages& p = *m_pages;
-        p.paragraph(tr("Ladder and curtain, today and as signed, on one price axis"), Weight::faint);
+        p.paragraph(tr("Ladder and curtain, today and new, on one price axis"), Weight::faint);
         p.gap(4);
         const double height = std::min(p.roomLeft(), p.width() * 0.85);
         if (height < 160)
@@ -142,7 +142,7 @@ private:
         const auto today = askingPrices(m_case.tier.units);
         const std::vector<SideLadder> ladders{
             {tr("today"), measured(m_case.tier, today, m_case.model), today},
-            {m_case.candidate < 0 ? tr("as signed") : m_case.ladder, measured(m_case.tier, m_case.prices, m_case.model), m_case.prices}};
+            {m_case.candidate < 0 ? tr("new") : m_case.ladder, measured(m_case.tier, m_case.prices, m_case.model), m_case.prices}};
         plot.setLadders(m_case.tier, m_case.currency, ladders);
         plot.paintInto(p.painter(), where.toRect());
     }

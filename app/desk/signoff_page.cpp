@@ -178,8 +178,11 @@ void SignOffPage::refresh()
     }
     // Another tier, or another choice: what was picked here before is no longer meant.
     if (m_site != tierCase->tier.site || m_tier != tierCase->tier.name || m_chosen != tierCase->chosen) {
-        if (m_site != tierCase->tier.site || m_tier != tierCase->tier.name || tierCase->chosen)
+        const bool otherTier = m_site != tierCase->tier.site || m_tier != tierCase->tier.name;
+        if (otherTier || tierCase->chosen)
             m_pick.reset();
+        if (otherTier && m_ui->noteEdit->text().trimmed() == m_signedNote)
+            m_ui->noteEdit->clear();
         m_site = tierCase->tier.site;
         m_tier = tierCase->tier.name;
         m_chosen = tierCase->chosen;
@@ -187,8 +190,8 @@ void SignOffPage::refresh()
     std::optional<double> leastTime;
     if (m_ui->leastTimeBox->value() > 0)
         leastTime = m_ui->leastTimeBox->value() / 100.0;
-    m_case =
-        std::make_unique<SignOffCase>(signOffCase(m_bench.document(), m_bench.tier(), candidateToShow(), m_bench.settings(), leastTime));
+    m_case = std::make_shared<const SignOffCase>(
+        signOffCase(m_bench.document(), m_bench.tier(), candidateToShow(), m_bench.settings(), leastTime));
     showLadderBox();
     showCase();
     m_ui->stack->setCurrentWidget(m_ui->signPage);

@@ -69,8 +69,15 @@ private:
     void writeSheet();
     void writeReportFile();
     void signOff();
-    /// Asks for a file and writes the sheet; the path, or nothing.
-    QString sheetTo();
+    /// Asks where to write; nothing when it is given up, or when another case is shown by then, which is said.
+    QString pathFor(const QString& title, const QString& suffix, const QString& filter);
+    QString sheetPath();
+    /// False when nothing was written, which is said.
+    bool sheetTo(const QString& path);
+    /// Whether what is shown is no longer what was asked about; says so.
+    bool changedSince(const std::shared_ptr<const SignOffCase>& asked);
+    /// A ladder is tried on the bench: what is shown here is not what is seen there, and edits would end the trial.
+    bool trialOn() const;
     /// Why nothing can be signed; empty when it can.
     QString hindrance();
     QString suggestion(const QString& suffix) const;
@@ -81,7 +88,7 @@ private:
     Questions& m_questions;
     QSettings& m_settings;
     std::function<bool()> m_saveFirst;
-    std::unique_ptr<SignOffCase> m_case;
+    std::shared_ptr<const SignOffCase> m_case; ///< Shared, so that one asked about can be told from one that came meanwhile.
     std::unique_ptr<SheetModel> m_model;
     std::unique_ptr<SheetFilter> m_filter;
     std::vector<QCheckBox*> m_places; ///< In the order of jurisdictions().
@@ -95,7 +102,7 @@ private:
     std::string m_tier;
     std::optional<int> m_chosen; ///< The tier's choice when the pick was made.
     bool m_stale = true;
-    bool m_filling = false;
+    QString m_signedNote;   ///< The last note entered in the ledger: it stays for the report, and goes with its tier.
     bool m_signing = false; ///< What it says of itself stays while its own edits come back.
     std::unique_ptr<Ui::SignOffPage> m_ui;
 };

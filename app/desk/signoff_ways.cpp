@@ -53,27 +53,45 @@ ReportFrame SignOffPage::frame() const
     return frame;
 }
 
-QString SignOffPage::sheetTo()
+bool SignOffPage::trialOn() const { return m_bench.gesture() == Workbench::Gesture::trial; }
+
+bool SignOffPage::changedSince(const std::shared_ptr<const SignOffCase>& asked)
 {
-    const QString path =
-        m_questions.savePath(this, tr("Save the price sheet"), suggestion(QStringLiteral("csv")), tr("Price sheet (*.csv)"));
-    if (path.isEmpty())
-        return {};
-    const QString target = withSuffix(path, QStringLiteral("csv"));
-    const Outcome<bool> written = saveSheet(m_case->rows, m_case->currency, target);
-    if (!written.ok()) {
+    // While the page is hidden the case is only marked as stale.
+    if (!m_stale && m_case && m_case == asked)
+        return false;
+    showResult(tr("Not saved: the ladder changed meanwhile."), false);
+    return true;
+}
+
+QString SignOffPage::pathFor(const QString& title, const QString& suffix, const QString& filter)
+{
+    // The question has an event loop of its own: a file may finish loading, a list be refreshed.
+    const std::shared_ptr<const SignOffCase> asked = m_case;
+    const QString path = m_questions.savePath(this, title, suggestion(suffix), filter);
+    return path.isEmpty() || changedSince(asked) ? QString() : withSuffix(path, suffix);
+}
+
+QString SignOffPage::sheetPath() { return pathFor(tr("Save the price sheet"), QStringLiteral("csv"), tr("Price sheet (*.csv)")); }
+
+bool SignOffPage::sheetTo(const QString& path)
+{
+    const Outcome<bool> written = saveSheet(m_case->rows, m_case->currency, path);
+    if (!written.ok())
         showResult(tr("Not saved: %1").arg(QString::fromStdString(written.trouble())), false);
-        return {};
-    }
-    return target;
+    return written.ok();
 }
 
 void SignOffPage::writeSheet()
 {
     if (!m_case)
         return;
-    const QString path = sheetTo();
-    if (path.isEmpty())
+    if (trialOn()) {
+        showResult(tr("No price sheet written: a ladder is being tried on the bench. Keep it or give it up first."), false);
+        return;
+    }
+    const QString path = sheetPath();
+    if (path.isEmpty() || !sheetTo(path))
         return;
     // Prices have left the tool: that is remembered, signed or not.
     SignedSheet sheet = m_case->sheet;
@@ -88,19 +106,24 @@ void SignOffPage::writeReportFile()
 {
     if (!m_case)
         return;
-    const QString path = m_questions.savePath(this, tr("Save the report"), suggestion(QStringLiteral("pdf")), tr("PDF document (*.pdf)"));
+    if (trialOn()) {
+        showResult(tr("No report written: a ladder is being tried on the bench. Keep it or give it up first."), false);
+        return;
+    }
+    const QString path = pathFor(tr("Save the report"), QStringLiteral("pdf"), tr("PDF document (*.pdf)"));
     if (path.isEmpty())
         return;
-    const QString target = withSuffix(path, QStringLiteral("pdf"));
-    const Outcome<bool> written = writeReport(*m_case, frame(), target);
+    const Outcome<bool> written = writeReport(*m_case, frame(), path);
     if (written.ok())
-        showResult(tr("Report written: %1").arg(target), true);
+        showResult(tr("Report written: %1").arg(path), true);
     else
         showResult(tr("Not saved: %1").arg(QString::fromStdString(written.trouble())), false);
 }
 
 QString SignOffPage::hindrance()
 {
+    if (trialOn())
+        return tr("Not signed off: a ladder is being tried on the bench. Keep it or give it up first.");
     if (m_ui->whoEdit->text().trimmed().isEmpty()) {
         m_ui->whoEdit->setFocus();
         return tr("Not signed off: say who signs.");
@@ -120,6 +143,7 @@ void SignOffPage::signOff()
     if (!m_case)
         return;
     m_settings.setValue(kSigner, m_ui->whoEdit->text().trimmed());
+    const std::shared_ptr<const SignOffCase> asked = m_case;
     // Being saved changes nothing that is signed, but views may be told so.
     m_signing = true;
     const QString why = hindrance();
@@ -128,32 +152,35 @@ void SignOffPage::signOff()
         showResult(why, false);
         return;
     }
-    const QString path = sheetTo();
+    if (changedSince(asked))
+        return;
+    const QString path = sheetPath();
     if (path.isEmpty())
         return;
+    // The ledger first: no price leaves by a sign-off that cannot be entered.
+    const QString ledgerPath = ledgerPathFor(m_bench.document().path());
+    Outcome<Ledger> opened = Ledger::open(ledgerPath, Ledger::For::writing);
+    if (!opened.ok()) {
+        showResult(tr("Not signed off, and no price sheet written: %1").arg(QString::fromStdString(opened.trouble())), false);
+        return;
+    }
+    if (!sheetTo(path))
+        return;
+    Ledger ledger = std::move(opened).value();
     SignedSheet sheet = m_case->sheet;
     sheet.whenUtc = QDateTime::currentDateTimeUtc().toString(Qt::ISODate).toStdString();
-    const SignOff entry = ledgerEntry(*m_case, m_ui->whoEdit->text().trimmed(), m_ui->noteEdit->text().trimmed(), sheet.whenUtc);
+    const QString note = m_ui->noteEdit->text().trimmed();
+    const SignOff entry = ledgerEntry(*m_case, m_ui->whoEdit->text().trimmed(), note, sheet.whenUtc);
     m_signing = true;
     m_bench.document().recordSignedSheet(m_bench.tier(), std::move(sheet));
     m_signing = false;
-
-    const QString ledgerPath = ledgerPathFor(m_bench.document().path());
-    QString trouble;
-    if (Outcome<Ledger> opened = Ledger::open(ledgerPath, Ledger::For::writing); opened.ok()) {
-        Ledger ledger = std::move(opened).value();
-        if (const auto id = ledger.record(entry); !id.ok())
-            trouble = QString::fromStdString(id.trouble());
-    } else {
-        trouble = QString::fromStdString(opened.trouble());
-    }
-    if (!trouble.isEmpty()) {
-        showResult(
-            tr("The price sheet stands (%1), but the ledger has no entry of it: %2 Sign off again when that is mended.").arg(path, trouble),
-            false);
+    if (const auto id = ledger.record(entry); !id.ok()) {
+        showResult(tr("The price sheet stands (%1), but the ledger has no entry of it: %2 Sign off again when that is mended.")
+                       .arg(path, QString::fromStdString(id.trouble())),
+                   false);
         return;
     }
-    m_ui->noteEdit->clear();
+    m_signedNote = note;
     showResult(tr("Signed off: %1. Entered in the ledger %2.").arg(path, QFileInfo(ledgerPath).fileName()), true);
     emit recorded(ledgerPath);
 }

@@ -6,7 +6,10 @@
 #include "ledger.h"
 
 #include <QAbstractItemModelTester>
+#include <QAction>
 #include <QComboBox>
+#include <QContextMenuEvent>
+#include <QMenu>
 #include <QPushButton>
 #include <QSpinBox>
 #include <QStackedWidget>
@@ -108,7 +111,10 @@ private slots:
         QVERIFY(desk.child<QLabel>("entrySentence").text().contains(QStringLiteral("Cy Moor")));
         auto& checks = desk.child<QTableView>("historyChecksTable");
         QCOMPARE(checks.model()->rowCount(), 2);
-        QVERIFY(cellOf(checks, 1, 0).contains(QStringLiteral("look at this")));
+        QCOMPARE(cellOf(checks, 1, 0), QStringLiteral("⚠ look at this")); // the sign-off's own sign
+        QVERIFY(!desk.window->figuresDock().isVisible());
+        desk.window->resetLayout();
+        QVERIFY(!desk.window->figuresDock().isVisible());
 
         // A click on the oldest in the plot chooses it in the table.
         const int x = static_cast<int>(std::lround(prices.xOf(prices.picture().marks[0].instant)));
@@ -131,6 +137,20 @@ private slots:
         QCOMPARE(prices.picture().series[2].points.size(), std::size_t{3});
         QCOMPARE(chooser.currentIndex(), 1);
         QCOMPARE(table.currentIndex().row(), 1); // What was chosen stays so.
+
+        // An older one that was chosen stays also when another is signed; the newest is followed.
+        QVERIFY(recordAll(path, {entryFor(desk.bench(), 0.5, 1, Price{200}, "Di Ash")}));
+        QTest::keyClick(&desk.child<QPushButton>("rereadButton"), Qt::Key_Space);
+        QTRY_COMPARE(table.model()->rowCount(), 4);
+        QCOMPARE(cellOf(table, table.currentIndex().row(), SignOffModel::whoColumn), QStringLiteral("Bo Field"));
+        table.setFocus();
+        QTest::keyClick(&table, Qt::Key_Home, Qt::ControlModifier);
+        QCOMPARE(table.currentIndex().row(), 0);
+        QVERIFY(recordAll(path, {entryFor(desk.bench(), 0.25, 1, Price{300}, "Em Rye")}));
+        QTest::keyClick(&desk.child<QPushButton>("rereadButton"), Qt::Key_Space);
+        QTRY_COMPARE(table.model()->rowCount(), 5);
+        QCOMPARE(cellOf(table, table.currentIndex().row(), SignOffModel::whoColumn), QStringLiteral("Em Rye"));
+        QTRY_VERIFY(desk.child<QLabel>("entrySentence").text().contains(QStringLiteral("Em Rye")));
     }
 
     void lowestPricesAndToday()
@@ -214,6 +234,16 @@ private slots:
         desk.questions.nextPath = desk.folder.filePath(QStringLiteral("prices.png"));
         desk.child<QAction>("savePricesPicture").trigger();
         QVERIFY(!QImage(desk.folder.filePath(QStringLiteral("prices.png"))).isNull());
+        // The plot's own menu gives the ending, too.
+        auto& plot = desk.child<HistoryPlot>("gapPlot");
+        QContextMenuEvent asked(QContextMenuEvent::Mouse, QPoint(20, 20), plot.mapToGlobal(QPoint(20, 20)));
+        QCoreApplication::sendEvent(&plot, &asked);
+        auto* save = plot.findChild<QAction*>(QStringLiteral("savePicture"));
+        QVERIFY(save);
+        desk.questions.nextPath = desk.folder.filePath(QStringLiteral("gap"));
+        save->trigger();
+        plot.findChild<QMenu*>(QStringLiteral("pictureMenu"))->close();
+        QVERIFY(!QImage(desk.folder.filePath(QStringLiteral("gap.png"))).isNull());
         desk.questions.nextPath = desk.folder.filePath(QStringLiteral("no/such/folder.png"));
         desk.child<QAction>("saveGapPicture").trigger();
         QCOMPARE(desk.questions.told.size(), 1);

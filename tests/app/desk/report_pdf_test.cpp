@@ -79,6 +79,22 @@ private slots:
               "Winter list", "A-1", "80.00", "70.00", "238.3", "From memory", "not a verdict", "holds", "not checked"})
             QVERIFY2(read.flat.contains(QString::fromUtf8(wanted)), wanted);
         QVERIFY(read.pages >= 2 && read.pages <= 4);
+        // A report may be made before anything is signed off, and does not say that it was.
+        QVERIFY(read.flat.contains(QStringLiteral("Prepared by Ines Okafor")));
+        QVERIFY(read.flat.contains(QStringLiteral("Today New Change")));
+        QVERIFY(!read.flat.contains(QStringLiteral("Signed")) && !read.flat.contains(QStringLiteral("as signed")));
+    }
+
+    void nobodyNamedAndALongNote()
+    {
+        ReportFrame frame = frameOf(QPageSize::A4);
+        frame.who.clear();
+        frame.note = QStringLiteral("harbour ").repeated(90);
+        const Read read = written(caseOf(comparedScenario(), -1), frame);
+        QVERIFY(read.flat.contains(QStringLiteral("Nobody named")));
+        QVERIFY(read.flat.contains(QStringLiteral("(The note is cut here.)")));
+        QVERIFY(!read.flat.contains(QStringLiteral("ledger")));
+        QVERIFY(!read.flat.contains(QStringLiteral("as signed")));
     }
 
     void cautionAndNumberOnEveryPage()

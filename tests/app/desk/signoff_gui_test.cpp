@@ -10,6 +10,7 @@
 #include "table_text.h"
 
 #include <QAbstractItemModelTester>
+#include <QAccessible>
 #include <QAction>
 #include <QCheckBox>
 #include <QClipboard>
@@ -20,8 +21,28 @@
 #include <QLineEdit>
 #include <QPushButton>
 #include <QSpinBox>
+#include <QSqlDatabase>
+#include <QSqlQuery>
 
 using namespace rungwright;
+
+namespace
+{
+
+/// While a file is asked for, something else happens.
+class MeddledQuestions : public PresetQuestions
+{
+public:
+    std::function<void()> meanwhile;
+    QString savePath(QWidget* parent, const QString& title, const QString& suggestion, const QString& filter) override
+    {
+        if (meanwhile)
+            std::exchange(meanwhile, nullptr)();
+        return PresetQuestions::savePath(parent, title, suggestion, filter);
+    }
+};
+
+} // namespace
 
 class SignOffGuiTest : public QObject
 {
@@ -50,6 +71,9 @@ private slots:
     void aSheetAloneIsNotEntered();
     void aSampleIsSavedFirst();
     void aLedgerThatCannotBeWrittenLosesNothing();
+    void anEntryThatIsRefusedIsSaid();
+    void aTrialOnTheBenchIsNotSigned();
+    void aLadderThatChangesMeanwhileIsNotWritten();
     void theReportIsWritten();
 
 private:
@@ -88,6 +112,9 @@ void SignOffGuiTest::theKeyLeadsThereAndFiguresMakeRoom()
     QVERIFY(m_desk->window->figuresDock().isVisible());
     goThere();
     QVERIFY(!m_desk->window->figuresDock().isVisible());
+    m_desk->window->resetLayout();
+    QVERIFY(!m_desk->window->figuresDock().isVisible() && !m_desk->window->reshapeDock().isVisible());
+    QVERIFY(m_desk->window->worklistDock().isVisible());
     QCOMPARE(m_desk->child<QLabel>("signOffCaution").text(), cautionText());
     QTest::keyClick(m_desk->window.get(), Qt::Key_1, Qt::ControlModifier);
     QTRY_VERIFY(m_desk->window->figuresDock().isVisible());
@@ -148,7 +175,10 @@ void SignOffGuiTest::theTableSortsAndCopies()
     click("copyChangesButton");
     const QString copied = QGuiApplication::clipboard()->text();
     QVERIFY2(copied.contains(QStringLiteral("'=B-4")), qPrintable(copied));
-    QVERIFY(m_desk->child<QLabel>("lastAction").text().contains(cautionText()));
+    auto& last = m_desk->child<QLabel>("lastAction");
+    QVERIFY(last.text().contains(cautionText()));
+    // Who listens hears the sentence, not what the label is called.
+    QCOMPARE(QAccessible::queryAccessibleInterface(&last)->text(QAccessible::Name), last.text());
 }
 
 void SignOffGuiTest::remindersFollowTheBoxes()
@@ -213,6 +243,13 @@ void SignOffGuiTest::signedOffAndFoundInTheLedger()
     QVERIFY(file.open(QIODevice::ReadOnly));
     QCOMPARE(entry.sheetSha256, QCryptographicHash::hash(file.readAll(), QCryptographicHash::Sha256).toHex().toStdString());
     QCOMPARE(m_desk->settings.value(QStringLiteral("signoff/who")).toString(), QStringLiteral("Ines Okafor"));
+
+    QCOMPARE(note.text(), QStringLiteral("winter")); // a report made now has it, too
+    QTest::keyClick(m_desk->window.get(), Qt::Key_6, Qt::ControlModifier);
+    QTRY_COMPARE(m_desk->child<QTableView>("signOffTable").model()->rowCount(), 1);
+    QTRY_VERIFY(m_desk->child<QLabel>("entrySentence").text().contains(QStringLiteral("Ines Okafor")));
+    QVERIFY(m_desk->child<QLabel>("entrySentence").text().contains(QStringLiteral("winter")));
+    QCOMPARE(m_desk->child<QTableView>("historyChangesTable").model()->rowCount(), 1);
 }
 
 void SignOffGuiTest::aSheetAloneIsNotEntered()
@@ -262,13 +299,97 @@ void SignOffGuiTest::aLedgerThatCannotBeWrittenLosesNothing()
     const QString sheet = m_desk->folder.filePath(QStringLiteral("sheet.csv"));
     m_desk->questions.nextPath = sheet;
     click("signButton");
-    QVERIFY2(said().contains(QStringLiteral("no entry of it")), qPrintable(said()));
+    QVERIFY2(said().contains(QStringLiteral("no price sheet written")), qPrintable(said()));
+    QVERIFY2(said().contains(QStringLiteral("is not a price ledger")), qPrintable(said()));
     QVERIFY(said().startsWith(QStringLiteral("⚠")));
-    QVERIFY(QFile::exists(sheet));
-    QVERIFY(m_desk->window->document().tier(0)->signedOff);
+    QVERIFY(!QFile::exists(sheet)); // no price has left
+    QVERIFY(!m_desk->window->document().tier(0)->signedOff);
     QCOMPARE(note.text(), QStringLiteral("keep me"));
     QVERIFY(broken.open(QIODevice::ReadOnly));
     QCOMPARE(broken.readAll(), text.repeated(20));
+}
+
+void SignOffGuiTest::anEntryThatIsRefusedIsSaid()
+{
+    QVERIFY(Ledger::open(ledgerPathFor(m_file), Ledger::For::writing).ok());
+    {
+        auto database = QSqlDatabase::addDatabase(QStringLiteral("QSQLITE"), QStringLiteral("refusing"));
+        database.setDatabaseName(ledgerPathFor(m_file));
+        QVERIFY(database.open());
+        QSqlQuery query(database);
+        QVERIFY(query.exec(QStringLiteral("CREATE TRIGGER refuse BEFORE INSERT ON sign_off BEGIN SELECT RAISE(ABORT, 'not today'); END")));
+    }
+    QSqlDatabase::removeDatabase(QStringLiteral("refusing"));
+    goThere();
+    pickLowerEnd();
+    typeName(QStringLiteral("Ines Okafor"));
+    const QString sheet = m_desk->folder.filePath(QStringLiteral("sheet.csv"));
+    m_desk->questions.nextPath = sheet;
+    click("signButton");
+    QVERIFY2(said().contains(QStringLiteral("no entry of it")) && said().contains(QStringLiteral("not today")), qPrintable(said()));
+    QVERIFY(said().startsWith(QStringLiteral("⚠")));
+    QVERIFY(QFile::exists(sheet));
+    QVERIFY(m_desk->window->document().tier(0)->signedOff); // what left is remembered
+}
+
+void SignOffGuiTest::aTrialOnTheBenchIsNotSigned()
+{
+    QVERIFY(m_desk->bench().beginTrial(QStringLiteral("Tried")));
+    goThere();
+    typeName(QStringLiteral("Ines Okafor"));
+    for (const char* name : {"signButton", "sheetButton", "reportButton"}) {
+        m_desk->questions.nextPath = m_desk->folder.filePath(QStringLiteral("tried"));
+        click(name);
+        QVERIFY2(said().contains(QStringLiteral("a ladder is being tried on the bench")), qPrintable(said()));
+        QVERIFY(m_desk->bench().gesture() == Workbench::Gesture::trial);
+    }
+    QVERIFY(m_desk->questions.asked.isEmpty());
+    QVERIFY(!m_desk->window->document().tier(0)->signedOff);
+    m_desk->bench().giveUpGesture();
+    m_desk->questions.nextPath = m_desk->folder.filePath(QStringLiteral("after"));
+    click("sheetButton");
+    QVERIFY(QFile::exists(m_desk->folder.filePath(QStringLiteral("after.csv"))));
+}
+
+void SignOffGuiTest::aLadderThatChangesMeanwhileIsNotWritten()
+{
+    Document& document = m_desk->window->document();
+    MeddledQuestions questions;
+    std::function<bool()> saveFirst = [] { return false; };
+    SignOffPage other(m_desk->bench(), questions, m_desk->settings, [&saveFirst] { return saveFirst(); });
+    other.resize(1200, 700);
+    other.show();
+    QVERIFY(QTest::qWaitForWindowExposed(&other));
+    const auto press = [&other](const char* name) {
+        QTest::mouseClick(other.findChild<QPushButton*>(QLatin1String(name)), Qt::LeftButton);
+        return other.findChild<QLabel*>(QStringLiteral("signOffResult"))->text();
+    };
+    other.findChild<QLineEdit*>(QStringLiteral("whoEdit"))->setText(QStringLiteral("Ines Okafor"));
+    const QString target = m_desk->folder.filePath(QStringLiteral("meddled.out"));
+    int candidate = 0;
+    for (const char* name : {"signButton", "sheetButton", "reportButton"}) {
+        questions.nextPath = target;
+        questions.meanwhile = [&document, &candidate] { document.chooseCandidate(0, candidate++); };
+        const QString said = press(name);
+        QVERIFY2(said.contains(QStringLiteral("the ladder changed meanwhile")), qPrintable(said));
+        QVERIFY(!QFile::exists(target));
+    }
+    QCOMPARE(candidate, 3);
+    QVERIFY(!QFile::exists(ledgerPathFor(m_file)));
+
+    // And while the scenario is saved first.
+    document.begin(comparedScenario(), QString(), false);
+    const QString fresh = m_desk->folder.filePath(QStringLiteral("meddled.rungs.json"));
+    saveFirst = [&] {
+        document.chooseCandidate(0, 0);
+        m_desk->questions.nextPath = fresh;
+        return m_desk->window->files().save() && m_desk->window->files().saving().finishWriting();
+    };
+    questions.answers = {0};
+    questions.nextPath = target;
+    const QString said = press("signButton");
+    QVERIFY2(said.contains(QStringLiteral("the ladder changed meanwhile")), qPrintable(said));
+    QVERIFY(QFile::exists(fresh) && !QFile::exists(target) && !QFile::exists(ledgerPathFor(fresh)));
 }
 
 void SignOffGuiTest::theReportIsWritten()
