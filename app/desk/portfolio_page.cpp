@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "portfolio_page.h"
 
+#include "file_names.h"
 #include "questions.h"
 #include "ui_portfolio_page.h"
 
@@ -14,7 +15,8 @@ PortfolioPage::PortfolioPage(Worklist& list, Workbench& bench, Questions& questi
     PortfolioPlot* plot = m_ui->portfolioPlot;
     plot->setSources(&list, &bench);
     plot->setAskPath([&questions](QWidget* over, const QString& title, const QString& suggestion, const QString& filter) {
-        return questions.savePath(over, title, suggestion, filter);
+        const QString path = questions.savePath(over, title, suggestion, filter);
+        return path.isEmpty() ? path : withSuffix(path, QStringLiteral("png"));
     });
     connect(plot, &PortfolioPlot::tierChosen, this, &PortfolioPage::tierChosen);
     connect(plot, &PaperPlot::told, this, &PortfolioPage::told);

@@ -19,7 +19,8 @@ SideBySideExport::SideBySideExport(const From& from, QWidget* page) : QObject(pa
     // The plot's own context menu asks and tells the same way.
     from.plot.setAskPath(
         [&questions = from.questions](QWidget* over, const QString& title, const QString& suggestion, const QString& filter) {
-            return questions.savePath(over, title, suggestion, filter);
+            const QString path = questions.savePath(over, title, suggestion, filter);
+            return path.isEmpty() ? path : withSuffix(path, QStringLiteral("png"));
         });
     connect(&from.plot, &PaperPlot::told, this, &SideBySideExport::told);
     connect(&from.plot, &PaperPlot::saveFailed, this,
