@@ -95,7 +95,7 @@ void ImportColumns::build()
         row.note = new ElidedLabel;
         row.note->setObjectName(nameOf(i) + QStringLiteral("Note"));
         row.note->setTextFormat(Qt::PlainText);
-        row.note->setAccessibleName(tr("%1: why").arg(title));
+        row.note->setAccessibleDescription(tr("%1: why").arg(title));
         row.note->setSizePolicy(QSizePolicy::Ignored, QSizePolicy::Preferred);
         row.constant = new QLineEdit;
         row.constant->setObjectName(nameOf(i) + QStringLiteral("Constant"));

@@ -109,7 +109,7 @@ ReadingRows::ReadingRows(QWidget& over) : QWidget(&over), m_said(new QLabel), m_
     setFocusPolicy(Qt::NoFocus);
     hide();
     m_said->setObjectName(QStringLiteral("readingSaid"));
-    m_said->setAccessibleName(tr("How much has been read"));
+    m_said->setAccessibleDescription(tr("How much has been read"));
     m_said->setTextFormat(Qt::PlainText);
     m_said->setWordWrap(true);
     m_table->setObjectName(QStringLiteral("readingTable"));
