@@ -324,6 +324,8 @@ void ThinningPlot::mousePressEvent(QMouseEvent* event)
         return;
     }
     event->accept();
+    if (!markerFree())
+        return;
     // Anywhere in the plot: the marker jumps to the pointer, as on a slider's groove.
     m_dragging = m_bench->beginLeft();
     if (m_dragging && std::abs(event->position().x() - m_knob.x()) > 8)
@@ -364,9 +366,16 @@ void ThinningPlot::mouseReleaseEvent(QMouseEvent* event)
     update();
 }
 
+bool ThinningPlot::markerFree()
+{
+    if (m_bench->gesture() == Workbench::Gesture::trial)
+        emit told(tr("First keep what is tried (Enter), or give it up (Esc)."));
+    return m_bench->gesture() == Workbench::Gesture::none;
+}
+
 void ThinningPlot::setLeft(int left)
 {
-    if (!m_bench->beginLeft())
+    if (!markerFree() || !m_bench->beginLeft())
         return;
     m_bench->leftTo(left);
     m_bench->finishGesture();
@@ -381,7 +390,7 @@ void ThinningPlot::keyPressEvent(QKeyEvent* event)
         event->accept();
         return;
     }
-    if (!movable() || m_bench->gesture() != Workbench::Gesture::none) {
+    if (!movable()) {
         PaperPlot::keyPressEvent(event);
         return;
     }

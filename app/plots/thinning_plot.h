@@ -59,6 +59,8 @@ private:
     std::pair<double, double> heightsBetween(double from, double to) const;
     int leftAt(double x) const;
     void setLeft(int left);
+    /// Whether the marker may be taken; where something is tried on the bench, says what has to be done first.
+    bool markerFree();
     void paintStretches(QPainter& painter, const QPolygonF& line, const std::vector<qsizetype>& starts, const QPen& pen) const;
 
     QPointer<Workbench> m_bench;

@@ -3,6 +3,8 @@
 #include "plot_fixture.h"
 #include "wording.h"
 
+#include <QSignalSpy>
+
 using namespace rungwright;
 
 class ThinningPlotTest : public QObject
@@ -46,6 +48,32 @@ private slots:
         press(on.thinning(), at);
         release(on.thinning(), at);
         QCOMPARE(*on.bench.settings().left, 3);
+    }
+
+    /// What is tried stays on the bench until it is kept or given up in so many words.
+    void theMarkerWaitsForATrial()
+    {
+        OnBench on(plain());
+        const QSignalSpy told(&on.thinning(), &PaperPlot::told);
+        QVERIFY(on.bench.beginTrial(QStringLiteral("Tried")));
+        std::vector<Price> prices(on.bench.currentPrices().begin(), on.bench.currentPrices().end());
+        prices[0] += Price{500};
+        on.bench.tryPrices(prices);
+        const int start = *on.bench.worked().odds.left;
+        const QPointF at(on.thinning().xOf(3), on.thinning().area().center().y());
+        press(on.thinning(), at);
+        release(on.thinning(), at);
+        QCOMPARE(told.count(), 1);
+        QTest::keyClick(&on.thinning(), Qt::Key_Left);
+        QCOMPARE(told.count(), 2);
+        QVERIFY(told.last().first().toString().contains(QStringLiteral("keep what is tried")));
+        QCOMPARE(on.bench.gesture(), Workbench::Gesture::trial);
+        QCOMPARE(on.bench.workedPrices()[0], prices[0]);
+        QCOMPARE(*on.bench.worked().odds.left, start);
+        QCOMPARE(on.document.undoStack().count(), 0);
+        on.bench.giveUpGesture();
+        QTest::keyClick(&on.thinning(), Qt::Key_Left);
+        QCOMPARE(*on.bench.settings().left, start - 1);
     }
 
     void escapeGivesUp()
