@@ -87,6 +87,12 @@ RulesDialog::RulesDialog(const Scenario& scenario, const Tier& tier, QWidget* pa
     m_ui->scopeBox->setCurrentIndex(begin);
     connect(m_ui->scopeBox, &QComboBox::currentIndexChanged, this, &RulesDialog::showScope);
     connect(m_ui->ownBox, &QCheckBox::clicked, this, &RulesDialog::setOwn);
+    auto prices = askingPrices(tier.units);
+    if (!prices.empty()) {
+        const auto middle = prices.begin() + static_cast<std::ptrdiff_t>(prices.size() / 2);
+        std::ranges::nth_element(prices, middle);
+        m_typical = *middle;
+    }
     showScope(begin);
 }
 
@@ -95,12 +101,6 @@ RulesDialog::~RulesDialog()
     // A field that loses the focus while the dialog goes has nothing left to write to.
     for (const Field& field : m_fields)
         field.edit->disconnect(this);
-}
-
-void RulesDialog::setTypicalPrice(Price price)
-{
-    m_typical = price;
-    showPreview();
 }
 
 std::vector<RulesDialog::Change> RulesDialog::changes() const

@@ -29,7 +29,8 @@ class RulesDialog : public QDialog
     Q_OBJECT
 public:
     RulesDialog(const PriceRules& rules, const Currency& currency, QWidget* parent = nullptr);
-    /// For a choice among the scenario, the tier's site and the tier; begins with the rules in force for the tier.
+    /// For a choice among the scenario, the tier's site and the tier; begins with the rules in force for the tier, and shows what they
+    /// allow around its middle price.
     RulesDialog(const Scenario& scenario, const Tier& tier, QWidget* parent = nullptr);
     ~RulesDialog() override;
 
@@ -41,8 +42,6 @@ public:
         std::optional<PriceRules> rules;
     };
     std::vector<Change> changes() const;
-    /// The price around which the preview shows what the rules allow, in place of one made up.
-    void setTypicalPrice(Price price);
 
 protected:
     void changeEvent(QEvent* event) override;
@@ -74,7 +73,7 @@ private:
 
     Currency m_currency;
     PriceRules m_rules;
-    Price m_typical;
+    Price m_typical;     ///< Around it the preview shows what the rules allow; made up where there is no tier.
     bool m_right = true; ///< Nothing is wrong in any field.
     std::unique_ptr<Ui::RulesDialog> m_ui;
     std::vector<Field> m_fields;

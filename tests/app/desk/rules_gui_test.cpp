@@ -3,12 +3,15 @@
 #include "desk_fixture.h"
 #include "rules_dialog.h"
 #include "scenario_json.h"
+#include "wording.h"
 
 #include <QCheckBox>
 #include <QComboBox>
 #include <QDialogButtonBox>
 #include <QLineEdit>
 #include <QPushButton>
+
+#include <algorithm>
 
 using namespace rungwright;
 
@@ -46,6 +49,12 @@ void RulesGuiTest::setOwn(const char* field, const QString& typed)
     auto* dialog = desk().window->findChild<RulesDialog*>();
     QVERIFY(dialog);
     QVERIFY(QTest::qWaitForWindowExposed(dialog));
+    // The preview is about a price of this tier: half of them are at or below it.
+    auto prices = askingPrices(desk().bench().tierCase()->tier.units);
+    std::ranges::sort(prices);
+    const QString middle = moneyText(prices[prices.size() / 2], desk().bench().currency());
+    const auto labels = dialog->findChildren<QLabel*>();
+    QVERIFY(std::ranges::any_of(labels, [&](const QLabel* label) { return label->text().contains(QStringLiteral("around ") + middle); }));
     auto* scope = dialog->findChild<QComboBox*>(QStringLiteral("scopeBox"));
     scope->setFocus();
     QTest::keyClick(scope, Qt::Key_End);
