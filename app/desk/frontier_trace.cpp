@@ -2,6 +2,7 @@
 #include "frontier_trace.h"
 
 #include "gap/measure.h"
+#include "ladder_change.h"
 #include "sheet_cells.h"
 #include "wording.h"
 
@@ -63,21 +64,10 @@ std::optional<FrontierPicture::Mark> frontierMark(const FrontierAsk& ask, const 
     const Measurement m = measured(ask.tier, prices, ask.model, MeasureParts::figuresOnly);
     if (!m.gap.gap)
         return {};
-    const bool all = modelUnits(ask.model.kind) != Among::onOffer;
-    double squares = 0;
-    double count = 0;
-    double total = 0;
-    for (std::size_t i = 0; i < prices.size(); ++i) {
-        const Unit& unit = ask.tier.units[i];
-        const double by = inMinor(prices[i] - unit.asking);
-        total += unit.onOffer() ? by : 0;
-        if (unit.onOffer() || (all && unit.rentable())) {
-            squares += by * by;
-            ++count;
-        }
-    }
-    const bool against = ask.against == FrontierPicture::Against::prices;
-    return FrontierPicture::Mark{name, candidate, *m.gap.gap, against ? std::sqrt(squares / std::max(1.0, count)) : total};
+    const double amount = ask.against == FrontierPicture::Against::prices
+                              ? typicalChange(ask.tier.units, prices, modelUnits(ask.model.kind))
+                              : inMinor(ladderChange(ask.tier.units, prices).askingTotal.value_or(Price{}));
+    return FrontierPicture::Mark{name, candidate, *m.gap.gap, amount};
 }
 
 QByteArray frontierCsv(const FrontierPicture& picture)

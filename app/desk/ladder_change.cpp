@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "ladder_change.h"
 
+#include <algorithm>
 #include <cassert>
 #include <cmath>
 
@@ -11,7 +12,6 @@ LadderChange ladderChange(std::span<const Unit> units, std::span<const Price> pr
 {
     assert(units.size() == prices.size());
     LadderChange result;
-    double squares = 0;
     for (std::size_t i = 0; i < units.size(); ++i) {
         const Price by = prices[i] - units[i].asking;
         if (units[i].onOffer())
@@ -19,7 +19,6 @@ LadderChange ladderChange(std::span<const Unit> units, std::span<const Price> pr
         if (by == Price{})
             continue;
         ++result.unitsChanged;
-        squares += inMinor(by) * inMinor(by);
         const auto size = std::abs(by.minor);
         const auto greatest = result.greatest ? std::abs(result.greatest->minor) : 0;
         if (size > greatest || (size == greatest && by > *result.greatest))
@@ -29,9 +28,22 @@ LadderChange ladderChange(std::span<const Unit> units, std::span<const Price> pr
         if (std::abs(share) > greatestShare || (std::abs(share) == greatestShare && share > *result.greatestShare))
             result.greatestShare = share;
     }
-    if (!units.empty())
-        result.rootMeanSquare = std::sqrt(squares / static_cast<double>(units.size()));
     return result;
+}
+
+double typicalChange(std::span<const Unit> units, std::span<const Price> prices, Among among)
+{
+    assert(units.size() == prices.size());
+    double squares = 0;
+    double count = 0;
+    for (std::size_t i = 0; i < units.size(); ++i) {
+        if (among == Among::all || units[i].onOffer() || (among == Among::rentable && units[i].rentable())) {
+            const double by = inMinor(prices[i] - units[i].asking);
+            squares += by * by;
+            ++count;
+        }
+    }
+    return std::sqrt(squares / std::max(1.0, count));
 }
 
 } // namespace rungwright

@@ -70,20 +70,22 @@ SideBySideModel::SideBySideModel(QObject* parent) : QAbstractTableModel(parent)
     const char* const own = "own definition";
     m_rows.push_back({{"total_change", QT_TR_NOOP("Change of asking total"), Kind::money, 0, nullptr,
                        QT_TR_NOOP("asking total on offer − asking total on offer today"), money, own, 0},
-                      [](const LadderChange& c) { return amount(c.askingTotal); }});
+                      [](const ComparedLadder& c) { return amount(c.change.askingTotal); }});
     m_rows.push_back({{"units_changed", QT_TR_NOOP("Units changed"), Kind::count, 0, nullptr,
                        QT_TR_NOOP("units of the tier, taken ones too, whose price differs from today's"), "units", own, 0},
-                      [](const LadderChange& c) { return std::optional(static_cast<double>(c.unitsChanged)); }});
+                      [](const ComparedLadder& c) { return std::optional(static_cast<double>(c.change.unitsChanged)); }});
     m_rows.push_back({{"greatest_change", QT_TR_NOOP("Greatest change"), Kind::money, 0, nullptr,
                        QT_TR_NOOP("the change of one unit's price that is greatest in money, up or down"), money, own, 0},
-                      [](const LadderChange& c) { return amount(c.greatest); }});
+                      [](const ComparedLadder& c) { return amount(c.change.greatest); }});
     m_rows.push_back({{"greatest_change_share", QT_TR_NOOP("in percent"), Kind::share, 1, nullptr,
                        QT_TR_NOOP("the change of one unit's price that is greatest in percent of its price today; may be another unit's"),
                        "share", own, 0},
-                      [](const LadderChange& c) { return c.greatestShare; }});
-    m_rows.push_back({{"rms_change", QT_TR_NOOP("Amount of change"), Kind::money, 0, nullptr,
-                       QT_TR_NOOP("root of the mean squared change of all units of the tier against today"), money, own, 0},
-                      [](const LadderChange& c) { return std::optional(c.rootMeanSquare); }});
+                      [](const ComparedLadder& c) { return c.change.greatestShare; }});
+    m_rows.push_back(
+        {{"rms_change", QT_TR_NOOP("Amount of change"), Kind::money, 0, nullptr,
+          QT_TR_NOOP("typical change a unit (root mean square) against today, of the units the model works on, as in the trade-off"), money,
+          own, 0},
+         [](const ComparedLadder& c) { return std::optional(c.typicalChange); }});
     for (const FigureRow& figure : figures) {
         if (!isFirst(figure))
             m_rows.push_back({figure});
@@ -128,7 +130,7 @@ void SideBySideModel::rank()
         const std::optional<double> total = amount(ladder.change.askingTotal);
         criteria[0].values.push_back(ladder.measurement.gap.gap);
         criteria[1].values.push_back(total ? std::optional(std::abs(*total)) : std::nullopt);
-        criteria[2].values.emplace_back(ladder.change.rootMeanSquare);
+        criteria[2].values.emplace_back(ladder.typicalChange);
         criteria[3].values.push_back(ladder.measurement.gap.chanceFloorMet);
     }
     m_scores = weightedScores(criteria);
@@ -179,7 +181,7 @@ std::optional<double> SideBySideModel::value(const Row& row, std::size_t column)
     const ComparedLadder& ladder = m_ladders[column];
     if (row.ranking)
         return m_scores[column] ? std::optional(100.0 * *m_scores[column]) : std::nullopt;
-    return row.change ? row.change(ladder.change) : row.figure.value(ladder.measurement);
+    return row.change ? row.change(ladder) : row.figure.value(ladder.measurement);
 }
 
 QString SideBySideModel::text(const Row& row, std::optional<double> value) const

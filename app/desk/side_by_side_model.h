@@ -22,13 +22,14 @@ struct ComparedLadder {
     std::vector<Price> prices;
     Measurement measurement;
     LadderChange change;
+    double typicalChange = 0; ///< Of the units its model works on, minor units.
 };
 
 /// How much each thing counts in the ranking, 0 = not at all.
 struct RankingWeights {
     int gap = 0;            ///< Smaller is better.
     int totalChange = 0;    ///< Of the asking total, up or down: smaller is better.
-    int amountOfChange = 0; ///< Root-mean-square change per unit: smaller is better.
+    int amountOfChange = 0; ///< Typical change a unit: smaller is better.
     int floorMet = 0;       ///< The chance that the floor is met: greater is better.
 
     bool any() const { return gap > 0 || totalChange > 0 || amountOfChange > 0 || floorMet > 0; }
@@ -72,7 +73,7 @@ public:
 private:
     struct Row {
         FigureRow figure;
-        std::optional<double> (*change)(const LadderChange&) = nullptr; ///< Set for the rows that are not of the Figures.
+        std::optional<double> (*change)(const ComparedLadder&) = nullptr; ///< Set for the rows that are not of the Figures.
         bool ranking = false;
     };
     static Row rankingRow();

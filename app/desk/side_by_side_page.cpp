@@ -279,6 +279,7 @@ void SideBySidePage::showLadders(int selected)
         ladder.prices = pricesOf(tierCase, candidate);
         ladder.measurement = measured(tierCase.tier, ladder.prices, m_bench.settings());
         ladder.change = ladderChange(tierCase.tier.units, ladder.prices);
+        ladder.typicalChange = typicalChange(tierCase.tier.units, ladder.prices, modelUnits(m_bench.settings().kind));
         ladders.push_back(std::move(ladder));
     }
     QTableView* table = m_ui->sideBySideTable;

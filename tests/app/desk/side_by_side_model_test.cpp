@@ -24,6 +24,7 @@ ComparedLadder compared(const Scenario& scenario, int candidate)
     ladder.prices = pricesOf(tierCase, candidate);
     ladder.measurement = measured(tierCase.tier, ladder.prices, tierCase.model);
     ladder.change = ladderChange(tierCase.tier.units, ladder.prices);
+    ladder.typicalChange = typicalChange(tierCase.tier.units, ladder.prices, modelUnits(tierCase.model.kind));
     return ladder;
 }
 
@@ -155,14 +156,20 @@ private slots:
 
     void theAmountOfChangeIsTheRootMeanSquare()
     {
-        const Scenario scenario = comparedScenario();
+        Scenario scenario = comparedScenario();
         SideBySideModel model;
         model.show({compared(scenario, -1), compared(scenario, 0), compared(scenario, 1)}, scenario.currency);
         const int row = model.rowOf("rms_change");
         QCOMPARE(model.index(row, 0).data().toString(), QStringLiteral("0.00"));
-        // By hand, four units: sqrt(10^2 / 4) = 5.00; sqrt((5^2 + 8^2) / 4) = 4.717.
-        QCOMPARE(model.index(row, 1).data().toString(), QStringLiteral("+5.00"));
-        QCOMPARE(model.index(row, 2).data().toString(), QStringLiteral("+4.72"));
+        // By hand, the two units on offer: sqrt(10^2 / 2) = 7.071; sqrt((5^2 + 8^2) / 2) = 6.671.
+        QCOMPARE(model.index(row, 1).data().toString(), QStringLiteral("+7.07"));
+        QCOMPARE(model.index(row, 2).data().toString(), QStringLiteral("+6.67"));
+        // A model of the rentable units looks at A-3 too, never at the closed one: sqrt(10^2 / 3) = 5.774; sqrt((10^2 + 5^2) / 3)
+        // = 6.45497.
+        scenario.tiers.front().model.kind = ModelKind::remainder;
+        model.show({compared(scenario, 0), compared(scenario, 2)}, scenario.currency);
+        QCOMPARE(model.index(row, 0).data().toString(), QStringLiteral("+5.77"));
+        QCOMPARE(model.index(row, 1).data().toString(), QStringLiteral("+6.45"));
     }
 
     void differencesAgainstALadder()
@@ -193,7 +200,7 @@ private slots:
         SideBySideModel model;
         const QAbstractItemModelTester tester(&model, QAbstractItemModelTester::FailureReportingMode::QtTest);
         QCOMPARE(model.rowOf("ranking"), -1);
-        // By hand. Gaps 12.50, 5.00, 12.75 scale to 0.25/7.75, 1, 0; amounts of change 0, 5.00, 4.717 to 1, 0, 0.0566; with weights 3 and
+        // By hand. Gaps 12.50, 5.00, 12.75 scale to 0.25/7.75, 1, 0; amounts of change 0, 7.071, 6.671 to 1, 0, 0.0566; with weights 3 and
         // 1: (3 x 0.03226 + 1) / 4 = 0.2742, 0.75, 0.01415.
         RankingWeights weights;
         weights.gap = 3;
