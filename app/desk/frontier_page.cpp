@@ -18,6 +18,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <utility>
 
 namespace rungwright
 {
@@ -47,7 +48,11 @@ FrontierPage::FrontierPage(Workbench& bench, Questions& questions, QWidget* pare
     });
 }
 
-FrontierPage::~FrontierPage() { m_watcher.waitForFinished(); }
+FrontierPage::~FrontierPage()
+{
+    // A curve may still be traced, from copies of its own: nobody waits for it, and nobody is left to show it.
+    m_watcher.disconnect(this);
+}
 
 void FrontierPage::servePlot()
 {
@@ -101,11 +106,11 @@ void FrontierPage::refresh()
     const TierCase& tc = *m_bench.tierCase();
     m_ask.tier = tc.tier;
     // The order is the rules', until the user says otherwise for this tier.
-    const std::pair order(m_bench.tier(), m_bench.rules().order);
+    const std::tuple order(tc.tier.site, tc.tier.name, m_bench.rules().order);
     if (m_orderOf != order) {
         m_orderOf = order;
         const QSignalBlocker quiet(m_ui->orderBox);
-        m_ui->orderBox->setCurrentIndex(order.second == OrderKept::grade ? 1 : 0);
+        m_ui->orderBox->setCurrentIndex(m_bench.rules().order == OrderKept::grade ? 1 : 0);
     }
     m_ask.model = m_bench.settings();
     m_ask.rules = m_bench.rules();

@@ -10,7 +10,8 @@
 
 #include <memory>
 #include <optional>
-#include <utility>
+#include <string>
+#include <tuple>
 
 namespace Ui
 {
@@ -57,7 +58,7 @@ private:
     Questions& m_questions;
     FrontierAsk m_ask; ///< What is shown, or being traced.
     QFutureWatcher<FrontierTraced> m_watcher;
-    std::optional<std::pair<int, OrderKept>> m_orderOf; ///< Tier, and what its rules say of the order.
+    std::optional<std::tuple<std::string, std::string, OrderKept>> m_orderOf; ///< Site, tier, and what its rules say of the order.
     bool m_tracing = false;
     bool m_again = false; ///< Something changed while a curve was being traced.
     bool m_stale = true;  ///< Something changed while the page was hidden.

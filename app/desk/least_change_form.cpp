@@ -4,6 +4,7 @@
 #include "axis_ticks.h"
 #include "ladder_change.h"
 #include "reshape_words.h"
+#include "spin_values.h"
 #include "ui_least_change_form.h"
 #include "wording.h"
 
@@ -11,6 +12,7 @@
 
 #include <algorithm>
 #include <cmath>
+#include <utility>
 
 namespace rungwright
 {
@@ -54,6 +56,9 @@ LeastChangeForm::LeastChangeForm(QWidget* parent) : QWidget(parent), m_ui(std::m
     connect(m_ui->targetBox, &QComboBox::currentIndexChanged, this, [this] {
         if (m_showing || !m_bench)
             return;
+        // What is tried was for another aim: the slider now stands at today's figure, and so does the bench.
+        if (m_bench->gesture() == Workbench::Gesture::trial)
+            m_bench->giveUpGesture();
         fitTarget(false);
         showChoices();
         if (kind() == TargetKind::none)
@@ -65,7 +70,7 @@ LeastChangeForm::LeastChangeForm(QWidget* parent) : QWidget(parent), m_ui(std::m
         setTarget(place == m_ui->targetSlider->maximum() ? m_ui->targetSpin->maximum() : place * m_step);
         tryNow();
     });
-    connect(m_ui->targetSpin, &QDoubleSpinBox::valueChanged, this, [this](double shown) {
+    onNewValue(*m_ui->targetSpin, this, [this](double shown) {
         if (m_showing)
             return;
         setTarget(shown);
@@ -73,7 +78,7 @@ LeastChangeForm::LeastChangeForm(QWidget* parent) : QWidget(parent), m_ui(std::m
     });
     for (QComboBox* box : {m_ui->totalBox, m_ui->orderBox, m_ui->weightBox})
         connect(box, &QComboBox::currentIndexChanged, this, touched);
-    connect(m_ui->totalSpin, &QDoubleSpinBox::valueChanged, this, touched);
+    onNewValue(*m_ui->totalSpin, this, [touched](double) { touched(); });
     connect(m_ui->takenBox, &QCheckBox::toggled, this, touched);
     connect(m_ui->nearestButton, &QPushButton::clicked, this, &LeastChangeForm::useNearest);
     m_ui->nearestButton->hide();
@@ -114,12 +119,12 @@ void LeastChangeForm::onReset()
 
 void LeastChangeForm::takeOrderOfRules()
 {
-    const std::pair now(m_bench->tier(), m_bench->rules().order);
+    const std::tuple now(tier().site, tier().name, m_bench->rules().order);
     if (m_orderOf == now)
         return;
     m_orderOf = now;
     const QScopedValueRollback<bool> showing(m_showing, true);
-    m_ui->orderBox->setCurrentIndex(now.second == OrderKept::grade ? 1 : 0);
+    m_ui->orderBox->setCurrentIndex(m_bench->rules().order == OrderKept::grade ? 1 : 0);
 }
 
 void LeastChangeForm::fitTarget(bool keepValue)
@@ -136,7 +141,7 @@ void LeastChangeForm::fitTarget(bool keepValue)
         slider->setRange(0, 0);
         return;
     }
-    Fitted now{m_bench->tier(), kind(), m_bench->settings(), *today};
+    Fitted now{tier().site, tier().name, kind(), m_bench->settings(), *today};
     if (keepValue && m_fitted == now)
         return;
     m_fitted = std::move(now);
@@ -238,10 +243,19 @@ void LeastChangeForm::useNearest()
 
 // What it comes to ---------------------------------------------------------------------------------------------------
 
+void LeastChangeForm::setFigure(const QLabel& name, QLabel& value, const QString& text)
+{
+    value.setText(text);
+    value.setAccessibleName(tr("%1: %2").arg(name.text(), text));
+}
+
 void LeastChangeForm::showNothing()
 {
-    for (QLabel* label : {m_ui->changedValue, m_ui->typicalValue, m_ui->greatestValue, m_ui->gapValue, m_ui->metValue, m_ui->totalValue})
-        label->setText(undefinedText());
+    const std::initializer_list<std::pair<const QLabel*, QLabel*>> figures{
+        {m_ui->changedName, m_ui->changedValue}, {m_ui->typicalName, m_ui->typicalValue}, {m_ui->greatestName, m_ui->greatestValue},
+        {m_ui->reachedName, m_ui->gapValue},     {m_ui->metName, m_ui->metValue},         {m_ui->totalName, m_ui->totalValue}};
+    for (const auto& [name, value] : figures)
+        setFigure(*name, *value, undefinedText());
     m_ui->nearestButton->hide();
     if (!m_bench->tierCase())
         m_ui->saidLabel->setText(tr("Choose a tier in the worklist."));
@@ -268,20 +282,21 @@ void LeastChangeForm::showAnswer()
     }
     m_ui->nearestButton->hide();
     const LadderChange change = ladderChange(tier().units, m_answer.prices);
-    m_ui->changedValue->setText(tr("%1 of %2").arg(m_answer.changed).arg(m_solver.chain().places.size()));
-    m_ui->typicalValue->setText(moneyText(m_answer.rms, currency));
+    setFigure(*m_ui->changedName, *m_ui->changedValue, tr("%1 of %2").arg(m_answer.changed).arg(m_solver.chain().places.size()));
+    setFigure(*m_ui->typicalName, *m_ui->typicalValue, moneyText(m_answer.rms, currency));
     QString greatest = undefinedText();
     if (change.greatest)
         greatest = signedMoneyText(inMinor(*change.greatest), currency);
-    m_ui->greatestValue->setText(greatest);
+    setFigure(*m_ui->greatestName, *m_ui->greatestValue, greatest);
     QString gap = undefinedText();
     if (m_answer.gap)
         gap = tr("%1 (%2)").arg(moneyText(*m_answer.gap, currency), percentText(*m_answer.gap / inMinor(tier().advertisedFloor), true));
-    m_ui->gapValue->setText(gap);
-    m_ui->metValue->setText(m_answer.floorMet ? percentText(*m_answer.floorMet, true) : undefinedText());
+    setFigure(*m_ui->reachedName, *m_ui->gapValue, gap);
+    setFigure(*m_ui->metName, *m_ui->metValue, m_answer.floorMet ? percentText(*m_answer.floorMet, true) : undefinedText());
     const double by = inMinor(m_answer.total - m_solver.chain().total);
     const QString total = moneyText(m_answer.total, currency);
-    m_ui->totalValue->setText(by == 0 ? tr("%1 (as today)").arg(total) : tr("%1 (%2)").arg(total, signedMoneyText(by, currency)));
+    setFigure(*m_ui->totalName, *m_ui->totalValue,
+              by == 0 ? tr("%1 (as today)").arg(total) : tr("%1 (%2)").arg(total, signedMoneyText(by, currency)));
     QStringList said;
     if (m_answer.changed == 0)
         said << tr("Today's ladder is as wished: nothing to change.");

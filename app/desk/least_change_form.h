@@ -9,8 +9,11 @@
 
 #include <memory>
 #include <optional>
-#include <utility>
+#include <string>
+#include <tuple>
 #include <vector>
+
+class QLabel;
 
 namespace Ui
 {
@@ -50,13 +53,16 @@ private:
     void setTarget(double shown);
     void showChoices();
     void showAnswer();
+    /// A figure and, for who hears it, its name.
+    static void setFigure(const QLabel& name, QLabel& value, const QString& text);
     void showNothing();
     void useNearest();
     const Tier& tier() const { return m_bench->tierCase()->tier; }
 
     /// What the slider's range was taken from.
     struct Fitted {
-        int tier = -1;
+        std::string site; ///< By name: after a refresh, or with another scenario, the same index is another tier.
+        std::string tier;
         TargetKind kind = TargetKind::none;
         ModelSettings model;
         double today = 0;
@@ -65,14 +71,14 @@ private:
 
     Workbench* m_bench = nullptr;
     LeastChange m_solver;
-    LeastChangeAnswer m_answer; ///< Without its prices: the bench shows them.
+    LeastChangeAnswer m_answer; ///< A copy, prices and all: the next solution overwrites the solver's own.
     ChangeWish m_solved;
     std::vector<double> m_weights;
     std::optional<Fitted> m_fitted;
-    double m_step = 1;                                  ///< Of the slider, in the spin box's units.
-    std::optional<std::pair<int, OrderKept>> m_orderOf; ///< Tier, and what its rules say of the order.
-    bool m_showing = false;                             ///< The form is being filled: what changes is not the user's doing.
-    bool m_trying = false;                              ///< The bench follows the form, not the other way round.
+    double m_step = 1;                                                        ///< Of the slider, in the spin box's units.
+    std::optional<std::tuple<std::string, std::string, OrderKept>> m_orderOf; ///< Site, tier, and what its rules say of the order.
+    bool m_showing = false; ///< The form is being filled: what changes is not the user's doing.
+    bool m_trying = false;  ///< The bench follows the form, not the other way round.
     std::unique_ptr<Ui::LeastChangeForm> m_ui;
 };
 

@@ -19,6 +19,11 @@ ReshapePanel::ReshapePanel(Workbench& bench, QWidget* parent) : QWidget(parent),
     m_ui->shapeForm->attach(bench);
     connect(m_ui->keepButton, &QPushButton::clicked, &bench, &Workbench::finishGesture);
     connect(m_ui->giveUpButton, &QPushButton::clicked, &bench, &Workbench::giveUpGesture);
+    // What one tab tried is not what the other one shows.
+    connect(m_ui->reshapeTabs, &QTabWidget::currentChanged, this, [this] {
+        if (m_bench.gesture() == Workbench::Gesture::trial)
+            m_bench.giveUpGesture();
+    });
     connect(&bench, &Workbench::gestureChanged, this, &ReshapePanel::showKeep);
     connect(&bench, &Workbench::moving, this, &ReshapePanel::showKeep);
     connect(&bench, &Workbench::reset, this, &ReshapePanel::showKeep);

@@ -3,6 +3,7 @@
 
 #include "ladder_change.h"
 #include "rules_text.h"
+#include "spin_values.h"
 #include "table_text.h"
 #include "ui_shape_form.h"
 #include "wording.h"
@@ -64,14 +65,14 @@ void ShapeForm::connectFields()
         showLean(place / kLeanPlaces);
         tryNow();
     });
-    connect(m_ui->leanSpin, &QDoubleSpinBox::valueChanged, this, [this](double lean) {
+    onNewValue(*m_ui->leanSpin, this, [this](double lean) {
         if (m_showing)
             return;
         showLean(lean);
         tryNow();
     });
     for (QDoubleSpinBox* spin : {m_ui->floorSpin, m_ui->topSpin, m_ui->alphaSpin, m_ui->betaSpin})
-        connect(spin, &QDoubleSpinBox::valueChanged, this, touched);
+        onNewValue(*spin, this, [touched](double) { touched(); });
     connect(m_ui->orderBox, &QComboBox::currentIndexChanged, this, touched);
     for (QCheckBox* box : {m_ui->takenBox, m_ui->pointsBox, m_ui->rulesBox})
         connect(box, &QCheckBox::toggled, this, touched);
@@ -110,7 +111,7 @@ void ShapeForm::onReset()
     const bool there = m_bench->tierCase() != nullptr;
     setEnabled(there);
     const auto now = m_bench->currentPrices();
-    const bool same = there && m_bench->tier() == m_fittedTier && tier().name == m_fittedName &&
+    const bool same = there && tier().site == m_fittedSite && tier().name == m_fittedTier &&
                       std::equal(now.begin(), now.end(), m_fittedPrices.begin(), m_fittedPrices.end());
     if (there)
         takeOrderOfRules();
@@ -122,19 +123,19 @@ void ShapeForm::onReset()
 
 void ShapeForm::takeOrderOfRules()
 {
-    const std::pair now(m_bench->tier(), m_bench->rules().order);
+    const std::tuple now(tier().site, tier().name, m_bench->rules().order);
     if (m_orderOf == now)
         return;
     m_orderOf = now;
     const QScopedValueRollback<bool> showing(m_showing, true);
-    m_ui->orderBox->setCurrentIndex(now.second == OrderKept::grade ? 1 : 0);
+    m_ui->orderBox->setCurrentIndex(m_bench->rules().order == OrderKept::grade ? 1 : 0);
 }
 
 void ShapeForm::beginFromToday()
 {
     const QScopedValueRollback<bool> showing(m_showing, true);
-    m_fittedTier = m_bench->tier();
-    m_fittedName = tier().name;
+    m_fittedSite = tier().site;
+    m_fittedTier = tier().name;
     m_fittedPrices.assign(m_bench->currentPrices().begin(), m_bench->currentPrices().end());
     const Currency& currency = m_bench->currency();
     const auto ladder = sortedLadder(tier().units, m_bench->currentPrices(), among());

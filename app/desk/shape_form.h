@@ -10,7 +10,8 @@
 #include <memory>
 #include <optional>
 #include <string>
-#include <utility>
+#include <tuple>
+#include <vector>
 
 namespace Ui
 {
@@ -55,12 +56,12 @@ private:
     const Tier& tier() const { return m_bench->tierCase()->tier; }
 
     Workbench* m_bench = nullptr;
-    int m_fittedTier = -1;
-    std::string m_fittedName; ///< A refresh may put another tier at the same index.
+    std::string m_fittedSite; ///< By name: after a refresh, or with another scenario, the same index is another tier.
+    std::string m_fittedTier;
     std::vector<Price> m_fittedPrices;
-    std::optional<std::pair<int, OrderKept>> m_orderOf; ///< Tier, and what its rules say of the order.
-    bool m_showing = false;                             ///< The form is being filled: what changes is not the user's doing.
-    bool m_trying = false;                              ///< The bench follows the form, not the other way round.
+    std::optional<std::tuple<std::string, std::string, OrderKept>> m_orderOf; ///< Site, tier, and what its rules say of the order.
+    bool m_showing = false; ///< The form is being filled: what changes is not the user's doing.
+    bool m_trying = false;  ///< The bench follows the form, not the other way round.
     std::unique_ptr<Ui::ShapeForm> m_ui;
 };
 

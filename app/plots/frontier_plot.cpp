@@ -131,9 +131,8 @@ QPointF FrontierPlot::placeOfMark(int mark) const
 
 QString FrontierPlot::amountTitle() const
 {
-    return m_picture.against == FrontierPicture::Against::prices
-               ? withCode(tr("typical change of a unit's price (root mean square)"), m_picture.currency)
-               : withCode(tr("change of the asking total"), m_picture.currency);
+    return m_picture.against == FrontierPicture::Against::prices ? withCode(tr("typical change a unit"), m_picture.currency)
+                                                                 : withCode(tr("change of the asking total"), m_picture.currency);
 }
 
 QString FrontierPlot::gapText(double gap) const

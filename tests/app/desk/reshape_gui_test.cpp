@@ -35,6 +35,10 @@ private slots:
     void theLadderWaitsForTheTrial();
     void aTargetOutOfReachSaysWhatBinds();
     void theTotalMayChangeOrBeFree();
+    void enterInAnUntouchedFieldKeepsNothing();
+    void anotherAimOrTabGivesUpTheTrial();
+    void aFigureIsHeardWithItsName();
+    void theOrderChosenIsOfItsTierOnly();
     void aTierWithoutFloorSaysSo();
     void aShapeBeginsAsTodayAndFollowsItsDials();
     void priceStepsAreReadFromTheTable();
@@ -79,14 +83,16 @@ private:
         DeskFixture::pressAndMove(slider, from, to, 12);
         return to;
     }
-    /// What core alone gives for a gap of at most `value` minor units with the total held.
-    LeastChangeAnswer solved(double value)
+    /// What core alone gives for a gap of at most `value` minor units with the total held or free.
+    LeastChangeAnswer solved(double value, bool freeTotal = false)
     {
         ChangeWish wish;
+        wish.total.free = freeTotal;
         wish.target = {TargetKind::gap, value};
         LeastChange solver;
         return solver.solve(bench().tierCase()->tier, bench().settings(), bench().rules(), wish);
     }
+    std::vector<Price> today() { return {bench().currentPrices().begin(), bench().currentPrices().end()}; }
     std::vector<Price> worked() { return {bench().workedPrices().begin(), bench().workedPrices().end()}; }
     void showLeastChange()
     {
@@ -214,6 +220,11 @@ void ReshapeGuiTest::aTargetOutOfReachSaysWhatBinds()
     QTest::mouseClick(&nearest, Qt::LeftButton);
     QVERIFY(!nearest.isVisible());
     QCOMPARE(in<QDoubleSpinBox>(form(), "targetSpin").value(), std::ceil(*answer.nearestTarget - 1e-6) / 100);
+    // The nearest is solved for, and met.
+    QCOMPARE(bench().gesture(), Workbench::Gesture::trial);
+    const double wanted = std::ceil(*answer.nearestTarget - 1e-6);
+    QCOMPARE(worked(), solved(wanted).prices);
+    QVERIFY(bench().worked().gap.gap.value() <= wanted + 1e-6);
     for (const std::uint32_t unit : locked)
         QCOMPARE(bench().workedPrices()[unit], bench().currentPrices()[unit]);
 }
@@ -244,6 +255,99 @@ void ReshapeGuiTest::theTotalMayChangeOrBeFree()
     total.setFocus();
     QTest::keyClick(&total, Qt::Key_Down);
     QVERIFY(!spin.isVisible());
+    // Free: what core gives for the same gap with no total to keep, and that is not what it gives with the total held.
+    auto& slider = in<QSlider>(form(), "targetSlider");
+    for (int i = 0; i < 20; ++i)
+        QTest::keyClick(&slider, Qt::Key_Left);
+    const double wanted = std::round(100 * in<QDoubleSpinBox>(form(), "targetSpin").value());
+    QCOMPARE(worked(), solved(wanted, true).prices);
+    QVERIFY(worked() != solved(wanted).prices);
+}
+
+void ReshapeGuiTest::enterInAnUntouchedFieldKeepsNothing()
+{
+    QTest::keyClick(desk().window.get(), Qt::Key_T, Qt::ControlModifier | Qt::ShiftModifier);
+    QTRY_VERIFY(shape().isVisible());
+    for (const char* name : {"floorSpin", "topSpin", "leanSpin"}) {
+        auto& spin = in<QDoubleSpinBox>(shape(), name);
+        spin.setFocus();
+        QTest::keyClick(&spin, Qt::Key_Return);
+        QCOMPARE(bench().gesture(), Workbench::Gesture::none);
+        QCOMPARE(undo().count(), 0);
+    }
+    showLeastChange();
+    auto& target = in<QDoubleSpinBox>(form(), "targetSpin");
+    target.setFocus();
+    QTest::keyClick(&target, Qt::Key_Return);
+    QCOMPARE(bench().gesture(), Workbench::Gesture::none);
+    QCOMPARE(undo().count(), 0);
+    // What is set there is tried, and then Enter keeps it.
+    for (int i = 0; i < 20; ++i)
+        QTest::keyClick(&target, Qt::Key_Down);
+    QCOMPARE(bench().gesture(), Workbench::Gesture::trial);
+    QTest::keyClick(&target, Qt::Key_Return);
+    QCOMPARE(undo().count(), 1);
+}
+
+void ReshapeGuiTest::anotherAimOrTabGivesUpTheTrial()
+{
+    showLeastChange();
+    auto& slider = in<QSlider>(form(), "targetSlider");
+    const auto tryOne = [&] {
+        for (int i = 0; i < 20; ++i)
+            QTest::keyClick(&slider, Qt::Key_Left);
+    };
+    tryOne();
+    QCOMPARE(bench().gesture(), Workbench::Gesture::trial);
+    QVERIFY(worked() != today());
+    QTest::keyClick(&in<QComboBox>(form(), "targetBox"), Qt::Key_Down);
+    QCOMPARE(bench().gesture(), Workbench::Gesture::none);
+    QCOMPARE(worked(), today());
+    QCOMPARE(slider.value(), slider.maximum()); // today's share
+    tryOne();
+    QCOMPARE(bench().gesture(), Workbench::Gesture::trial);
+    QTest::keyClick(desk().window.get(), Qt::Key_T, Qt::ControlModifier | Qt::ShiftModifier);
+    QTRY_VERIFY(shape().isVisible());
+    QCOMPARE(bench().gesture(), Workbench::Gesture::none);
+    QCOMPARE(worked(), today());
+    QCOMPARE(undo().count(), 0);
+}
+
+void ReshapeGuiTest::aFigureIsHeardWithItsName()
+{
+    showLeastChange();
+    auto& slider = in<QSlider>(form(), "targetSlider");
+    for (int i = 0; i < 20; ++i)
+        QTest::keyClick(&slider, Qt::Key_Left);
+    QCOMPARE(bench().gesture(), Workbench::Gesture::trial);
+    for (const char* name : {"changedValue", "typicalValue", "greatestValue", "gapValue", "metValue", "totalValue"}) {
+        const auto& label = in<QLabel>(form(), name);
+        QVERIFY2(label.accessibleName().endsWith(QStringLiteral(": ") + label.text()), name);
+    }
+    QCOMPARE(in<QLabel>(form(), "gapValue").accessibleName(), QStringLiteral("Gap reached: ") + in<QLabel>(form(), "gapValue").text());
+    // A sentence is heard as it is written.
+    QVERIFY(in<QLabel>(form(), "saidLabel").accessibleName().isEmpty());
+    QVERIFY(in<QLabel>(shape(), "saidLabel").accessibleName().isEmpty());
+}
+
+void ReshapeGuiTest::theOrderChosenIsOfItsTierOnly()
+{
+    showLeastChange();
+    auto& order = in<QComboBox>(form(), "orderBox");
+    QCOMPARE(order.currentIndex(), 0);
+    order.setCurrentIndex(1);
+    Document& document = desk().window->document();
+    Scenario other = document.scenario();
+    bench().giveUpGesture();
+    QCOMPARE(order.currentIndex(), 1);
+    // Another tier at the same index: its rules say as today.
+    const int index = bench().tier();
+    for (TierCase& tierCase : other.tiers)
+        tierCase.tier.name += " (another)";
+    document.begin(other, {}, true);
+    bench().showTier(index, -1);
+    QCOMPARE(bench().tier(), index);
+    QCOMPARE(order.currentIndex(), 0);
 }
 
 void ReshapeGuiTest::aTierWithoutFloorSaysSo()
