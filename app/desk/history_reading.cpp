@@ -13,11 +13,12 @@ namespace
 template <class T>
 bool keepRead(Outcome<T> outcome, T& into, std::string& trouble)
 {
-    if (outcome.ok())
-        into = std::move(outcome).value();
-    else
+    if (!outcome.ok()) {
         trouble = outcome.trouble();
-    return outcome.ok();
+        return false;
+    }
+    into = std::move(outcome).value();
+    return true;
 }
 
 } // namespace
