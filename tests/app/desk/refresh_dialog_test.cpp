@@ -276,7 +276,7 @@ void RefreshDialogTest::aLockIsAReasonToClash()
     const RefreshPlan locking = planFor(scenario, list);
     const RefreshLines lines(locking, scenario.currency, {RefreshTopic::What::fates, static_cast<int>(ChangeFate::clash), QString(), 1, 1});
     QCOMPARE(lines.rows(), 1);
-    QCOMPARE(lines.texts(0, false).last(), QStringLiteral("locked by the list"));
+    QCOMPARE(lines.texts(0, false).last(), QStringLiteral("now locked"));
 }
 
 void RefreshDialogTest::aCurrencyNotYetKnownIsSaid()
