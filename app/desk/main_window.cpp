@@ -101,7 +101,13 @@ MainWindow::MainWindow(Questions& questions, QSettings& settings, const QString&
     QTimer::singleShot(0, this, &MainWindow::polishAhead);
 }
 
-MainWindow::~MainWindow() = default;
+MainWindow::~MainWindow()
+{
+    // The pages go first, and hidden: one that goes makes the next one current, which must not be shown a bench that is gone.
+    m_pages->disconnect(this);
+    m_stack->hide();
+    delete takeCentralWidget();
+}
 
 void MainWindow::buildPages()
 {
